@@ -1,0 +1,277 @@
+/* The delivery side of a plan: the speed, the pump's curves at that speed,
+ * the station's discharge, and from these how the flow is found. */
+#include <math.h>
+
+#include "evaluator/plan.h"
+#include "hydraulics/affinity.h"
+
+/* The speed of a curve's test: the first that is recorded. */
+static double test_speed(const struct sl_curve *curve)
+{
+    for (size_t i = 0; curve && i < curve->point_count; i++)
+        if (curve->points[i].speed.known)
+            return curve->points[i].speed.value;
+    return NAN;
+}
+
+/* How much faster than its curve the pump may run. */
+static double speed_ratio(struct sl_plan *plan)
+{
+    const struct sl_pump *pump = &plan->pump->record;
+    double rated = sl_recorded(&pump->rated_speed);
+    double test = test_speed(plan->pump->curve);
+    double top = sl_recorded(&pump->max_speed);
+    struct sl_input *input;
+
+    if (isnan(test))
+        test = rated;
+    if (isnan(top))
+        top = isnan(rated) ? test : rated;
+    if (isnan(top)) {
+        plan->inputs[SL_IN_SPEED].rule =
+            "no speed is recorded: that of its curve";
+        plan->inputs[SL_IN_SPEED].value = sl_no_figure();
+        return 1;
+    }
+    input = sl_plan_set(
+        plan, SL_IN_SPEED, pump->max_speed.known ? SL_RECORDED : SL_DERIVED,
+        sl_exactly(top),
+        pump->max_speed.known ? ""
+                              : "no higher speed is recorded: a fixed drive");
+    input->kind = SL_KIND_PUMP;
+    input->line = pump->line;
+    if (isnan(test)) {
+        input->provenance = SL_UNKNOWN;
+        input->value = (struct sl_interval){top, NAN, NAN};
+        input->rule = "the speed its figures were tested at is not recorded";
+        return 1;
+    }
+    return top / test;
+}
+
+static double npshr_exponent(const struct sl_plan *plan, double ratio)
+{
+    const struct sl_default *row = sl_default_find(
+        plan->tables,
+        ratio > 1 ? "npshr_speed_exponent_up" : "npshr_speed_exponent_down",
+        "");
+
+    return row ? row->value.typical : NAN;
+}
+
+enum curve_column { HEAD, NPSHR };
+
+/* The points of a curve that have a head, or an NPSHR, at the speed the
+ * pump runs at. */
+static struct sl_curve_view view_of(struct sl_plan *plan,
+                                    enum curve_column column, double ratio)
+{
+    const struct sl_curve *curve = plan->pump->curve;
+    size_t room = curve ? curve->point_count : 0;
+    double *flow = sl_arena_new(plan->arena, room, sizeof *flow);
+    double *value = sl_arena_new(plan->arena, room, sizeof *value);
+    double exponent = npshr_exponent(plan, ratio);
+    size_t count = 0;
+
+    for (size_t i = 0; i < room; i++) {
+        const struct sl_curve_point *point = &curve->points[i];
+        const struct sl_number *number =
+            column == HEAD ? &point->head : &point->npshr;
+
+        if (!number->known)
+            continue;
+        flow[count] = sl_affinity_flow(point->flow.value, ratio);
+        value[count] = column == HEAD
+                           ? sl_affinity_head(number->value, ratio)
+                           : sl_affinity_npshr(number->value, ratio, exponent);
+        count++;
+    }
+    return (struct sl_curve_view){flow, value, count};
+}
+
+static void machine(struct sl_plan *plan)
+{
+    const struct sl_pump *pump = &plan->pump->record;
+    double ratio = speed_ratio(plan);
+    double rated_speed = sl_recorded(&pump->rated_speed);
+    double top = plan->inputs[SL_IN_SPEED].value.typical;
+    double rated_ratio = top / rated_speed;
+
+    plan->head = view_of(plan, HEAD, ratio);
+    plan->npshr = view_of(plan, NPSHR, ratio);
+    if (isnan(rated_ratio))
+        rated_ratio = 1;
+    if (pump->rated_flow.known)
+        plan->rated_flow =
+            sl_affinity_flow(pump->rated_flow.value, rated_ratio);
+    if (pump->rated_npshr.known)
+        plan->rated_npshr =
+            sl_affinity_npshr(pump->rated_npshr.value, rated_ratio,
+                              npshr_exponent(plan, rated_ratio));
+}
+
+/* The discharge head to lift to; a lower one means more flow. */
+static void discharge_level(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    bool want_low = plan->condition->discharge == SL_LEVEL_LOW;
+    const struct sl_number *wanted =
+        want_low ? &station->discharge_low : &station->discharge_normal;
+    const struct sl_number *other =
+        want_low ? &station->discharge_normal : &station->discharge_low;
+    struct sl_interval value = {other->value, NAN, other->value};
+
+    if (wanted->known || !other->known) {
+        sl_plan_record(plan, SL_IN_DISCHARGE_LEVEL, wanted, SL_KIND_STATION,
+                       station->line, "no discharge level is recorded");
+        return;
+    }
+    if (!want_low)
+        value = (struct sl_interval){other->value, other->value, NAN};
+    sl_plan_set(plan, SL_IN_DISCHARGE_LEVEL, SL_DERIVED, value,
+                want_low ? "the normal discharge level stands in for the "
+                           "lowest"
+                         : "the lowest discharge level stands in for the "
+                           "normal")
+        ->line = station->line;
+}
+
+/* Smooth discharge pipe lets more flow through: its good end is adverse. */
+static struct sl_interval discharge_roughness(const struct sl_plan *plan)
+{
+    int material = plan->dossier->record.discharge_material;
+    const struct sl_default *row;
+
+    if (material >= 1 && (size_t)material <= plan->tables->roughness_count) {
+        const struct sl_roughness *kind =
+            &plan->tables->roughness[material - 1];
+
+        return (struct sl_interval){kind->fair, kind->good, kind->poor};
+    }
+    row = sl_default_find(plan->tables, "discharge_roughness", "");
+    return row ? row->value : sl_no_figure();
+}
+
+static void discharge_pipe(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    struct sl_delivery *delivery = &plan->delivery;
+    const struct sl_default *row =
+        sl_default_find(plan->tables, "discharge_minor_k", "");
+    struct sl_input *input;
+
+    delivery->length = station->discharge_length.value;
+    delivery->bore = station->discharge_bore.value;
+    delivery->roughness = discharge_roughness(plan);
+    delivery->minor_k = row ? row->value : sl_no_figure();
+    input = sl_plan_set(plan, SL_IN_DISCHARGE_LOSS, SL_ASSUMED, sl_no_figure(),
+                        "by the main's length and bore; its roughness, or "
+                        "its fittings' K, from a table");
+    input->line = station->line;
+    if (station->discharge_minor_k.known)
+        delivery->minor_k = sl_exactly(station->discharge_minor_k.value);
+    else
+        input->row = row;
+    if (!station->discharge_material)
+        input->row = sl_default_find(plan->tables, "discharge_roughness", "");
+}
+
+static void discharge_loss(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    struct sl_delivery *delivery = &plan->delivery;
+
+    delivery->loss_flow = NAN;
+    delivery->loss_head = NAN;
+    delivery->known = true;
+    if (station->discharge_loss_flow.known &&
+        station->discharge_loss_head.known) {
+        delivery->loss_flow = station->discharge_loss_flow.value;
+        delivery->loss_head = station->discharge_loss_head.value;
+        sl_plan_set(plan, SL_IN_DISCHARGE_LOSS, SL_RECORDED,
+                    sl_exactly(delivery->loss_head),
+                    "a measured loss, with the square of the flow")
+            ->line = station->line;
+    } else if (station->discharge_length.known &&
+               station->discharge_bore.known) {
+        discharge_pipe(plan);
+    } else {
+        delivery->known = false;
+        sl_plan_set(plan, SL_IN_DISCHARGE_LOSS, SL_UNKNOWN, sl_no_figure(),
+                    "neither a measured loss nor the main's length and bore "
+                    "are recorded");
+    }
+}
+
+/* A flow that is not solved is one the pump has run at, or was made for: it
+ * bounds the worst from below. */
+static void flow_as_recorded(struct sl_plan *plan, enum sl_flow_basis basis,
+                             double flow, const char *rule)
+{
+    struct sl_input *input =
+        sl_plan_set(plan, SL_IN_FLOW, SL_DERIVED,
+                    (struct sl_interval){flow, NAN, flow}, rule);
+
+    plan->flow_basis = basis;
+    input->kind = SL_KIND_PUMP;
+    input->line = plan->pump->record.line;
+    plan->inputs[SL_IN_DISCHARGE_LEVEL].applies = false;
+    plan->inputs[SL_IN_DISCHARGE_LOSS].applies = false;
+}
+
+static void flow(struct sl_plan *plan)
+{
+    const struct sl_number *largest = &plan->pump->record.largest_recorded_flow;
+
+    if (sl_curve_usable(&plan->head) && plan->delivery.known &&
+        !isnan(plan->inputs[SL_IN_DISCHARGE_LEVEL].value.typical)) {
+        plan->flow_basis = SL_FLOW_SOLVED;
+        sl_plan_set(plan, SL_IN_FLOW, SL_DERIVED, sl_no_figure(),
+                    "solved: its curve on the station's system, running "
+                    "alone");
+        return;
+    }
+    if (largest->known)
+        flow_as_recorded(plan, SL_FLOW_RECORDED, largest->value,
+                         "the largest flow recorded; the flow it may run "
+                         "out to is not known");
+    else if (!isnan(plan->rated_flow))
+        flow_as_recorded(plan, SL_FLOW_RATED, plan->rated_flow,
+                         "the rated flow; the flow it may run out to is not "
+                         "known");
+    else {
+        flow_as_recorded(plan, SL_FLOW_NONE, NAN, "no flow is recorded");
+        plan->inputs[SL_IN_FLOW].provenance = SL_UNKNOWN;
+    }
+}
+
+static void npshr(struct sl_plan *plan)
+{
+    struct sl_input *input;
+
+    if (sl_curve_usable(&plan->npshr)) {
+        input = sl_plan_set(plan, SL_IN_NPSHR, SL_RECORDED, sl_no_figure(),
+                            "the maker's curve, at this flow");
+        input->kind = SL_KIND_CURVE;
+        input->line = plan->pump->curve->points[0].line;
+    } else if (!isnan(plan->rated_npshr)) {
+        input = sl_plan_set(
+            plan, SL_IN_NPSHR, SL_DERIVED,
+            (struct sl_interval){plan->rated_npshr, NAN, plan->rated_npshr},
+            "known at the rated point alone; it rises with the flow");
+        input->kind = SL_KIND_PUMP;
+        input->line = plan->pump->record.line;
+    } else {
+        sl_plan_set(plan, SL_IN_NPSHR, SL_UNKNOWN, sl_no_figure(),
+                    "not recorded, and nothing bounds it");
+    }
+}
+
+void sl_plan_delivery(struct sl_plan *plan)
+{
+    machine(plan);
+    discharge_level(plan);
+    discharge_loss(plan);
+    flow(plan);
+    npshr(plan);
+}

@@ -1,0 +1,107 @@
+#include "evaluator/plan.h"
+
+#include <math.h>
+#include <string.h>
+
+struct sl_interval sl_exactly(double value)
+{
+    return (struct sl_interval){value, value, value};
+}
+
+struct sl_interval sl_no_figure(void)
+{
+    return sl_exactly(NAN);
+}
+
+double sl_recorded(const struct sl_number *number)
+{
+    return number->known ? number->value : NAN;
+}
+
+struct sl_input *sl_plan_set(struct sl_plan *plan, enum sl_input_id id,
+                             enum sl_provenance provenance,
+                             struct sl_interval value, const char *rule)
+{
+    struct sl_input *input = &plan->inputs[id];
+
+    *input = (struct sl_input){.id = id,
+                               .applies = true,
+                               .provenance = provenance,
+                               .value = value,
+                               .rule = rule};
+    return input;
+}
+
+struct sl_input *sl_plan_record(struct sl_plan *plan, enum sl_input_id id,
+                                const struct sl_number *number,
+                                enum sl_kind kind, long line,
+                                const char *unknown_rule)
+{
+    struct sl_input *input;
+
+    if (!number->known)
+        return sl_plan_set(plan, id, SL_UNKNOWN, sl_no_figure(), unknown_rule);
+    input = sl_plan_set(plan, id, SL_RECORDED, sl_exactly(number->value), "");
+    input->kind = kind;
+    input->line = line;
+    return input;
+}
+
+const struct sl_default *sl_default_find(const struct sl_tables *tables,
+                                         const char *field,
+                                         const char *circumstance)
+{
+    const struct sl_default *general = NULL;
+
+    for (size_t i = 0; i < tables->default_count; i++) {
+        const struct sl_default *row = &tables->defaults[i];
+
+        if (strcmp(row->field, field) != 0)
+            continue;
+        if (strcmp(row->circumstance, circumstance) == 0)
+            return row;
+        if (row->circumstance[0] == '\0')
+            general = row;
+    }
+    return general;
+}
+
+struct sl_input *sl_plan_default(struct sl_plan *plan, enum sl_input_id id,
+                                 const char *field, const char *circumstance)
+{
+    const struct sl_default *row =
+        sl_default_find(plan->tables, field, circumstance);
+    struct sl_input *input;
+
+    if (!row)
+        return sl_plan_set(plan, id, SL_UNKNOWN, sl_no_figure(),
+                           "not recorded, and there is no default");
+    input = sl_plan_set(plan, id, SL_ASSUMED, row->value, row->source);
+    input->row = row;
+    return input;
+}
+
+void sl_plan_make(struct sl_plan *plan, const struct sl_dossier *dossier,
+                  const struct sl_dossier_pump *pump,
+                  const struct sl_condition *condition,
+                  const struct sl_tables *tables,
+                  const struct sl_margin_rule *rule, struct sl_arena *arena)
+{
+    *plan = (struct sl_plan){.dossier = dossier,
+                             .pump = pump,
+                             .condition = condition,
+                             .tables = tables,
+                             .rule = rule,
+                             .arena = arena,
+                             .unmeasured = SL_INPUT_COUNT,
+                             .inlet_diameter = NAN,
+                             .rated_flow = NAN,
+                             .rated_npshr = NAN};
+    for (int id = 0; id < SL_INPUT_COUNT; id++)
+        plan->inputs[id] = (struct sl_input){.id = (enum sl_input_id)id,
+                                             .provenance = SL_DERIVED,
+                                             .rule = "does not apply"};
+    sl_plan_source(plan);
+    sl_plan_suction(plan);
+    sl_plan_delivery(plan);
+}

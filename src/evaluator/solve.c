@@ -1,0 +1,332 @@
+#include "evaluator/solve.h"
+
+#include <math.h>
+
+#include "hydraulics/atmosphere.h"
+#include "hydraulics/constants.h"
+#include "hydraulics/friction.h"
+#include "hydraulics/minor_loss.h"
+#include "hydraulics/npsh.h"
+#include "hydraulics/operating_point.h"
+#include "hydraulics/water.h"
+
+/* Flows are solved to this, m³/s: far below what any head shows. */
+#define FLOW_TOLERANCE 1e-13
+
+/* What stays the same while the flow is sought. */
+struct setting {
+    const struct sl_plan *plan;
+    const struct sl_ends *ends;
+    double density;
+    double viscosity; /* kinematic, m²/s */
+    double vapour_pressure;
+    double source_head; /* m, of the surface or main, gauge */
+};
+
+/* Friction and fittings from the source to the pump, m. */
+struct suction_loss {
+    double friction;
+    double minor;
+};
+
+struct sl_ends sl_ends_all(enum sl_corner corner)
+{
+    struct sl_ends ends;
+
+    for (int i = 0; i < SL_INPUT_COUNT; i++)
+        ends.of[i] = corner;
+    return ends;
+}
+
+static double at(const struct sl_interval *interval, enum sl_corner end)
+{
+    switch (end) {
+    case SL_ADVERSE:
+        return interval->adverse;
+    case SL_FAVOURABLE:
+        return interval->favourable;
+    default:
+        return interval->typical;
+    }
+}
+
+/* The value of an input at its end; 0 when it plays no part. */
+static double value(const struct setting *setting, enum sl_input_id id)
+{
+    const struct sl_input *input = &setting->plan->inputs[id];
+
+    return input->applies ? at(&input->value, setting->ends->of[id]) : 0;
+}
+
+/* NaN where the input has no honest figure at its end, else 0. */
+static double doubt(const struct setting *setting, enum sl_input_id id)
+{
+    return value(setting, id) * 0;
+}
+
+static struct sl_pipe_loss pipe_loss(const struct setting *setting,
+                                     const struct sl_path_pipe *place,
+                                     double flow)
+{
+    const struct sl_pipe *pipe = &place->pipe->record;
+    const struct sl_ends *ends = setting->ends;
+    struct sl_pipe_loss loss = {.pipe = place->pipe, .factor = NAN};
+    double bore = pipe->bore.value;
+
+    loss.roughness = at(&place->roughness, ends->of[SL_IN_SUCTION_ROUGHNESS]);
+    loss.minor_k = at(&place->minor_k, ends->of[SL_IN_SUCTION_MINOR]);
+    loss.flow = flow;
+    if (ends->of[SL_IN_RUNNING_TOGETHER] == SL_ADVERSE)
+        loss.flow += place->others;
+    if (!pipe->bore.known)
+        return loss; /* the stand-in for the whole pipe is added once */
+    loss.velocity = sl_pipe_velocity(loss.flow, bore);
+    loss.reynolds = sl_reynolds(loss.velocity, bore, setting->viscosity);
+    loss.minor = sl_minor_head(loss.minor_k, loss.velocity);
+    if (!pipe->length.known || loss.flow == 0)
+        return loss;
+    if (place->hazen_williams) {
+        loss.friction = sl_hazen_williams_head(
+            loss.flow, pipe->hazen_williams_c.value, pipe->length.value, bore);
+        return loss;
+    }
+    loss.factor = sl_friction_factor(loss.reynolds, loss.roughness / bore);
+    loss.friction =
+        sl_darcy_head(loss.factor, pipe->length.value, bore, loss.velocity);
+    return loss;
+}
+
+/* A pump that stands in its water loses only what its inlet takes: K on the
+ * inlet's diameter, or a default head. */
+static double inlet_loss(const struct setting *setting, double flow)
+{
+    const struct sl_plan *plan = setting->plan;
+    double amount = value(setting, SL_IN_SUCTION_MINOR);
+
+    if (isnan(plan->inlet_diameter))
+        return amount;
+    return sl_minor_head(amount, sl_pipe_velocity(flow, plan->inlet_diameter));
+}
+
+static struct suction_loss suction_loss(const struct setting *setting,
+                                        double flow)
+{
+    const struct sl_plan *plan = setting->plan;
+    struct suction_loss sum = {0};
+
+    for (size_t i = 0; i < plan->path_count; i++) {
+        struct sl_pipe_loss loss = pipe_loss(setting, &plan->path[i], flow);
+
+        sum.friction += loss.friction;
+        sum.minor += loss.minor;
+    }
+    if (plan->path_count == 0)
+        sum.minor += inlet_loss(setting, flow);
+    if (plan->unmeasured < SL_INPUT_COUNT)
+        sum.friction += value(setting, plan->unmeasured);
+    return sum;
+}
+
+static double discharge_loss(const struct setting *setting, double flow)
+{
+    const struct sl_delivery *delivery = &setting->plan->delivery;
+    enum sl_corner end = setting->ends->of[SL_IN_DISCHARGE_LOSS];
+    double velocity, reynolds, factor;
+
+    if (!isnan(delivery->loss_flow)) {
+        double part = flow / delivery->loss_flow;
+
+        return delivery->loss_head * part * part; /* F21 */
+    }
+    if (flow == 0)
+        return 0;
+    velocity = sl_pipe_velocity(flow, delivery->bore);
+    reynolds = sl_reynolds(velocity, delivery->bore, setting->viscosity);
+    factor = sl_friction_factor(reynolds,
+                                at(&delivery->roughness, end) / delivery->bore);
+    return sl_darcy_head(factor, delivery->length, delivery->bore, velocity) +
+           sl_minor_head(at(&delivery->minor_k, end), velocity);
+}
+
+/* The head one pump alone must give at this flow (F12 for a set of one). */
+static double system_head(void *context, double flow)
+{
+    const struct setting *setting = context;
+    struct suction_loss suction = suction_loss(setting, flow);
+
+    return value(setting, SL_IN_DISCHARGE_LEVEL) - setting->source_head +
+           discharge_loss(setting, flow) + suction.friction + suction.minor;
+}
+
+static double flow_of(const struct setting *setting,
+                      struct sl_case_notes *notes)
+{
+    const struct sl_plan *plan = setting->plan;
+    struct sl_system system = {system_head, (void *)setting};
+    struct sl_operating_point point;
+
+    if (plan->flow_basis != SL_FLOW_SOLVED)
+        return value(setting, SL_IN_FLOW);
+    switch (
+        sl_operating_point_find(&plan->head, &system, FLOW_TOLERANCE, &point)) {
+    case SL_OPERATING_FOUND:
+    case SL_OPERATING_PAST_END:
+    case SL_OPERATING_BEFORE_START:
+        return point.flow;
+    case SL_OPERATING_STANDS:
+        notes->stands = true;
+        return NAN;
+    case SL_OPERATING_NOT_FOUND:
+        notes->off_curve = true;
+        return NAN;
+    default:
+        return NAN;
+    }
+}
+
+/* NPSHR at a flow. A value known at the rated point alone holds from there
+ * on as a bound from below, and nowhere as one from above. */
+static double npshr_at(const struct setting *setting, double flow,
+                       struct sl_case_notes *notes)
+{
+    const struct sl_plan *plan = setting->plan;
+    double npshr;
+
+    if (sl_curve_usable(&plan->npshr)) {
+        npshr = sl_curve_at(&plan->npshr, flow);
+        notes->off_curve = notes->off_curve || (isnan(npshr) && !isnan(flow));
+        return npshr;
+    }
+    npshr = value(setting, SL_IN_NPSHR);
+    if (setting->ends->of[SL_IN_NPSHR] == SL_FAVOURABLE &&
+        !(flow >= plan->rated_flow))
+        return NAN;
+    return npshr;
+}
+
+static struct setting setting_of(const struct sl_plan *plan,
+                                 const struct sl_ends *ends, double temperature)
+{
+    struct setting setting = {.plan = plan, .ends = ends};
+    double salinity = plan->salinity;
+
+    if (salinity == 0) {
+        setting.density = sl_water_density(temperature);
+        setting.vapour_pressure = sl_vapour_pressure(temperature);
+    } else {
+        setting.density = sl_seawater_density(temperature, salinity);
+        setting.vapour_pressure =
+            sl_seawater_vapour_pressure(temperature, salinity);
+    }
+    setting.viscosity = sl_water_viscosity(temperature) / setting.density;
+    setting.source_head =
+        value(&setting, plan->source_kind == SL_MAIN
+                            ? SL_IN_SOURCE_PRESSURE_ELEVATION
+                            : SL_IN_SOURCE_LEVEL) +
+        value(&setting, SL_IN_SOURCE_PRESSURE) / (setting.density * SL_GRAVITY);
+    return setting;
+}
+
+/* V²/2g where the balance starts at a gauge on a pipe, and only there. */
+static double gauge_velocity_head(const struct setting *setting, double flow)
+{
+    const struct sl_plan *plan = setting->plan;
+
+    if (plan->source_kind != SL_MAIN || plan->path_count == 0 ||
+        !plan->path[0].pipe->record.bore.known)
+        return 0;
+    return sl_velocity_head(
+        sl_pipe_velocity(flow, plan->path[0].pipe->record.bore.value));
+}
+
+static void balance(const struct setting *setting, double flow,
+                    struct sl_terms *terms)
+{
+    const struct sl_plan *plan = setting->plan;
+    struct suction_loss suction = suction_loss(setting, flow);
+    double air = sl_standard_atmosphere(value(setting, SL_IN_SITE_ELEVATION));
+    struct sl_balance heads = {
+        .air_pressure = air,
+        .air_fall = air * value(setting, SL_IN_BAROMETER),
+        .gauge_pressure = value(setting, SL_IN_SOURCE_PRESSURE),
+        .surface = value(setting, plan->source_kind == SL_MAIN
+                                      ? SL_IN_SOURCE_PRESSURE_ELEVATION
+                                      : SL_IN_SOURCE_LEVEL),
+        .datum = value(setting, SL_IN_DATUM),
+        .velocity_head = gauge_velocity_head(setting, flow),
+        .friction = suction.friction,
+        .minor = suction.minor,
+        .gas = value(setting, SL_IN_GAS),
+        .density = setting->density,
+        .vapour_pressure = setting->vapour_pressure,
+    };
+
+    sl_npsha(&heads, terms);
+    terms->npsha +=
+        doubt(setting, SL_IN_SOURCE_KIND) + doubt(setting, SL_IN_SPEED);
+}
+
+static void solve_at(const struct sl_plan *plan, const struct sl_ends *ends,
+                     double temperature, struct sl_case *solved,
+                     struct sl_case_notes *notes)
+{
+    struct setting setting = setting_of(plan, ends, temperature);
+
+    *notes = (struct sl_case_notes){0};
+    solved->flow = flow_of(&setting, notes);
+    balance(&setting, solved->flow, &solved->terms);
+    solved->npshr = npshr_at(&setting, solved->flow, notes);
+    solved->required =
+        sl_required_npsha(solved->npshr, plan->rule->ratio, plan->rule->floor);
+    solved->margin = solved->terms.npsha - solved->npshr;
+    solved->surplus = solved->terms.npsha - solved->required;
+}
+
+void sl_solve_case(const struct sl_plan *plan, const struct sl_ends *ends,
+                   struct sl_case *solved, struct sl_case_notes *notes)
+{
+    const struct sl_interval *warmth = &plan->inputs[SL_IN_TEMPERATURE].value;
+    enum sl_corner end = ends->of[SL_IN_TEMPERATURE];
+    struct sl_case other;
+    struct sl_case_notes other_notes;
+    bool other_is_worse;
+
+    solve_at(plan, ends, at(warmth, end), solved, notes);
+    if (end == SL_TYPICAL || warmth->adverse == warmth->favourable)
+        return;
+    solve_at(plan, ends,
+             at(warmth, end == SL_ADVERSE ? SL_FAVOURABLE : SL_ADVERSE), &other,
+             &other_notes);
+    other_is_worse = other.surplus < solved->surplus;
+    if (isnan(other.surplus) || isnan(solved->surplus))
+        other_is_worse = isnan(other.surplus);
+    if (other_is_worse == (end == SL_ADVERSE)) {
+        *solved = other;
+        *notes = other_notes;
+    }
+}
+
+double sl_solve_most_flow(const struct sl_plan *plan)
+{
+    struct sl_ends ends = sl_ends_all(SL_FAVOURABLE);
+    struct sl_case solved;
+    struct sl_case_notes notes;
+
+    ends.of[SL_IN_DISCHARGE_LEVEL] = SL_ADVERSE;
+    ends.of[SL_IN_DISCHARGE_LOSS] = SL_ADVERSE;
+    ends.of[SL_IN_FLOW] = SL_ADVERSE;
+    solve_at(plan, &ends, plan->inputs[SL_IN_TEMPERATURE].value.adverse,
+             &solved, &notes);
+    return notes.stands ? 0 : solved.flow;
+}
+
+void sl_solve_losses(const struct sl_plan *plan, double flow,
+                     struct sl_pipe_loss *losses)
+{
+    struct sl_ends ends = sl_ends_all(SL_TYPICAL);
+    struct setting setting =
+        setting_of(plan, &ends, plan->inputs[SL_IN_TEMPERATURE].value.typical);
+
+    for (size_t i = 0; i < plan->path_count; i++)
+        losses[i] = pipe_loss(&setting, &plan->path[i], flow);
+}

@@ -1,0 +1,290 @@
+/* The source side of a plan: the air, the liquid's surface or the main's
+ * gauge, the datum, the water. */
+#include <math.h>
+
+#include "evaluator/plan.h"
+#include "hydraulics/atmosphere.h"
+
+/* Lowest dry land on Earth, m: no site's air is heavier (common geographic
+ * fact, the Dead Sea shore). */
+#define LOWEST_LAND (-430.0)
+
+static const char *service_word(const struct sl_plan *plan)
+{
+    return sl_word(&plan->tables->vocabularies.of[SL_WORDS_SERVICE],
+                   plan->dossier->record.service);
+}
+
+static void source_kind(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    struct sl_input *input;
+
+    if (station->source_kind) {
+        plan->source_kind = (enum sl_source_kind)station->source_kind;
+        input = sl_plan_set(plan, SL_IN_SOURCE_KIND, SL_RECORDED,
+                            sl_exactly(station->source_kind), "");
+        input->line = station->line;
+    } else if (station->installation == SL_ON_MAIN) {
+        plan->source_kind = SL_MAIN;
+        sl_plan_set(plan, SL_IN_SOURCE_KIND, SL_DERIVED, sl_exactly(SL_MAIN),
+                    "the station stands on a main");
+    } else if (station->installation == SL_WET_PIT) {
+        plan->source_kind = SL_OPEN;
+        sl_plan_set(plan, SL_IN_SOURCE_KIND, SL_DERIVED, sl_exactly(SL_OPEN),
+                    "a wet pit is open to the air");
+    } else {
+        plan->source_kind = SL_OPEN;
+        sl_plan_set(plan, SL_IN_SOURCE_KIND, SL_UNKNOWN,
+                    (struct sl_interval){SL_OPEN, NAN, NAN},
+                    "not recorded; an open surface is likely");
+    }
+}
+
+/* The lower of two levels of which either may be unknown. */
+static const struct sl_number *lower(const struct sl_number *a,
+                                     const struct sl_number *b)
+{
+    if (!a->known)
+        return b;
+    return b->known && b->value < a->value ? b : a;
+}
+
+/* Sources that no control can keep from falling to their record low. */
+static bool natural_source(const struct sl_station *station)
+{
+    return station->service == SL_RAW_WATER ||
+           station->service == SL_IRRIGATION || station->service == SL_SEAWATER;
+}
+
+static void level(struct sl_plan *plan, const struct sl_number *number,
+                  enum sl_source_basis basis, struct sl_interval value,
+                  enum sl_provenance provenance, const char *rule)
+{
+    struct sl_input *input =
+        sl_plan_set(plan, SL_IN_SOURCE_LEVEL, provenance, value, rule);
+
+    plan->source_basis = basis;
+    if (number)
+        input->line = plan->dossier->record.line;
+}
+
+/* The lowest level: what the controls permit; for a natural source also the
+ * lowest on record.  A level that is not the lowest is a bound from above:
+ * it can prove a pump short, never clear. */
+static void low_level(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    const struct sl_number *cut_out = &station->cut_out_level;
+    const struct sl_number *record = &station->record_low_level;
+    const struct sl_number *normal = &station->normal_level;
+    const struct sl_number *lowest = cut_out;
+
+    if (natural_source(station))
+        lowest = lower(cut_out, record);
+    if (lowest->known)
+        level(plan, lowest,
+              lowest == cut_out ? SL_SOURCE_CUT_OUT : SL_SOURCE_RECORD_LOW,
+              sl_exactly(lowest->value), SL_RECORDED, "");
+    else if (record->known)
+        level(plan, record, SL_SOURCE_RECORD_LOW,
+              (struct sl_interval){record->value, NAN, record->value},
+              SL_DERIVED,
+              "the lowest on record stands in for the cut-out level, which "
+              "may be lower");
+    else if (normal->known)
+        level(plan, normal, SL_SOURCE_NORMAL,
+              (struct sl_interval){normal->value, NAN, normal->value},
+              SL_DERIVED,
+              "the normal level stands in for the lowest, which is not "
+              "recorded");
+    else
+        level(plan, NULL, SL_SOURCE_UNKNOWN, sl_no_figure(), SL_UNKNOWN,
+              "no source level is recorded");
+}
+
+static void usual_level(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    const struct sl_number *low =
+        lower(&station->cut_out_level, &station->record_low_level);
+
+    if (station->normal_level.known)
+        level(plan, &station->normal_level, SL_SOURCE_NORMAL,
+              sl_exactly(station->normal_level.value), SL_RECORDED, "");
+    else if (low->known)
+        level(plan, low,
+              low == &station->cut_out_level ? SL_SOURCE_CUT_OUT
+                                             : SL_SOURCE_RECORD_LOW,
+              (struct sl_interval){low->value, low->value, NAN}, SL_DERIVED,
+              "the lowest known level stands in for the normal one");
+    else
+        level(plan, NULL, SL_SOURCE_UNKNOWN, sl_no_figure(), SL_UNKNOWN,
+              "no source level is recorded");
+}
+
+/* Gauge pressure of a tank or main; the other one recorded bounds it. */
+static void pressure(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    const struct sl_number *low = &station->source_pressure_low;
+    const struct sl_number *normal = &station->source_pressure_normal;
+    bool want_low = plan->condition->pressure == SL_LEVEL_LOW;
+    const struct sl_number *wanted = want_low ? low : normal;
+    const struct sl_number *other = want_low ? normal : low;
+    struct sl_input *input;
+
+    input = sl_plan_record(plan, SL_IN_SOURCE_PRESSURE, wanted, SL_KIND_STATION,
+                           station->line, "no source pressure is recorded");
+    plan->source_basis = (wanted->known ? want_low : !want_low)
+                             ? SL_SOURCE_PRESSURE_LOW
+                             : SL_SOURCE_PRESSURE_NORMAL;
+    if (wanted->known)
+        return;
+    if (!other->known) {
+        plan->source_basis = SL_SOURCE_UNKNOWN;
+        return;
+    }
+    *input = (struct sl_input){
+        .id = SL_IN_SOURCE_PRESSURE,
+        .applies = true,
+        .provenance = SL_DERIVED,
+        .line = station->line,
+        .rule = want_low ? "the normal pressure stands in for the lowest"
+                         : "the lowest pressure stands in for the normal",
+        .value = want_low
+                     ? (struct sl_interval){other->value, NAN, other->value}
+                     : (struct sl_interval){other->value, other->value, NAN}};
+}
+
+static void surface(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    enum sl_source_basis basis;
+
+    if (plan->source_kind == SL_MAIN) {
+        pressure(plan);
+        sl_plan_record(plan, SL_IN_SOURCE_PRESSURE_ELEVATION,
+                       &station->source_pressure_elevation, SL_KIND_STATION,
+                       station->line, "not recorded");
+        return;
+    }
+    if (plan->condition->level == SL_LEVEL_LOW)
+        low_level(plan);
+    else
+        usual_level(plan);
+    basis = plan->source_basis;
+    if (plan->source_kind == SL_CLOSED)
+        pressure(plan);
+    plan->source_basis = basis;
+}
+
+/* Elevations share one datum, so a recorded level tells about where the
+ * site lies; but an owner may keep levels on a local datum, so it bounds
+ * nothing. */
+static void site_elevation(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    const struct sl_number *hint = &station->normal_level;
+    struct sl_interval value = {NAN, NAN, LOWEST_LAND};
+
+    if (!hint->known)
+        hint = lower(&station->cut_out_level, &station->record_low_level);
+    if (station->site_elevation.known) {
+        sl_plan_record(plan, SL_IN_SITE_ELEVATION, &station->site_elevation,
+                       SL_KIND_STATION, station->line, "");
+        return;
+    }
+    value.typical = sl_recorded(hint);
+    sl_plan_set(plan, SL_IN_SITE_ELEVATION,
+                hint->known ? SL_DERIVED : SL_UNKNOWN, value,
+                hint->known ? "a source level stands in, if levels are "
+                              "heights above sea level"
+                            : "not recorded");
+}
+
+/* How far the air pressure may lie below the standard one, as a part of it,
+ * so that an unknown elevation needs no second allowance. */
+static void barometer(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    const struct sl_number *low = &station->barometer_low;
+    double standard;
+
+    if (!plan->condition->storm_barometer)
+        return;
+    standard = sl_standard_atmosphere(
+        plan->inputs[SL_IN_SITE_ELEVATION].value.typical);
+    if (low->known && station->site_elevation.known) {
+        struct sl_input *input =
+            sl_plan_set(plan, SL_IN_BAROMETER, SL_RECORDED,
+                        sl_exactly(1 - low->value / standard),
+                        "its fall, as a part of the standard pressure");
+
+        input->line = station->line;
+        return;
+    }
+    sl_plan_default(plan, SL_IN_BAROMETER, "barometer_fall", "");
+}
+
+static void temperature(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    bool summer = plan->condition->summer_temperature;
+    const struct sl_number *number =
+        summer ? &station->water_temp_summer : &station->water_temp_normal;
+    struct sl_input *input;
+
+    if (number->known) {
+        sl_plan_record(plan, SL_IN_TEMPERATURE, number, SL_KIND_STATION,
+                       station->line, "");
+        return;
+    }
+    input = sl_plan_default(plan, SL_IN_TEMPERATURE,
+                            summer ? "water_temp_summer" : "water_temp_normal",
+                            service_word(plan));
+    /* The usual water is no warmer than the warmest of the year. */
+    if (!summer && station->water_temp_summer.known) {
+        double warmest = station->water_temp_summer.value;
+
+        input->value.adverse = fmin(input->value.adverse, warmest);
+        input->value.typical = fmin(input->value.typical, warmest);
+        input->value.favourable = fmin(input->value.favourable, warmest);
+    }
+}
+
+static void gas(struct sl_plan *plan)
+{
+    int service = plan->dossier->record.service;
+
+    if (service == SL_WASTEWATER || service == 0)
+        sl_plan_default(plan, SL_IN_GAS, "gas_allowance", service_word(plan));
+}
+
+void sl_plan_source(struct sl_plan *plan)
+{
+    const struct sl_pump *pump = &plan->pump->record;
+    struct sl_input *datum;
+
+    source_kind(plan);
+    surface(plan);
+    site_elevation(plan);
+    barometer(plan);
+    temperature(plan);
+    gas(plan);
+    datum = sl_plan_record(plan, SL_IN_DATUM, &pump->datum_elevation,
+                           SL_KIND_PUMP, pump->line, "not recorded");
+    /* The eye of a wet-pit pump lies above the lip of its inlet. */
+    if (!pump->datum_elevation.known && pump->inlet_elevation.known &&
+        (pump->make_up == SL_VERTICAL_TURBINE ||
+         pump->make_up == SL_SUBMERSIBLE)) {
+        datum->value.favourable = pump->inlet_elevation.value;
+        datum->rule = "not recorded; no lower than the inlet's lip";
+    }
+    if (plan->dossier->record.service == SL_SEAWATER) {
+        const struct sl_default *row =
+            sl_default_find(plan->tables, "salinity", "seawater");
+
+        plan->salinity = row ? row->value.typical : NAN;
+    }
+}
