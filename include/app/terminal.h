@@ -1,0 +1,22 @@
+/* What a person sees while the program runs: progress and messages on
+ * standard error, progress only when that is a terminal. */
+#ifndef SL_APP_TERMINAL_H
+#define SL_APP_TERMINAL_H
+
+#include <stdbool.h>
+#include <stdio.h>
+
+#include "base/text.h"
+
+/* Catch Ctrl-C and SIGTERM: from then on sl_stop_asked() tells. */
+void sl_watch_for_stop(void);
+bool sl_stop_asked(void);
+
+/* "reading 42 %"; wiped by sl_progress_end. */
+void sl_progress(const char *what, long long done, long long all);
+void sl_progress_end(void);
+
+/* Text from an inventory, its control characters shown and not sent. */
+void sl_print_safely(FILE *stream, const char *text);
+
+#endif

@@ -1,0 +1,54 @@
+/* The explain command: the sheet of one pump, worked out anew from what the
+ * store holds; the evaluator is pure, so it is what was ranked. */
+#include "app/run.h"
+#include "app/sheet.h"
+#include "app/terminal.h"
+#include "base/text.h"
+#include "evaluator/station.h"
+
+static void print_pump(struct sl_run *run,
+                       const struct sl_station_result *result, size_t pump)
+{
+    struct sl_sheet sheet = {.stream = stdout,
+                             .units = run->options->units,
+                             .rule = &run->tables.rules[0],
+                             .vocabularies = &run->tables.vocabularies,
+                             .dossier = result->dossier};
+
+    for (size_t c = 0; c < result->condition_count; c++)
+        sl_sheet_print(&sheet, &result->conditions[c],
+                       &result->conditions[c].pumps[pump]);
+    puts("Screening, not design: the maker's curve, local codes and a "
+         "licensed\nengineer decide.");
+}
+
+enum sl_status sl_command_explain(struct sl_run *run, struct sl_error *error)
+{
+    const char *wanted = run->options->subject;
+    struct sl_dossier dossier;
+    struct sl_station_result result;
+    bool found = false;
+    enum sl_status status =
+        sl_run_open(run, run->options->store, SL_STORE_READ, error);
+
+    if (!status)
+        status = sl_run_find_newest(run, false, error);
+    if (!status)
+        status =
+            sl_store_dossier_of_pump(run->store, run->vintage.vintage, wanted,
+                                     &run->arena, &dossier, &found, error);
+    if (status)
+        return status;
+    if (!found)
+        return sl_error_set(error, SL_REFUSED,
+                            "no pump \"%s\" is kept in vintage %lld; see "
+                            "pumps.csv for the ids, findings.csv for "
+                            "rejected records",
+                            wanted, run->vintage.vintage);
+    sl_evaluate_station(&dossier, &run->tables, &run->tables.rules[0],
+                        &run->arena, &result);
+    for (size_t i = 0; i < dossier.pump_count; i++)
+        if (sl_same(dossier.pumps[i].record.pump_id, wanted))
+            print_pump(run, &result, i);
+    return SL_OK;
+}

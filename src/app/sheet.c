@@ -1,0 +1,224 @@
+#include "app/sheet.h"
+
+#include <math.h>
+
+#include "app/terminal.h"
+#include "model/fields.h"
+
+/* A value in the sheet's units, or "unknown". */
+static const char *figure(const struct sl_sheet *sheet,
+                          enum sl_quantity quantity, double si, int decimals,
+                          char room[48])
+{
+    double shown = sl_shown(quantity, sheet->units, si);
+
+    if (isnan(si)) {
+        snprintf(room, 48, "unknown");
+        return room;
+    }
+    if (fabs(shown) < 0.5 * pow(10, -decimals))
+        shown = 0; /* no "-0.00" */
+    snprintf(room, 48, "%.*f %s", decimals, shown,
+             sl_unit_shown(quantity, sheet->units)->label);
+    return room;
+}
+
+static int decimals_of(enum sl_quantity quantity)
+{
+    switch (quantity) {
+    case SL_PURE:
+        return 3;
+    case SL_TEMPERATURE:
+    case SL_FLOW:
+    case SL_PRESSURE:
+        return 1;
+    case SL_SPEED:
+        return 0;
+    default:
+        return 2;
+    }
+}
+
+static void head(const struct sl_sheet *sheet, const char *name, double value,
+                 const char *formula)
+{
+    char room[48];
+
+    fprintf(sheet->stream, "  %-34s %12s   %s\n", name,
+            figure(sheet, SL_LENGTH, value, 2, room), formula);
+}
+
+static void title(const struct sl_sheet *sheet,
+                  const struct sl_condition_result *condition,
+                  const struct sl_pump_result *pump)
+{
+    FILE *stream = sheet->stream;
+    const struct sl_station *station = &sheet->dossier->record;
+
+    fputs("Pump ", stream);
+    sl_print_safely(stream, pump->pump->record.pump_id);
+    fputs(" of station ", stream);
+    sl_print_safely(stream, station->station_id);
+    if (station->name) {
+        fputs(", ", stream);
+        sl_print_safely(stream, station->name);
+    }
+    fprintf(stream, "\nCondition: %s\n", condition->condition->condition);
+    fprintf(stream, "State: %s", sl_state_name(pump->state));
+    if (pump->state == SL_UNPROVEN && pump->likely != SL_UNPROVEN)
+        fprintf(stream, " (likely %s)", sl_state_name(pump->likely));
+    if (pump->reason[0]) {
+        fputs(": ", stream);
+        sl_print_safely(stream, pump->reason);
+    }
+    fputs("\n\n", stream);
+}
+
+/* How the air, the surface, the pipes make up NPSHA: formula keys are those
+ * of docs/formulas.md. */
+static void balance(const struct sl_sheet *sheet,
+                    const struct sl_pump_result *pump)
+{
+    const struct sl_case *typical = &pump->cases[SL_TYPICAL];
+    const struct sl_terms *terms = &typical->terms;
+    char room[48];
+
+    fprintf(sheet->stream,
+            "Head balance (F1) at the typical values; flow %s, %s; source "
+            "by %s\n",
+            figure(sheet, SL_FLOW, typical->flow, 1, room),
+            sl_flow_basis_name(pump->flow_basis),
+            sl_source_basis_name(pump->source_basis));
+    head(sheet, "standard air at the site", terms->atmosphere, "F6, F3");
+    head(sheet, "its fall in a storm", terms->barometer, "F1, F3");
+    head(sheet, "gauge pressure of the source", terms->gauge, "F1, F3");
+    head(sheet, "source over the impeller eye", terms->elevation, "F1");
+    head(sheet, "velocity head at the main's gauge", terms->velocity, "F24");
+    head(sheet, "friction of the suction", terms->friction, "F7, F8 or F9");
+    head(sheet, "fittings of the suction", terms->minor, "F24, F30");
+    head(sheet, "vapour pressure", terms->vapour, "F2, F3");
+    head(sheet, "allowance for gas", terms->gas, "F1");
+    head(sheet, "NPSHA", terms->npsha, "the sum");
+    head(sheet, "NPSHR (NPSH3)", typical->npshr, "F19, F20");
+    head(sheet, "margin", typical->margin, "NPSHA - NPSHR");
+    head(sheet, "the rule asks for an NPSHA of", typical->required,
+         sheet->rule->rule);
+    head(sheet, "surplus over the rule", typical->surplus, sheet->rule->source);
+}
+
+static void corner(const struct sl_sheet *sheet, const char *name,
+                   const struct sl_case *solved)
+{
+    char flow[48], npsha[48], npshr[48], margin[48], surplus[48];
+
+    fprintf(sheet->stream, "  %-11s %12s %11s %11s %11s %11s\n", name,
+            figure(sheet, SL_FLOW, solved->flow, 1, flow),
+            figure(sheet, SL_LENGTH, solved->terms.npsha, 2, npsha),
+            figure(sheet, SL_LENGTH, solved->npshr, 2, npshr),
+            figure(sheet, SL_LENGTH, solved->margin, 2, margin),
+            figure(sheet, SL_LENGTH, solved->surplus, 2, surplus));
+}
+
+static void corners(const struct sl_sheet *sheet,
+                    const struct sl_pump_result *pump)
+{
+    fprintf(sheet->stream,
+            "\nWith every unknown at one end\n  %-11s %12s %11s %11s %11s "
+            "%11s\n",
+            "end", "flow", "NPSHA", "NPSHR", "margin", "surplus");
+    corner(sheet, "favourable", &pump->cases[SL_FAVOURABLE]);
+    corner(sheet, "typical", &pump->cases[SL_TYPICAL]);
+    corner(sheet, "adverse", &pump->cases[SL_ADVERSE]);
+}
+
+static void pipe_line(const struct sl_sheet *sheet,
+                      const struct sl_pipe_loss *loss)
+{
+    char flow[48], velocity[48], friction[48], minor[48], roughness[48];
+
+    fputs("  ", sheet->stream);
+    sl_print_safely(sheet->stream, loss->pipe->record.pipe_id);
+    fprintf(sheet->stream,
+            ": flow %s, velocity %s, Re %.0f, roughness %s, f %.5f, friction "
+            "%s, K %.2f, fittings %s (suction_pipes.csv:%ld)\n",
+            figure(sheet, SL_FLOW, loss->flow, 1, flow),
+            figure(sheet, SL_VELOCITY, loss->velocity, 2, velocity),
+            loss->reynolds,
+            figure(sheet, SL_BORE, loss->roughness, 3, roughness), loss->factor,
+            figure(sheet, SL_LENGTH, loss->friction, 3, friction),
+            loss->minor_k, figure(sheet, SL_LENGTH, loss->minor, 3, minor),
+            loss->pipe->record.line);
+}
+
+static void pipes(const struct sl_sheet *sheet,
+                  const struct sl_pump_result *pump)
+{
+    if (pump->loss_count == 0)
+        return;
+    fputs("\nSuction pipes, from the source to the pump\n", sheet->stream);
+    for (size_t i = 0; i < pump->loss_count; i++)
+        pipe_line(sheet, &pump->losses[i]);
+}
+
+/* "2.40 m" or "2.40 m (1.10 to 3.00)", and where it comes from. */
+static void input_line(const struct sl_sheet *sheet,
+                       const struct sl_input *input)
+{
+    enum sl_quantity quantity = sl_input_quantity(input->id);
+    int decimals = decimals_of(quantity);
+    char typical[48], adverse[48], favourable[48];
+    FILE *stream = sheet->stream;
+
+    fprintf(stream, "  %-42s %s", sl_input_words(input->id),
+            sl_provenance_name(input->provenance));
+    if (!isnan(input->value.typical) && input->id != SL_IN_SOURCE_KIND)
+        fprintf(
+            stream, " %s",
+            figure(sheet, quantity, input->value.typical, decimals, typical));
+    if (!(input->value.adverse == input->value.favourable) &&
+        !isnan(input->value.favourable))
+        fprintf(stream, " (%s at best, %s at worst)",
+                figure(sheet, quantity, input->value.favourable, decimals,
+                       favourable),
+                isnan(input->value.adverse)
+                    ? "no bound"
+                    : figure(sheet, quantity, input->value.adverse, decimals,
+                             adverse));
+    if (input->line)
+        fprintf(stream, ", %s:%ld", sl_record_kind(input->kind)->file,
+                input->line);
+    if (input->rule && input->rule[0])
+        fprintf(stream, "; %s", input->rule);
+    if (input->row)
+        fprintf(stream, " [default %s%s%s, trust %c]", input->row->field,
+                input->row->circumstance[0] ? ", " : "",
+                input->row->circumstance, input->row->trust);
+    putc('\n', stream);
+}
+
+static void inputs(const struct sl_sheet *sheet,
+                   const struct sl_pump_result *pump)
+{
+    fputs("\nWhat goes in, and where it comes from\n", sheet->stream);
+    for (int i = 0; i < SL_INPUT_COUNT; i++)
+        if (pump->inputs[i].applies)
+            input_line(sheet, &pump->inputs[i]);
+    if (!pump->leading_unknown)
+        return;
+    fprintf(sheet->stream, "Find out first: %s%s\n",
+            sl_input_words(pump->leading_unknown->id),
+            pump->leading_unknown->settles ? "; it alone could settle this"
+                                           : "");
+}
+
+void sl_sheet_print(const struct sl_sheet *sheet,
+                    const struct sl_condition_result *condition,
+                    const struct sl_pump_result *pump)
+{
+    title(sheet, condition, pump);
+    balance(sheet, pump);
+    corners(sheet, pump);
+    pipes(sheet, pump);
+    inputs(sheet, pump);
+    putc('\n', sheet->stream);
+}
