@@ -1,0 +1,53 @@
+/* Friction in full round pipes.
+ *
+ * Closed forms and one equation solved to machine accuracy.  Magnitudes
+ * only: a negative, NaN or infinite input gives NaN.  f is always the Darcy
+ * factor, four times the Fanning factor.  bore is the inside diameter. */
+#ifndef SL_HYDRAULICS_FRICTION_H
+#define SL_HYDRAULICS_FRICTION_H
+
+/* Mean velocity, formula F23: V = 4 Q / (pi D²).
+ * in   flow  [m³/s], >= 0;  bore  [m], > 0
+ * out  [m/s] */
+double sl_pipe_velocity(double flow, double bore);
+
+/* Reynolds number, formula F23: Re = V D / nu.
+ * in   velocity  [m/s], >= 0;  bore  [m], > 0
+ *      kinematic_viscosity  [m²/s], > 0
+ * out  [-] */
+double sl_reynolds(double velocity, double bore, double kinematic_viscosity);
+
+/* Darcy friction factor, formula F8.
+ * Laminar: Hagen-Poiseuille.  Turbulent: Colebrook 1939, Journal of the
+ * Institution of Civil Engineers 11, 133, solved by Newton's method until
+ * it stands still.
+ * in   reynolds  [-]      0 < Re <= 1e9
+ *      relative_roughness  [-], roughness over bore, 0 to 0.1.  Colebrook's
+ *              data end at 0.05; up to 0.1 the equation is carried on, and
+ *              a caller who meets more than 0.05 should say so.
+ * out  [-]: 64/Re below Re 2300; Colebrook above 4000; between them, where
+ *      the flow may be either, the larger of the two, which is Colebrook's
+ *      throughout, so the factor steps up at 2300.
+ * Re 0 gives NaN: water at rest has no friction factor (and no loss: see
+ * sl_darcy_head). */
+double sl_friction_factor(double reynolds, double relative_roughness);
+
+/* Loss of head, Darcy-Weisbach, formula F7: h = f (L/D) V²/2g.
+ * in   factor  [-], Darcy, >= 0;  length  [m], >= 0;  bore  [m], > 0
+ *      velocity  [m/s], >= 0
+ * out  [m].  At velocity 0 the loss is 0 whatever the factor, NaN
+ *      included: sl_friction_factor has none to give there. */
+double sl_darcy_head(double factor, double length, double bore,
+                     double velocity);
+
+/* Loss of head, Hazen-Williams, formula F9:
+ * h = 10.67 L Q^1.852 / (C^1.852 D^4.87).
+ * Williams and Hazen 1905 in the usual SI rounding.  For water at ordinary
+ * temperature in turbulent flow; where roughness is known prefer F7.
+ * in   flow  [m³/s], >= 0;  c  [-], 10 to 200
+ *      length  [m], >= 0;  bore  [m], > 0
+ * out  [m] */
+double sl_hazen_williams_head(double flow, double c, double length,
+                              double bore);
+
+#endif
