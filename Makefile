@@ -43,7 +43,7 @@ TESTS := $(TEST_SOURCES:tests/unit/%.c=$(OUT)/tests/%)
 
 # What Debian calls the things we need.
 NEEDED_TO_BUILD := gcc libc6-dev libsqlite3-dev libcsv-dev libmd-dev
-NEEDED_TO_TEST := $(NEEDED_TO_BUILD) libcmocka-dev
+NEEDED_TO_TEST := $(NEEDED_TO_BUILD) libcmocka-dev sqlite3
 
 .DELETE_ON_ERROR:
 .SUFFIXES:

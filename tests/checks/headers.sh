@@ -5,8 +5,10 @@ bad=0
 count=0
 for header in include/*/*.h; do
     count=$((count + 1))
-    ${CC:-cc} -std=c17 -Wall -Wextra -Wpedantic -Werror -Iinclude \
-        -fsyntax-only -x c "$header" || {
+    # A header of macros alone makes an empty unit: declare something.
+    printf '#include "%s"\nextern int something;\n' "${header#include/}" |
+        ${CC:-cc} -std=c17 -Wall -Wextra -Wpedantic -Werror -Iinclude \
+            -Ibuild/generated -fsyntax-only -x c - || {
         echo "$header does not compile alone"
         bad=1
     }

@@ -10,6 +10,7 @@
 #include <stdlib.h>
 #include <string.h>
 #include <sys/stat.h>
+#include <sys/wait.h>
 #include <unistd.h>
 
 #include "base/memory.h"
@@ -212,6 +213,25 @@ static void an_arena_gives_zeroed_pieces_that_do_not_overlap(void **state)
     assert_null(arena.blocks);
 }
 
+/* The one way to see exit status 70 without a bug: ask for more than there
+ * can be. */
+static void want_of_memory_ends_the_program_with_status_70(void **state)
+{
+    size_t capacity = 0;
+    int status = 0;
+    pid_t child = fork();
+
+    (void)state;
+    if (child == 0) {
+        fclose(stderr);
+        sl_grow(NULL, &capacity, SIZE_MAX / 8, 16);
+        _exit(0);
+    }
+    assert_int_equal(waitpid(child, &status, 0), child);
+    assert_true(WIFEXITED(status));
+    assert_int_equal(WEXITSTATUS(status), 70);
+}
+
 static void errors_keep_their_message_and_every_status_a_name(void **state)
 {
     struct sl_error error = {0};
@@ -325,6 +345,7 @@ int main(void)
         cmocka_unit_test(utf8_is_told_from_what_is_not),
         cmocka_unit_test(text_grows_and_ends_in_nul),
         cmocka_unit_test(an_arena_gives_zeroed_pieces_that_do_not_overlap),
+        cmocka_unit_test(want_of_memory_ends_the_program_with_status_70),
         cmocka_unit_test(errors_keep_their_message_and_every_status_a_name),
         cmocka_unit_test(an_output_appears_only_when_committed),
         cmocka_unit_test(a_full_disk_keeps_the_earlier_file),
