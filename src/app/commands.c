@@ -9,8 +9,8 @@ static enum sl_status open_inventory(struct sl_run *run,
                                      struct sl_inventory **inventory,
                                      struct sl_error *error)
 {
-    enum sl_status status = sl_inventory_open(
-        run->options->subject, &run->tables.vocabularies, inventory, error);
+    enum sl_status status =
+        sl_inventory_open(run->options->subject, inventory, error);
 
     if (status)
         return status;
@@ -115,8 +115,7 @@ enum sl_status sl_command_audit(struct sl_run *run, struct sl_error *error)
     if (!status)
         status = print_and_rank(run, error);
     if (!status)
-        printf("  %s  the store: see summerlow explain PUMP --store\n",
-               path.bytes);
+        printf("  %s: the store, for summerlow explain\n", path.bytes);
 done:
     sl_text_release(&path);
     sl_inventory_close(inventory);

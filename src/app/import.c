@@ -178,7 +178,8 @@ static enum sl_status read_records(struct sl_run *run,
     run->vintage.imported_at = import_time(&run->arena);
     status = sl_store_add_vintage(run->store, &run->vintage, error);
     if (!status)
-        status = sl_inventory_read(inventory, &sink, error);
+        status = sl_inventory_read(inventory, &run->tables.vocabularies, &sink,
+                                   error);
     if (!status)
         status = keep_sums(run, inventory, error);
     sl_progress_end();

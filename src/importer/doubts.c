@@ -1,0 +1,62 @@
+#include "importer/doubts.h"
+
+#include "model/vocabulary.h"
+
+static const struct sl_doubt record_low_over_cut_out = {
+    "level-order", "record_low_level",
+    "the lowest source level on record is above the cut-out level",
+    "check both levels and their units"};
+static const struct sl_doubt cut_out_over_normal = {
+    "level-order", "cut_out_level",
+    "the cut-out level is above the usual source level",
+    "check both levels and their units"};
+static const struct sl_doubt record_low_over_normal = {
+    "level-order", "record_low_level",
+    "the lowest source level on record is above the usual one",
+    "check both levels and their units"};
+static const struct sl_doubt retired_in_service = {
+    "retired-in-service", "year_retired",
+    "a year of retirement is given, but the station is in service",
+    "write no in in_service, or leave the year empty"};
+static const struct sl_doubt head_without_flow = {
+    "head-without-flow", "rated_head",
+    "a rated head is given without the rated flow it belongs to",
+    "fill in the rated flow"};
+
+static bool above(struct sl_number a, struct sl_number b)
+{
+    return a.known && b.known && a.value > b.value;
+}
+
+static size_t station_doubts(const struct sl_station *station,
+                             struct sl_doubt *doubts)
+{
+    size_t count = 0;
+
+    if (above(station->record_low_level, station->cut_out_level))
+        doubts[count++] = record_low_over_cut_out;
+    if (above(station->cut_out_level, station->normal_level))
+        doubts[count++] = cut_out_over_normal;
+    if (!station->cut_out_level.known &&
+        above(station->record_low_level, station->normal_level))
+        doubts[count++] = record_low_over_normal;
+    if (station->year_retired.known && station->in_service != SL_NO)
+        doubts[count++] = retired_in_service;
+    return count;
+}
+
+size_t sl_doubts_find(enum sl_kind kind, const void *record,
+                      struct sl_doubt doubts[SL_DOUBTS_MOST])
+{
+    if (kind == SL_KIND_STATION)
+        return station_doubts(record, doubts);
+    if (kind == SL_KIND_PUMP) {
+        const struct sl_pump *pump = record;
+
+        if (pump->rated_head.known && !pump->rated_flow.known) {
+            doubts[0] = head_without_flow;
+            return 1;
+        }
+    }
+    return 0;
+}
