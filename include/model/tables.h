@@ -3,7 +3,7 @@
  *
  * Trust: 'S' read in the named source, 'C' computed from a named formula,
  * 'M' from memory and shown so, 'P' a proposal of ours without an outside
- * authority. */
+ * authority, 'N' common practice without a source. */
 #ifndef SL_MODEL_TABLES_H
 #define SL_MODEL_TABLES_H
 

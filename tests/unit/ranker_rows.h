@@ -147,7 +147,7 @@ static inline struct sl_summary summary_of(const struct sl_condition *condition)
         .stations_by_state = {2, 3, 4, 6},
         .pumps_by_state = {5, 7, 9, 24},
         .stations_without_pumps = 1,
-        .rule = {.rule = "fixed head", .floor = 1.5, .trust = 'P'},
+        .rule = {.rule = "fixed head", .floor = 1.5, .trust = 'N'},
         .conditions = condition,
         .condition_count = condition ? 1 : 0,
     };

@@ -1,0 +1,133 @@
+#include "ranker/cells.h"
+
+#include <math.h>
+#include <string.h>
+
+#include "base/text.h"
+#include "ranker/digits.h"
+
+static void write_quoted(FILE *stream, const char *text)
+{
+    fputc('"', stream);
+    for (; *text != '\0'; text++) {
+        if (*text == '"')
+            fputc('"', stream);
+        fputc(*text, stream);
+    }
+    fputc('"', stream);
+}
+
+static void write_plain_or_quoted(FILE *stream, const char *text)
+{
+    if (strpbrk(text, ",\"\r\n"))
+        write_quoted(stream, text);
+    else
+        fputs(text, stream);
+}
+
+static void begin_cell(struct sl_cells *cells)
+{
+    if (cells->begun)
+        fputc(',', cells->stream);
+    cells->begun = true;
+}
+
+/* Begin the cell; true when its name was all there is to write. */
+static bool named(struct sl_cells *cells, const char *name, const char *suffix)
+{
+    begin_cell(cells);
+    if (!cells->naming)
+        return false;
+    fputs(name, cells->stream);
+    if (suffix[0] != '\0') {
+        fputc('_', cells->stream);
+        fputs(suffix, cells->stream);
+    }
+    return true;
+}
+
+static bool reads_as_formula(const char *text)
+{
+    return text[0] != '\0' && strchr("=+-@\t\r", text[0]) != NULL;
+}
+
+void sl_cell_text(struct sl_cells *cells, const char *name, const char *text)
+{
+    struct sl_text safe = {0};
+
+    if (named(cells, name, "") || !text)
+        return;
+    if (reads_as_formula(text))
+        sl_text_add_string(&safe, "'");
+    sl_text_add_string(&safe, text);
+    write_plain_or_quoted(cells->stream, sl_text_string(&safe));
+    sl_text_release(&safe);
+}
+
+static void write_decimal(FILE *stream, double value, int decimals)
+{
+    struct sl_text digits = {0};
+
+    if (!isfinite(value))
+        return;
+    sl_digits_add(&digits, &sl_digits_machine, value, decimals);
+    fputs(digits.bytes, stream);
+    sl_text_release(&digits);
+}
+
+/* What a pump can tell apart, and no digit that only looks like knowledge:
+ * millimetres of head, hundredths of a litre, tenths of a degree. */
+static void write_quantity(FILE *stream, enum sl_quantity quantity,
+                           double value)
+{
+    static const int decimals[] = {
+        [SL_LENGTH] = 3,      [SL_BORE] = 3,  [SL_FLOW] = 2,  [SL_PRESSURE] = 2,
+        [SL_TEMPERATURE] = 1, [SL_SPEED] = 1, [SL_POWER] = 2, [SL_VELOCITY] = 3,
+    };
+
+    if (quantity != SL_PURE)
+        write_decimal(stream, value, decimals[quantity]);
+    else if (isfinite(value))
+        fprintf(stream, "%.6g", value == 0 ? 0.0 : value);
+}
+
+void sl_cell_number(struct sl_cells *cells, const char *name,
+                    enum sl_quantity quantity, double si)
+{
+    const struct sl_unit *unit = sl_unit_shown(quantity, cells->units);
+
+    if (!named(cells, name, unit->suffix))
+        write_quantity(cells->stream, quantity, sl_from_si(unit, si));
+}
+
+void sl_cell_value(struct sl_cells *cells, const char *name,
+                   enum sl_quantity quantity, double si)
+{
+    if (!named(cells, name, ""))
+        write_quantity(cells->stream, quantity,
+                       sl_shown(quantity, cells->units, si));
+}
+
+void sl_cell_decimal(struct sl_cells *cells, const char *name, double value,
+                     int decimals)
+{
+    if (!named(cells, name, ""))
+        write_decimal(cells->stream, value, decimals);
+}
+
+void sl_cell_count(struct sl_cells *cells, const char *name, long long count)
+{
+    if (!named(cells, name, ""))
+        fprintf(cells->stream, "%lld", count);
+}
+
+void sl_cell_yes_no(struct sl_cells *cells, const char *name, bool yes)
+{
+    sl_cell_text(cells, name, yes ? "yes" : "no");
+}
+
+void sl_cells_end(struct sl_cells *cells)
+{
+    fputs("\r\n", cells->stream);
+    cells->begun = false;
+}

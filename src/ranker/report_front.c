@@ -1,0 +1,242 @@
+/* The first screen: what was found, what to do, how it was judged. */
+#include "ranker/page.h"
+
+#include "ranker/words.h"
+
+/* Enough of the hash to tell two inventories apart by eye. */
+#define HASH_SHOWN 12
+
+static long long stations_in_all(const struct sl_summary *summary)
+{
+    long long all = 0;
+
+    for (int state = 0; state < SL_STATE_COUNT; state++)
+        all += summary->stations_by_state[state];
+    return all;
+}
+
+static long long at_risk(const struct sl_summary *summary)
+{
+    return summary->stations_by_state[SL_SHORT] +
+           summary->stations_by_state[SL_THIN];
+}
+
+/* "7 of 212 stations are at risk: 3 short, 4 thin." */
+static void write_finding(const struct sl_report *report)
+{
+    const struct sl_summary *summary = report->summary;
+    long long risky = at_risk(summary);
+
+    sl_markup(report->stream, "<p class=\"finding\">");
+    if (stations_in_all(summary) == 0) {
+        sl_markup(report->stream, "No station was audited.</p>\n");
+        return;
+    }
+    if (risky == 0)
+        sl_markup(report->stream, "None");
+    else
+        sl_markup_count(report->stream, risky);
+    sl_markup(report->stream, " of ");
+    sl_page_counted(report, stations_in_all(summary), "station", "stations");
+    sl_markup(report->stream, risky == 1 ? " is" : " are");
+    sl_markup(report->stream, " at risk of cavitation under the conditions "
+                              "audited.");
+    if (summary->stations_by_state[SL_UNPROVEN] > 0) {
+        sl_markup(report->stream, " What is on record does not settle ");
+        sl_markup_count(report->stream,
+                        summary->stations_by_state[SL_UNPROVEN]);
+        sl_markup(report->stream, " more.");
+    }
+    sl_markup(report->stream, "</p>\n");
+}
+
+static void write_tile(const struct sl_report *report, enum sl_state state)
+{
+    static const char *const opening[SL_STATE_COUNT] = {
+        [SL_SHORT] = "<li class=\"tile short\">",
+        [SL_THIN] = "<li class=\"tile thin\">",
+        [SL_UNPROVEN] = "<li class=\"tile unproven\">",
+        [SL_CLEAR] = "<li class=\"tile clear\">",
+    };
+    long long count = report->summary->stations_by_state[state];
+
+    sl_markup(report->stream, opening[state]);
+    sl_markup(report->stream, "<p class=\"count\"><b>");
+    sl_markup_count(report->stream, count);
+    sl_markup(report->stream, count == 1 ? "</b> station " : "</b> stations ");
+    sl_page_state(report, state);
+    sl_markup(report->stream, "</p><p>");
+    sl_page_text(report, sl_words_state(state));
+    sl_markup(report->stream, "</p></li>\n");
+}
+
+static void write_tiles(const struct sl_report *report)
+{
+    sl_markup(report->stream, "<ul class=\"tiles\" aria-label=\"Stations by "
+                              "state\">\n");
+    write_tile(report, SL_SHORT);
+    write_tile(report, SL_THIN);
+    write_tile(report, SL_UNPROVEN);
+    write_tile(report, SL_CLEAR);
+    sl_markup(report->stream, "</ul>\n");
+}
+
+static void write_next_steps(const struct sl_report *report)
+{
+    const struct sl_summary *summary = report->summary;
+
+    sl_markup(report->stream, "<section aria-labelledby=\"next-head\">\n"
+                              "<h2 id=\"next-head\">What to do next</h2>\n"
+                              "<ol>\n");
+    if (at_risk(summary) > 0)
+        sl_markup(report->stream,
+                  "<li>Start at the top of <a href=\"#at-risk\">Stations at "
+                  "risk</a>: worst first, each with its reason and its next "
+                  "step.</li>\n");
+    if (summary->stations_by_state[SL_UNPROVEN] > 0)
+        sl_markup(report->stream,
+                  "<li>Plan surveys from <a href=\"#find-out\">Find out "
+                  "first</a>: one fact for each station that the records do "
+                  "not settle.</li>\n");
+    sl_markup(report->stream,
+              "<li>Mend the records under <a href=\"#records\">Records</a> "
+              "that were set aside, and audit again.</li>\n"
+              "<li>Before a set point or a machine is changed: the "
+              "maker&#39;s curve for it, the local code, and a licensed "
+              "engineer.</li>\n</ol>\n</section>\n");
+}
+
+static void write_conditions(const struct sl_report *report)
+{
+    const struct sl_summary *summary = report->summary;
+
+    sl_markup(report->stream, "<dt>Conditions</dt>\n");
+    for (size_t i = 0; i < summary->condition_count; i++) {
+        struct sl_text words = {0};
+
+        sl_words_condition(&summary->conditions[i], &words);
+        sl_markup(report->stream, "<dd><b>");
+        sl_page_name(report, summary->conditions[i].condition);
+        sl_markup(report->stream, "</b>: ");
+        sl_page_say(report, &words);
+        sl_markup(report->stream, "</dd>\n");
+    }
+    if (summary->condition_count == 0)
+        sl_markup(report->stream, "<dd>none</dd>\n");
+}
+
+static void write_rule(const struct sl_report *report)
+{
+    const struct sl_margin_rule *rule = &report->summary->rule;
+    struct sl_text words = {0};
+
+    sl_words_rule(rule, report->units, &words);
+    sl_markup(report->stream, "<dt>Margin rule</dt>\n<dd><b>");
+    sl_page_name(report, rule->rule);
+    sl_markup(report->stream, "</b>");
+    if (rule->edition && rule->edition[0] != '\0') {
+        sl_markup(report->stream, ", ");
+        sl_page_name(report, rule->edition);
+    }
+    sl_markup(report->stream, ": ");
+    sl_page_say(report, &words);
+    sl_markup(report->stream, " (");
+    sl_page_text(report, sl_words_trust(rule->trust));
+    sl_markup(report->stream, ")</dd>\n");
+}
+
+static void write_hash(const struct sl_report *report)
+{
+    const char *hash = report->summary->inventory_sha256;
+    struct sl_text first = {0};
+
+    for (size_t i = 0; hash && hash[i] != '\0' && i < HASH_SHOWN; i++)
+        sl_text_add(&first, &hash[i], 1);
+    sl_markup(report->stream, "<code title=\"SHA-256 ");
+    sl_markup_attribute(report->stream, hash);
+    sl_markup(report->stream, "\">");
+    sl_page_say(report, &first);
+    sl_markup(report->stream, "</code>");
+}
+
+static void write_origin(const struct sl_report *report)
+{
+    const struct sl_summary *summary = report->summary;
+
+    sl_markup(report->stream, "<dt>Inventory</dt>\n<dd><b>");
+    sl_page_name(report, summary->label);
+    sl_markup(report->stream, "</b>, content ");
+    write_hash(report);
+    sl_markup(report->stream, "</dd>\n<dt>Program</dt>\n<dd>summerlow ");
+    sl_page_text(report, summary->version);
+    sl_markup(report->stream, "</dd>\n");
+}
+
+static void write_records_read(const struct sl_report *report)
+{
+    long long read = 0, kept = 0, rejected = 0, out_of_scope = 0;
+
+    for (int kind = 0; kind < SL_KIND_COUNT; kind++) {
+        read += report->summary->sums[kind].read;
+        kept += report->summary->sums[kind].kept;
+        rejected += report->summary->sums[kind].rejected;
+        out_of_scope += report->summary->sums[kind].out_of_scope;
+    }
+    sl_markup(report->stream, "<dt>Records</dt>\n<dd>");
+    sl_markup_count(report->stream, read);
+    sl_markup(report->stream, " read = ");
+    sl_markup_count(report->stream, kept);
+    sl_markup(report->stream, " kept + ");
+    sl_markup_count(report->stream, rejected);
+    sl_markup(report->stream, " rejected + ");
+    sl_markup_count(report->stream, out_of_scope);
+    sl_markup(report->stream, " out of scope (<a href=\"#records\">file by "
+                              "file</a>)</dd>\n");
+    if (report->summary->stations_without_pumps > 0) {
+        sl_markup(report->stream, "<dd>");
+        sl_page_counted(report, report->summary->stations_without_pumps,
+                        "station has no pump on record",
+                        "stations have no pump on record");
+        sl_markup(report->stream, "</dd>\n");
+    }
+}
+
+static void write_judgement(const struct sl_report *report)
+{
+    sl_markup(report->stream,
+              "<section aria-labelledby=\"judged-head\">\n"
+              "<h2 id=\"judged-head\">How it was judged</h2>\n<dl>\n");
+    write_conditions(report);
+    write_rule(report);
+    write_origin(report);
+    write_records_read(report);
+    sl_markup(report->stream, "</dl>\n</section>\n");
+}
+
+static void write_cautions(const struct sl_report *report)
+{
+    sl_markup(
+        report->stream,
+        "<section class=\"cautions\" aria-labelledby=\"cautions-head\">\n"
+        "<h2 id=\"cautions-head\">Before you act on this</h2>\n<ul>\n"
+        "<li>This is screening, not design. The maker&#39;s curves, local "
+        "codes and a licensed engineer decide.</li>\n"
+        "<li>Site surveys meet confined spaces and energised equipment: "
+        "qualified crews, under the owner&#39;s permits only.</li>\n"
+        "<li>NPSHA that just equals NPSHR is not safe: NPSHR is NPSH3, where "
+        "3&nbsp;% of the head is already lost to cavitation.</li>\n"
+        "<li>What is not known is shown as unknown, and every value assumed "
+        "is <a href=\"#defaults\">listed</a>.</li>\n"
+        "</ul>\n</section>\n");
+}
+
+void sl_page_front(const struct sl_report *report)
+{
+    write_finding(report);
+    write_tiles(report);
+    sl_markup(report->stream, "<div class=\"front\">\n");
+    write_next_steps(report);
+    write_judgement(report);
+    write_cautions(report);
+    sl_markup(report->stream, "</div>\n");
+}
