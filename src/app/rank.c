@@ -240,6 +240,6 @@ enum sl_status sl_run_rank(struct sl_run *run, const char *folder,
     }
     puts("Files written:");
     for (size_t i = 0; i < sizeof outputs / sizeof outputs[0]; i++)
-        printf("  %s/%-20s %s\n", folder, outputs[i].name, outputs[i].holds);
+        printf("  %s/%s: %s\n", folder, outputs[i].name, outputs[i].holds);
     return SL_OK;
 }

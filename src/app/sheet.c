@@ -18,7 +18,8 @@ static const char *figure(const struct sl_sheet *sheet,
     }
     if (fabs(shown) < 0.5 * pow(10, -decimals))
         shown = 0; /* no "-0.00" */
-    snprintf(room, 48, "%.*f %s", decimals, shown,
+    snprintf(room, 48, "%.*f%s%s", decimals, shown,
+             quantity == SL_PURE ? "" : " ",
              sl_unit_shown(quantity, sheet->units)->label);
     return room;
 }

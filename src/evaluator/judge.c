@@ -155,7 +155,8 @@ static void reason_unproven(const struct sl_pump_result *result,
         sl_text_add_string(text, "running alone it leaves the published end "
                                  "of its NPSHR curve");
     else if (leading && isnan(leading->value.adverse) && leading->rule[0])
-        sl_text_addf(text, "%s", leading->rule);
+        sl_text_addf(text, "%s: %s", sl_input_words(leading->id),
+                     leading->rule);
     else if (notes[SL_ADVERSE].off_curve)
         sl_text_add_string(text, "at the adverse end of what is assumed it "
                                  "leaves the published end of its NPSHR "

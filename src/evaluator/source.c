@@ -15,6 +15,19 @@ static const char *service_word(const struct sl_plan *plan)
                    plan->dossier->record.service);
 }
 
+/* A level but no gauge pressure on record speaks of a free surface, where
+ * closed tanks are not met: pits, intakes and vented clear wells. */
+static bool open_by_records(const struct sl_station *station)
+{
+    bool level = station->cut_out_level.known ||
+                 station->record_low_level.known || station->normal_level.known;
+    bool gauge = station->source_pressure_low.known ||
+                 station->source_pressure_normal.known;
+
+    return level && !gauge && station->service != 0 &&
+           station->service != SL_INDUSTRIAL;
+}
+
 static void source_kind(struct sl_plan *plan)
 {
     const struct sl_station *station = &plan->dossier->record;
@@ -33,6 +46,11 @@ static void source_kind(struct sl_plan *plan)
         plan->source_kind = SL_OPEN;
         sl_plan_set(plan, SL_IN_SOURCE_KIND, SL_DERIVED, sl_exactly(SL_OPEN),
                     "a wet pit is open to the air");
+    } else if (open_by_records(station)) {
+        plan->source_kind = SL_OPEN;
+        sl_plan_set(plan, SL_IN_SOURCE_KIND, SL_DERIVED, sl_exactly(SL_OPEN),
+                    "a level and no gauge pressure are recorded: open to "
+                    "the air");
     } else {
         plan->source_kind = SL_OPEN;
         sl_plan_set(plan, SL_IN_SOURCE_KIND, SL_UNKNOWN,
