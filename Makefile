@@ -40,6 +40,8 @@ SQL := $(wildcard sql/*/*.sql)
 
 TEST_SOURCES := $(wildcard tests/unit/*_test.c)
 TESTS := $(TEST_SOURCES:tests/unit/%.c=$(OUT)/tests/%)
+FUZZERS := $(OUT)/tests/importer_fuzz
+FUZZ_CORPUS := $(wildcard tests/importer/*/*.csv)
 
 # What Debian calls the things we need.
 NEEDED_TO_BUILD := gcc libc6-dev libsqlite3-dev libcsv-dev libmd-dev
@@ -99,32 +101,37 @@ needed-to-test:
 # --- building --------------------------------------------------------------
 
 $(OUT)/summerlow: $(OBJECTS)
-	$(CC) $(LINKING) -o $@ $^ $(LIBRARIES)
+	@echo "ld $@"
+	@$(CC) $(LINKING) -o $@ $^ $(LIBRARIES)
 
 $(OUT)/%.o: %.c | $(CATALOGUE) $(STYLE)
 	@mkdir -p $(@D)
-	$(CC) $(CPPFLAGS) $(CFLAGS) -MMD -MP -c -o $@ $<
+	@echo "cc $<"
+	@$(CC) $(CPPFLAGS) $(CFLAGS) -MMD -MP -c -o $@ $<
 
 $(OUT)/catalogue.o: $(CATALOGUE)
 	@mkdir -p $(@D)
-	$(CC) $(CPPFLAGS) $(CFLAGS) -Wno-overlength-strings -MMD -MP -c -o $@ $<
+	@$(CC) $(CPPFLAGS) $(CFLAGS) -Wno-overlength-strings -MMD -MP -c -o $@ $<
 
 $(CATALOGUE): $(SQL) src/store/embed.sh
-	sh src/store/embed.sh $(@D)
+	@sh src/store/embed.sh $(GENERATED)
 
 $(STYLE): src/ranker/report.css src/ranker/embed.sh
-	sh src/ranker/embed.sh $(@D)
+	@sh src/ranker/embed.sh $(@D)
 
 # --- testing ---------------------------------------------------------------
 
+.SECONDARY:
 $(OUT)/tests/%: $(OUT)/tests/unit/%.o $(LIBRARY_OBJECTS)
-	$(CC) $(LINKING) -o $@ $^ $(LIBRARIES) -lcmocka
+	@echo "ld $@"
+	@$(CC) $(LINKING) -o $@ $^ $(LIBRARIES) -lcmocka
 
 check: $(OUT)/summerlow ## the walls, headers, keys and texts
 	@for script in tests/checks/*.sh; do sh $$script || exit 1; done
 
-unit: $(TESTS) ## the unit and reference tests
+unit: $(TESTS) $(FUZZERS) ## the unit and reference tests
 	@for test in $(TESTS); do echo "== $$test"; $$test || exit 1; done
+	$(OUT)/tests/importer_fuzz $(FUZZ_CORPUS)
 
 cli: $(OUT)/summerlow ## the command-line cases
 	@sh tests/cli/run.sh $(OUT)/summerlow
@@ -148,4 +155,5 @@ tidy: ## format the code
 clean: ## remove what was built
 	rm -rf build
 
--include $(OBJECTS:.o=.d) $(TESTS:$(OUT)/tests/%=$(OUT)/tests/unit/%.d)
+-include $(OBJECTS:.o=.d) \
+    $(patsubst $(OUT)/tests/%,$(OUT)/tests/unit/%.d,$(TESTS) $(FUZZERS))

@@ -70,6 +70,19 @@ static bool show_this_code(struct intake *intake, const char *code)
     return intake->shown_of[i]++ < SHOWN_OF_A_CODE;
 }
 
+/* The most bytes of a cell that are shown. */
+#define SHOWN_OF_A_CELL 80
+
+/* How much of a value is shown: whole characters of it. */
+static int shown_length(const char *value)
+{
+    size_t length = strlen(value);
+
+    if (length > SHOWN_OF_A_CELL)
+        length = sl_utf8_valid_length(value, SHOWN_OF_A_CELL);
+    return (int)length;
+}
+
 /* file:line: column "value": reason; remedy */
 static void show(const struct sl_finding *finding)
 {
@@ -81,7 +94,11 @@ static void show(const struct sl_finding *finding)
         sl_text_addf(&text, ":%ld", finding->line);
     sl_text_add_string(&text, ": ");
     if (finding->column[0])
-        sl_text_addf(&text, "%s \"%.80s\": ", finding->column, finding->value);
+        sl_text_addf(&text, "%s%s", finding->column,
+                     finding->value[0] ? " " : ": ");
+    if (finding->value[0])
+        sl_text_addf(&text, "\"%.*s\": ", shown_length(finding->value),
+                     finding->value);
     sl_text_addf(&text, "%s", finding->reason);
     if (finding->remedy[0])
         sl_text_addf(&text, "; %s", finding->remedy);

@@ -208,6 +208,8 @@ static void site_elevation(struct sl_plan *plan)
 
     if (!hint->known)
         hint = lower(&station->cut_out_level, &station->record_low_level);
+    if (!hint->known)
+        hint = &station->source_pressure_elevation;
     if (station->site_elevation.known) {
         sl_plan_record(plan, SL_IN_SITE_ELEVATION, &station->site_elevation,
                        SL_KIND_STATION, station->line, "");
@@ -216,8 +218,8 @@ static void site_elevation(struct sl_plan *plan)
     value.typical = sl_recorded(hint);
     sl_plan_set(plan, SL_IN_SITE_ELEVATION,
                 hint->known ? SL_DERIVED : SL_UNKNOWN, value,
-                hint->known ? "a source level stands in, if levels are "
-                              "heights above sea level"
+                hint->known ? "not recorded; a level stands in, if levels "
+                              "are heights above sea level"
                             : "not recorded");
 }
 

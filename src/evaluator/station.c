@@ -141,7 +141,8 @@ void sl_evaluate_station(const struct sl_dossier *dossier,
                                    .state = SL_UNPROVEN};
     result->conditions = sl_arena_new(arena, tables->condition_count,
                                       sizeof *result->conditions);
-    for (size_t c = 0; c < tables->condition_count; c++) {
+    /* The harshest is listed last: of equals it is the one to show. */
+    for (size_t c = tables->condition_count; c-- > 0;) {
         struct sl_condition_result *condition = &result->conditions[c];
 
         evaluate_condition(dossier, &tables->conditions[c], tables, rule, arena,

@@ -143,8 +143,7 @@ static void measures(struct sl_plan *plan)
     }
     if (!all_bores)
         stand_in(plan, SL_IN_SUCTION_BORE,
-                 "a suction pipe's bore is not recorded; the default suction "
-                 "loss stands in");
+                 "not recorded; the default suction loss stands in");
     else
         measure(plan, SL_IN_SUCTION_BORE, bore,
                 "the narrowest pipe of the path");
@@ -153,8 +152,7 @@ static void measures(struct sl_plan *plan)
                 "all pipes of the path together");
     else if (all_bores)
         stand_in(plan, SL_IN_SUCTION_LENGTH,
-                 "a suction pipe's length is not recorded; the default "
-                 "suction loss stands in");
+                 "not recorded; the default suction loss stands in");
 }
 
 static void surfaces(struct sl_plan *plan)
