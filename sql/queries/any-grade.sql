@@ -1,0 +1,2 @@
+-- Whether a vintage has any grade.
+SELECT EXISTS (SELECT 1 FROM grades WHERE vintage = :vintage) AS graded;

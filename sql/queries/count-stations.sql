@@ -1,0 +1,4 @@
+-- How many stations a vintage has.
+SELECT count(*) AS stations
+FROM stations
+WHERE vintage = :vintage;

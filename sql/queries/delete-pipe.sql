@@ -1,0 +1,2 @@
+-- Take a suction pipe back.
+DELETE FROM suction_pipes WHERE pipe = :pipe;
