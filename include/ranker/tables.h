@@ -1,7 +1,8 @@
 /* The ranked results as CSV: RFC 4180 with CRLF, UTF-8, one head row with
  * units in the names, numbers with a point and no grouping, empty where
  * unknown.  A text cell that a spreadsheet would take for a formula gets an
- * apostrophe before it; numbers never do.
+ * apostrophe before it; numbers never do.  Control characters but line ends
+ * and tabs are shown as their pictures, not sent.
  *
  * Each table is a head, then rows in the order given.  Writing errors latch
  * in the stream and are reported when the file is committed. */

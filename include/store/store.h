@@ -1,12 +1,11 @@
 /* The store: one SQLite file that holds every vintage of the inventory as
  * it was recorded (facts) and every evaluation of one (derived).
  *
- * Opening for writing creates the file where there is none, and brings an
- * older one up to date; a newer one, and a file that is no store of ours,
- * are refused untouched.  All writing happens between begin and commit; a
- * store that is closed, killed or out of disk before the commit is as it
- * was.  Errors of SQLite come as SL_STORE with its words, and the SQL when
- * it is our bug. */
+ * Opening for writing brings an older one up to date; a newer one, and a file
+ * that is no store of ours, are refused untouched.  All writing happens between
+ * begin and commit; a store that is closed, killed or out of disk before the
+ * commit is as it was.  Errors of SQLite come as SL_STORE with its words, and
+ * the SQL when it is our bug. */
 #ifndef SL_STORE_STORE_H
 #define SL_STORE_STORE_H
 
@@ -18,7 +17,11 @@
 
 struct sl_store;
 
-enum sl_store_mode { SL_STORE_READ, SL_STORE_WRITE };
+enum sl_store_mode {
+    SL_STORE_READ,
+    SL_STORE_WRITE, /* one that is there */
+    SL_STORE_CREATE /* likewise, or a new one where there is none */
+};
 
 enum sl_status sl_store_open(const char *path, enum sl_store_mode mode,
                              struct sl_store **store, struct sl_error *error);

@@ -43,7 +43,7 @@ enum sl_status sl_command_import(struct sl_run *run, struct sl_error *error)
     if (status)
         goto done;
     status = sl_run_open(run, options->dry_run ? ":memory:" : options->store,
-                         SL_STORE_WRITE, error);
+                         SL_STORE_CREATE, error);
     if (status)
         goto done;
     status = import_and_maybe_evaluate(run, inventory, false, error);
@@ -109,7 +109,7 @@ enum sl_status sl_command_audit(struct sl_run *run, struct sl_error *error)
         sl_text_add_string(&path, options->store);
     else
         sl_text_addf(&path, "%s/summerlow.db", options->out);
-    status = sl_run_open(run, path.bytes, SL_STORE_WRITE, error);
+    status = sl_run_open(run, path.bytes, SL_STORE_CREATE, error);
     if (!status)
         status = import_and_maybe_evaluate(run, inventory, true, error);
     if (!status)

@@ -59,6 +59,15 @@ static enum sl_status print_worst(void *context,
     return SL_OK;
 }
 
+static long long count_stations(const struct sl_summary *summary)
+{
+    long long count = 0;
+
+    for (int state = 0; state < SL_STATE_COUNT; state++)
+        count += summary->stations_by_state[state];
+    return count;
+}
+
 enum sl_status sl_print_states(struct sl_run *run, struct sl_error *error)
 {
     struct worst worst = {.units = run->options->units};
@@ -68,6 +77,10 @@ enum sl_status sl_print_states(struct sl_run *run, struct sl_error *error)
 
     if (status)
         return status;
+    if (count_stations(&summary) == 0) {
+        puts("No station was kept: there is nothing to judge.");
+        return SL_OK;
+    }
     puts("Stations by state (each by its worst pump and condition):");
     for (int state = 0; state < SL_STATE_COUNT; state++)
         printf("  %-9s %6lld\n", sl_state_name((enum sl_state)state),

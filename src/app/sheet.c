@@ -161,11 +161,20 @@ static void pipes(const struct sl_sheet *sheet,
         pipe_line(sheet, &pump->losses[i]);
 }
 
+/* A bore that is recorded is shown as a bore; one that is not has a suction
+ * loss standing in, which is a head. */
+static enum sl_quantity quantity_of(const struct sl_input *input)
+{
+    if (input->id == SL_IN_SUCTION_BORE && input->provenance == SL_RECORDED)
+        return SL_BORE;
+    return sl_input_quantity(input->id);
+}
+
 /* "2.40 m" or "2.40 m (1.10 to 3.00)", and where it comes from. */
 static void input_line(const struct sl_sheet *sheet,
                        const struct sl_input *input)
 {
-    enum sl_quantity quantity = sl_input_quantity(input->id);
+    enum sl_quantity quantity = quantity_of(input);
     int decimals = decimals_of(quantity);
     char typical[48], adverse[48], favourable[48];
     FILE *stream = sheet->stream;

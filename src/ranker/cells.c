@@ -6,13 +6,27 @@
 #include "base/text.h"
 #include "ranker/digits.h"
 
+/* A control character that a terminal would obey is shown as its picture
+ * (U+2400 on); line ends and tabs are text. */
+static void write_character(FILE *stream, char character)
+{
+    unsigned char code = (unsigned char)character;
+
+    if ((code >= 0x20 && code != 0x7F) || strchr("\t\r\n", character)) {
+        fputc(character, stream);
+        return;
+    }
+    fputs("\xE2\x90", stream);
+    fputc(code == 0x7F ? 0xA1 : 0x80 + code, stream);
+}
+
 static void write_quoted(FILE *stream, const char *text)
 {
     fputc('"', stream);
     for (; *text != '\0'; text++) {
         if (*text == '"')
             fputc('"', stream);
-        fputc(*text, stream);
+        write_character(stream, *text);
     }
     fputc('"', stream);
 }
@@ -22,7 +36,8 @@ static void write_plain_or_quoted(FILE *stream, const char *text)
     if (strpbrk(text, ",\"\r\n"))
         write_quoted(stream, text);
     else
-        fputs(text, stream);
+        for (; *text != '\0'; text++)
+            write_character(stream, *text);
 }
 
 static void begin_cell(struct sl_cells *cells)

@@ -32,21 +32,26 @@ enum sl_status sl_store_open(const char *path, enum sl_store_mode mode,
                              struct sl_store **store, struct sl_error *error)
 {
     struct sl_store *opened = sl_new(1, sizeof *opened);
-    int flags = mode == SL_STORE_WRITE
-                    ? SQLITE_OPEN_READWRITE | SQLITE_OPEN_CREATE
-                    : SQLITE_OPEN_READONLY;
+    static const int flags_of[] = {
+        [SL_STORE_READ] = SQLITE_OPEN_READONLY,
+        [SL_STORE_WRITE] = SQLITE_OPEN_READWRITE,
+        [SL_STORE_CREATE] = SQLITE_OPEN_READWRITE | SQLITE_OPEN_CREATE,
+    };
     enum sl_status status = SL_OK;
 
     *store = NULL;
-    opened->writing = mode == SL_STORE_WRITE;
+    opened->writing = mode != SL_STORE_READ;
     opened->path = sl_new(strlen(path) + 1, 1);
     memcpy(opened->path, path, strlen(path));
     /* No mutex: a store is used by one thread at a time. */
-    if (sqlite3_open_v2(path, &opened->database, flags | SQLITE_OPEN_NOMUTEX,
+    if (sqlite3_open_v2(path, &opened->database,
+                        flags_of[mode] | SQLITE_OPEN_NOMUTEX,
                         NULL) != SQLITE_OK) {
-        status = sl_error_set(error, SL_STORE,
-                              "the store \"%s\" cannot be opened: %s", path,
-                              sqlite3_errmsg(opened->database));
+        status =
+            sl_error_set(error, SL_STORE,
+                         "the store \"%s\" cannot be opened: %s; check its "
+                         "name and who may read it",
+                         path, sqlite3_errmsg(opened->database));
         goto done;
     }
     status = configure(opened, error);

@@ -49,7 +49,7 @@ static void fresh_store_is_marked_ours(void **state)
 {
     struct fixture *f = *state;
 
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     assert_int_equal(file_says(f, "PRAGMA application_id"), 0x736C7731);
     assert_int_equal(file_says(f, "PRAGMA user_version"), 3);
     assert_int_equal(file_says(f, "SELECT count(*) FROM fitting_k"), 26);
@@ -65,9 +65,9 @@ static void opening_again_changes_no_byte(void **state)
     size_t before_length = 0, after_length = 0;
     char *before = NULL, *after = NULL;
 
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     before = bytes_of(f->path, &before_length);
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     open_and_close(f, SL_STORE_READ);
     after = bytes_of(f->path, &after_length);
     assert_int_equal(before_length, after_length);
@@ -92,9 +92,9 @@ static void newer_store_is_refused(void **state)
 {
     struct fixture *f = *state;
 
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     file_does(f, "PRAGMA user_version = 4");
-    assert_refused_untouched(f, SL_STORE_WRITE,
+    assert_refused_untouched(f, SL_STORE_CREATE,
                              "is of version 4, this program knows 3; use the "
                              "newer program");
     assert_refused_untouched(f, SL_STORE_READ, "use the newer program");
@@ -104,7 +104,7 @@ static void older_store_is_not_read(void **state)
 {
     struct fixture *f = *state;
 
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     file_does(f, "PRAGMA user_version = 2");
     assert_refused_untouched(f, SL_STORE_READ, "is of version 2");
 }
@@ -114,7 +114,7 @@ static void other_database_is_refused(void **state)
     struct fixture *f = *state;
 
     file_does(f, "CREATE TABLE theirs (a); INSERT INTO theirs VALUES (7)");
-    assert_refused_untouched(f, SL_STORE_WRITE, "is no store of this program");
+    assert_refused_untouched(f, SL_STORE_CREATE, "is no store of this program");
     assert_refused_untouched(f, SL_STORE_READ, "is no store of this program");
 }
 
@@ -127,7 +127,7 @@ static void no_database_is_refused(void **state)
     for (int i = 0; i < 200; i++)
         fputs("station_id,name\r\nS-17,\"Low ford\"\r\n", stream);
     fclose(stream);
-    assert_refused_untouched(f, SL_STORE_WRITE, "is no store of this program");
+    assert_refused_untouched(f, SL_STORE_CREATE, "is no store of this program");
     assert_refused_untouched(f, SL_STORE_READ, "is no store of this program");
 }
 
@@ -136,7 +136,7 @@ static void changed_views_are_made_anew(void **state)
     struct fixture *f = *state;
     struct sl_store *store = NULL;
 
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     file_does(f, "DROP VIEW station_order; DROP VIEW vintage_sums;"
                  "CREATE VIEW stale AS SELECT 1;"
                  "CREATE VIEW station_order AS SELECT 7 AS seven");
@@ -145,7 +145,7 @@ static void changed_views_are_made_anew(void **state)
     must(f, sl_store_prepare_all(store, &f->error));
     sl_store_close(store);
     assert_int_equal(file_says(f, "SELECT seven FROM station_order"), 7);
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     assert_int_equal(file_says(f, "SELECT count(*) FROM sqlite_schema WHERE "
                                   "type = 'view'"),
                      5);
@@ -210,7 +210,7 @@ static void columns_are_the_list_of_fields(void **state)
     struct fixture *f = *state;
     sqlite3 *database = NULL;
 
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     assert_int_equal(sqlite3_open(f->path, &database), SQLITE_OK);
     for (int kind = 0; kind < SL_KIND_COUNT; kind++)
         assert_columns(database, sl_record_kind((enum sl_kind)kind));
@@ -221,7 +221,7 @@ static void every_table_is_strict(void **state)
 {
     struct fixture *f = *state;
 
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     assert_int_equal(file_says(f, "SELECT count(*) FROM pragma_table_list "
                                   "WHERE schema = 'main' AND type = 'table' "
                                   "AND name NOT LIKE 'sqlite_%'"),
@@ -289,7 +289,7 @@ static void every_table_and_column_has_a_comment(void **state)
     sqlite3_stmt *asked = NULL;
     int tables = 0;
 
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     assert_int_equal(sqlite3_open(f->path, &database), SQLITE_OK);
     assert_int_equal(
         sqlite3_prepare_v2(database,
@@ -334,7 +334,7 @@ static void die_writing(struct fixture *f)
     char *raw = malloc(length);
 
     memset(raw, 'x', length);
-    if (sl_store_open(f->path, SL_STORE_WRITE, &f->store, &f->error) ||
+    if (sl_store_open(f->path, SL_STORE_CREATE, &f->store, &f->error) ||
         sl_store_begin(f->store, &f->error) ||
         sl_store_add_vintage(f->store, &next, &f->error))
         _exit(1);
@@ -366,7 +366,7 @@ static void a_killed_writer_leaves_the_old_state(void **state)
     assert_int_equal(ended, 0);
     snprintf(journal, sizeof journal, "%s-journal", f->path);
     assert_int_equal(access(journal, F_OK), 0);
-    must(f, sl_store_open(f->path, SL_STORE_WRITE, &store, &f->error));
+    must(f, sl_store_open(f->path, SL_STORE_CREATE, &store, &f->error));
     assert_int_equal(sl_store_count_stations(store, f->vintage), 1);
     assert_int_equal(sl_store_count_stations(store, f->vintage + 1), 0);
     sl_store_close(store);
@@ -380,7 +380,7 @@ static void a_second_writer_is_told_to_wait(void **state)
     struct fixture *f = *state;
     struct sl_store *second = NULL;
 
-    must(f, sl_store_open(f->path, SL_STORE_WRITE, &second, &f->error));
+    must(f, sl_store_open(f->path, SL_STORE_CREATE, &second, &f->error));
     assert_int_equal(sl_store_begin(second, &f->error), SL_STORE);
     assert_non_null(strstr(f->error.message, "in use by another program"));
     sl_store_close(second);
@@ -392,7 +392,7 @@ static void a_reading_store_cannot_be_written(void **state)
     struct sl_vintage vintage = {0, "2027", "decaf", "2027-07-01T12:00:00Z"};
     struct sl_store *store = NULL;
 
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     must(f, sl_store_open(f->path, SL_STORE_READ, &store, &f->error));
     assert_int_equal(sl_store_add_vintage(store, &vintage, &f->error),
                      SL_STORE);
@@ -475,7 +475,7 @@ static void the_schema_is_documented(void **state)
     int things = 0;
 
     text[length] = '\0';
-    open_and_close(f, SL_STORE_WRITE);
+    open_and_close(f, SL_STORE_CREATE);
     assert_int_equal(sqlite3_open(f->path, &database), SQLITE_OK);
     assert_int_equal(
         sqlite3_prepare_v2(database,
