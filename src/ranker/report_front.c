@@ -125,6 +125,17 @@ static void write_conditions(const struct sl_report *report)
         sl_markup(report->stream, "<dd>none</dd>\n");
 }
 
+/* What the flow stands for, so that nobody reads more into it. */
+static void write_running(const struct sl_report *report)
+{
+    sl_markup(report->stream,
+              "<dt>Running</dt>\n<dd>each pump alone on its station's system "
+              "(else at its recorded or rated flow); others that may run "
+              "with it are counted in the suction pipes they share, at their "
+              "largest flow. Sets of pumps running together are not solved "
+              "yet.</dd>\n");
+}
+
 static void write_rule(const struct sl_report *report)
 {
     const struct sl_margin_rule *rule = &report->summary->rule;
@@ -207,6 +218,7 @@ static void write_judgement(const struct sl_report *report)
               "<section aria-labelledby=\"judged-head\">\n"
               "<h2 id=\"judged-head\">How it was judged</h2>\n<dl>\n");
     write_conditions(report);
+    write_running(report);
     write_rule(report);
     write_origin(report);
     write_records_read(report);

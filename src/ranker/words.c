@@ -307,6 +307,17 @@ static const char *step_for(enum sl_taker_id id)
     return steps[id];
 }
 
+/* Controls can hold a pit's water higher; no control holds a river. */
+static const char *step_for_level(enum sl_source_basis basis)
+{
+    if (basis == SL_SOURCE_CUT_OUT)
+        return "confirm the eye's elevation and the lowest source level on "
+               "site; then look into a higher low-level cut-out";
+    return "confirm the eye's elevation and the lowest source level on site; "
+           "then look into stopping at a higher level, or less flow at low "
+           "water";
+}
+
 static void say_step_at_risk(const struct telling *telling)
 {
     struct sl_taker leading;
@@ -314,8 +325,7 @@ static void say_step_at_risk(const struct telling *telling)
         isfinite(telling->told->terms.npsha) && find_leading(telling, &leading);
 
     if (level_leads(telling, found ? &leading : NULL))
-        say(telling, "confirm the eye's elevation and the lowest source level "
-                     "on site; then look into a higher low-level cut-out");
+        say(telling, step_for_level(telling->row->source_basis));
     else if (found)
         say(telling, step_for(leading.id));
     else
