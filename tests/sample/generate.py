@@ -16,7 +16,12 @@ import os
 import random
 import sys
 
-SEED = 20260701
+SEED = 20260724  # one whose portfolio has all four states in fair number
+LAST_YEAR = 2025  # of works; the export is of summer 2026
+SHORTEST_MAIN_FT, LONGEST_MAIN_FT = 140, 24000
+# Sewage lifts whose mains were laid for all pumps: one alone runs out past
+# the end of its curve.
+RUN_OUT = (3, 9, 12, 15)
 G_FT = 32.174
 MOTORS = [3, 5, 7.5, 10, 15, 20, 25, 30, 40, 50, 60, 75, 100, 125, 150, 200,
           250, 300, 350, 400, 450, 500, 600, 700, 800, 900, 1000, 1250, 1500]
@@ -51,8 +56,8 @@ PUMP_COLUMNS = [
     "year_installed"]
 CURVE_COLUMNS = ["curve_id", "flow_gpm", "head_ft", "npshr_ft", "efficiency",
                  "speed_rpm"]
-PIPE_COLUMNS = ["pipe_id", "station_id", "draws_from", "length_ft",
-                "bore_in", "material", "lining", "condition",
+PIPE_COLUMNS = ["pipe_id", "station_id", "draws_from", "length_m",
+                "bore_mm", "material", "lining", "condition",
                 "year_installed", "roughness_mm", "hazen_williams_c"]
 FITTING_COLUMNS = ["pipe_id", "fitting", "count", "k"]
 
@@ -83,14 +88,15 @@ def round_to(value, step):
     return round(value / step) * step
 
 
-def machine(flow, head, wanted_s, stages=1):
-    """The speed that gives an ordinary specific speed, NPSHR with it."""
+def machine(flow, head, wanted_s, stages=1, eyes=1):
+    """The speed that gives an ordinary specific speed, NPSHR with it: the
+    suction specific speed is that of one eye, which takes its part."""
     for speed in (1780, 1180, 885, 705, 590, 505, 3560):
         specific = speed * math.sqrt(flow) / (head / stages) ** 0.75
-        npshr = (speed * math.sqrt(flow) / wanted_s) ** (4 / 3)
+        npshr = (speed * math.sqrt(flow / eyes) / wanted_s) ** (4 / 3)
         if 700 <= specific <= 4600 and 4 <= npshr <= 27:
             return speed, npshr
-    return 1180, (1180 * math.sqrt(flow) / wanted_s) ** (4 / 3)
+    return 1180, (1180 * math.sqrt(flow / eyes) / wanted_s) ** (4 / 3)
 
 
 def add_curve(board, flow, head, npshr, speed):
@@ -139,6 +145,17 @@ def discharge(board, station, low, flow, head, running, run_at, by_pipe):
     k = board.random.choice([4.5, 6, 8, 11])
     friction = max(loss - k * velocity ** 2 / (2 * G_FT), 0.2 * loss)
     length = friction * bore / 12 * 2 * G_FT / (0.0165 * velocity ** 2)
+    if length > LONGEST_MAIN_FT:
+        length = LONGEST_MAIN_FT * board.random.uniform(0.4, 1)
+        loss = (k + 0.0165 * length * 12 / bore) * velocity ** 2 / (2 * G_FT)
+        rise = board.random.uniform(1, 5)
+        station["discharge_low_ft"] = tidy(low + lifted - loss)
+        station["discharge_normal_ft"] = tidy(low + lifted - loss + rise)
+    if length < SHORTEST_MAIN_FT:
+        length = SHORTEST_MAIN_FT
+        loss = (k + 0.0165 * length * 12 / bore) * velocity ** 2 / (2 * G_FT)
+        station["discharge_low_ft"] = tidy(low + lifted - loss)
+        station["discharge_normal_ft"] = tidy(low + lifted - loss + 2.5)
     station.update({
         "discharge_length_ft": f"{round_to(length, 10):.0f}",
         "discharge_bore_in": str(bore), "discharge_minor_k": tidy(k),
@@ -151,7 +168,6 @@ def discharge(board, station, low, flow, head, running, run_at, by_pipe):
 def new_station(board, code, service, installation, elevation, **more):
     number = board.number()
     station = dict.fromkeys(STATION_COLUMNS, "")
-    people = int(round(10 ** board.random.uniform(2.6, 5.0), -2))
     station.update({
         "station_id": f"{code}-{number:03d}", "name": board.names.pop(),
         "gis_object_no": str(40000 + 37 * number), "service": service,
@@ -160,8 +176,6 @@ def new_station(board, code, service, installation, elevation, **more):
         "longitude": f"{-30.40 + board.random.random() * 1.1:.5f}",
         "site_elevation_ft": tidy(elevation),
         "installation": installation,
-        "people_served": str(people),
-        "outage_cost_per_day": str(round_to(people * 1.7, 500)),
         "days_to_restore": str(board.random.choice([2, 3, 5, 8, 14]))})
     hottest = {"wastewater": 79, "stormwater": 77, "potable": 70,
                "raw water": 76, "irrigation": 78, "industrial": 84}[service]
@@ -182,9 +196,25 @@ def levels(station, low, span, natural):
         station["record_low_level_ft"] = tidy(low - 0.4)
 
 
+def serve(board, station, gallons_a_day):
+    """Who depends on the station follows from what it moves."""
+    station["flow_served_mgd"] = tidy(gallons_a_day / 1e6, 2)
+    if station["service"] in ("irrigation", "industrial"):
+        station["outage_cost_per_day"] = str(
+            round_to(gallons_a_day / 1000 * 4.1, 500) or 500)
+        return
+    each = board.random.uniform(110, 190)
+    if station["service"] == "stormwater":
+        each = board.random.uniform(600, 1500)
+    people = max(100, round_to(gallons_a_day / each, 100))
+    station["people_served"] = f"{people:.0f}"
+    station["outage_cost_per_day"] = f"{max(500, round_to(people * 1.7, 500)):.0f}"
+
+
 def add_pumps(board, station, count, make_up, flow, head, s, eye, running,
               run_at, by_pipe, low, stages=1, curve=True, **more):
-    speed, npshr = machine(flow, head, s, stages)
+    speed, npshr = machine(flow, head, s, stages,
+                           2 if make_up == "split case" else 1)
     rated = {"rated_flow_gpm": f"{flow:.0f}", "rated_head_ft": tidy(head),
              "rated_npshr_ft": tidy(npshr), "rated_speed_rpm": str(speed),
              "bep_flow_gpm": f"{flow:.0f}"}
@@ -196,7 +226,7 @@ def add_pumps(board, station, count, make_up, flow, head, s, eye, running,
     discharge(board, station, low, flow, head, running, run_at, by_pipe)
     station["pumps_running_max"] = str(running)
     station["pumps_running_firm"] = str(max(1, count - 1))
-    station["flow_served_mgd"] = tidy(flow * running * 0.45 * 1440 / 1e6, 2)
+    serve(board, station, flow * running * 0.45 * 1440)
     year = board.random.randint(1974, 2021)
     made = []
     for place in range(1, count + 1):
@@ -209,22 +239,38 @@ def add_pumps(board, station, count, make_up, flow, head, s, eye, running,
             "datum_elevation_ft": tidy(eye), "stages": str(stages),
             "double_suction": "yes" if make_up == "split case" else "no",
             "motor_power_hp": tidy(min(m for m in MOTORS if m >= power)),
-            "year_installed": str(year + board.random.choice([0, 0, 0, 9]))})
+            "year_installed": str(min(year + board.random.choice([0, 0, 0, 9]),
+                                      LAST_YEAR))})
         pump.update(more)
         board.pumps.append(pump)
         made.append(pump)
     return made
 
 
+YEARS_LAID = {"good": 2001, "fair": 1983, "poor": 1958}
+
+
+def wall(pick, condition):
+    """What was laid then, and what became of it."""
+    return pick.choice({
+        "good": ["lined metal", "lined metal", "coated steel", "GRP",
+                 "PVC, ring joints"],
+        "fair": ["lined metal", "coated steel", "uncoated cast iron",
+                 "galvanised iron"],
+        "poor": ["uncoated cast iron", "rusty steel",
+                 "tuberculated main, slight", "tuberculated main, moderate"],
+    }[condition])
+
+
 def add_pipe(board, key, station, draws_from, length, bore, condition):
     pipe = dict.fromkeys(PIPE_COLUMNS, "")
     pipe.update({
         "pipe_id": key, "station_id": station["station_id"],
-        "draws_from": draws_from, "length_ft": tidy(length),
-        "bore_in": str(bore), "condition": condition,
-        "material": board.random.choice(
-            ["lined metal", "coated steel", "uncoated cast iron"]),
-        "year_installed": str(board.random.randint(1961, 2014))})
+        "draws_from": draws_from, "length_m": tidy(length * 0.3048),
+        "bore_mm": f"{bore * 25.4:.0f}", "condition": condition,
+        "material": wall(board.random, condition),
+        "year_installed": str(YEARS_LAID[condition] +
+                              board.random.randint(0, 16))})
     board.pipes.append(pipe)
     return pipe
 
@@ -288,13 +334,16 @@ def wet_pit(board, code, service, elevation, flow, head, count, s, drown,
 def dry_pit(board, code, service, elevation, flow, head, count, s, over,
             shared, make_up="end suction", run_at=1.0):
     """Pumps beside their water: drowned when `over` is positive."""
-    lift = over < 0
+    lift = over < -4  # nearer than that, the usual level drowns it
     natural = service in ("raw water", "irrigation")
     eye = elevation - (board.random.uniform(12, 26) if not lift else -2.5)
     low = eye + over
     station = new_station(board, code, service, "dry pit", elevation,
                           source_kind="open")
-    levels(station, low, board.random.uniform(3, 8), natural)
+    span = board.random.uniform(3, 8)
+    if lift:  # the water stays a foot or more under the bank
+        span = min(span, elevation - low - 1)
+    levels(station, low, span, natural)
     running = max(1, count - 1)
     pumps = add_pumps(board, station, count, make_up, flow, head, s, eye,
                       running, run_at, board.random.random() < 0.5, low)
@@ -347,15 +396,21 @@ def build(board):
                 round_to(10 ** pick.uniform(2.4, 3.7), 10),
                 pick.randint(24, 70), pick.choice([2, 2, 3, 3, 4]),
                 pick.uniform(7300, 9000), pick.uniform(0.6, 3.5),
-                run_at=pick.choice([0.95, 1.0, 1.05, 1.1, 1.36]))
+                run_at=max(pick.choice([0.95, 1.0, 1.05, 1.1, 1.36]),
+                           1.38 if i in RUN_OUT else 0))
     for i in range(14):  # intakes and clear wells
         raw = i % 2 == 0
         wet_pit(board, "RW" if raw else "PW",
                 "raw water" if raw else "potable",
-                pick.choice([60, 350, 2600, 4400, 5900, 6500]),
-                round_to(10 ** pick.uniform(2.9, 3.9), 10),
+                pick.choice([4400, 5900, 6500] if i % 3 != 2 else
+                            [60, 350, 2600, 4400]),
+                round_to(10 ** (pick.uniform(3.19, 3.30) if i % 3 != 2 else
+                                pick.uniform(2.9, 3.9)), 10),
                 pick.randint(70, 230), pick.choice([2, 3, 4, 5]),
-                pick.uniform(7000, 8800), pick.uniform(0.5, 6),
+                pick.uniform(7000, 7600) if i % 3 != 2 else
+                pick.uniform(7000, 8800),
+                pick.uniform(0.5, 1.5) if i % 3 != 2 else
+                pick.uniform(0.5, 6),
                 "vertical turbine", pick.choice([0.95, 1.02, 1.1]))
     for i in range(14):  # drowned dry pits
         sewage = i % 3 == 0
@@ -364,7 +419,8 @@ def build(board):
                 pick.choice([30, 150, 600, 1900, 3600, 5200, 6300]),
                 round_to(10 ** pick.uniform(2.8, 3.8), 10),
                 pick.randint(45, 190), pick.choice([2, 3, 3, 4]),
-                pick.uniform(6700, 8600), pick.uniform(0.5, 7), i % 2 == 0,
+                pick.uniform(7000, 8600), pick.uniform(-3, 0.5) if i % 4 == 3
+                else pick.uniform(0.5, 6), i % 2 == 0,
                 "end suction" if sewage else "split case",
                 pick.choice([0.92, 1.0, 1.08, 1.12]))
     for i in range(13):  # suction lifts from rivers, ponds and canals
@@ -372,9 +428,9 @@ def build(board):
         dry_pit(board, "IR" if irrigation else "RW",
                 "irrigation" if irrigation else "raw water",
                 pick.choice([20, 260, 1500, 3300, 4800, 6100, 6500]),
-                round_to(10 ** pick.uniform(2.7, 3.5), 10),
+                round_to(10 ** pick.uniform(2.9, 3.6), 10),
                 pick.randint(50, 160), pick.choice([2, 3, 4]),
-                pick.uniform(7100, 9400), -pick.uniform(3, 15), False,
+                pick.uniform(7000, 8200), -pick.uniform(5, 14), False,
                 pick.choice(["end suction", "self-priming"]),
                 pick.choice([0.95, 1.02, 1.1]))
     for i in range(7):
@@ -404,6 +460,12 @@ def blank(rows, *columns):
             row[column] = ""
 
 
+LEVELS = ("discharge_low_ft", "discharge_normal_ft")
+SYSTEM = ("discharge_loss_flow_gpm", "discharge_loss_head_ft",
+          "discharge_length_ft", "discharge_bore_in", "discharge_material",
+          "discharge_year", "discharge_minor_k")
+
+
 def make_gaps(board):
     """What records lack, a different thing at about every third station."""
     lacks = [
@@ -417,13 +479,13 @@ def make_gaps(board):
         lambda s, p, q: blank(q, "condition", "material"),
         lambda s, p, q: blank([s], "site_elevation_ft"),
         lambda s, p, q: blank(p[:1], "suction_pipe_id"),
-        lambda s, p, q: blank(q[-1:], "bore_in"),
+        lambda s, p, q: blank(q[-1:], "bore_mm"),
         lambda s, p, q: blank([s], "discharge_loss_head_ft",
                               "discharge_length_ft"),
         lambda s, p, q: blank(p, "curve_id", "rated_npshr_ft"),
         lambda s, p, q: blank([s], "discharge_material",
                               "discharge_minor_k", "pumps_running_max"),
-        lambda s, p, q: blank(q[:1], "length_ft"),
+        lambda s, p, q: blank(q[:1], "length_m"),
         lambda s, p, q: blank([s], "installation", "source_kind"),
     ]
     for i, station in enumerate(board.stations[:-1]):
@@ -432,6 +494,8 @@ def make_gaps(board):
         pipes = [p for p in board.pipes if p["station_id"] == key]
         if i % 3 == 2 or i % 10 == 0:
             lacks[(i * 5 // 3) % len(lacks)](station, pumps, pipes)
+        if i % 3 == 1:
+            blank([station], *(SYSTEM if i % 2 else LEVELS))
         if i % 6 == 4:
             for pump in pumps:
                 pump["largest_recorded_flow_gpm"] = (
