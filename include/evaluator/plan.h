@@ -50,6 +50,8 @@ struct sl_plan {
 
     struct sl_delivery delivery;
     enum sl_flow_basis flow_basis;
+    double speed_ratio;         /* its speed over that of its curve's test */
+    double rated_ratio;         /* its speed over that of its rated point */
     struct sl_curve_view head;  /* at the speed it runs at; empty: unknown */
     struct sl_curve_view npshr; /* likewise */
     double rated_flow;          /* scaled to that speed; NaN unknown */
@@ -84,6 +86,15 @@ struct sl_input *sl_plan_record(struct sl_plan *plan, enum sl_input_id id,
                                 const struct sl_number *number,
                                 enum sl_kind kind, long line,
                                 const char *unknown_rule);
+/* Set an input of the station of which a lowest and a usual figure may be
+ * recorded: the one wanted or, for want of it, the other one, which bounds
+ * it from one side.  Lower is adverse. */
+struct sl_input *sl_plan_low_or_normal(struct sl_plan *plan,
+                                       enum sl_input_id id,
+                                       const struct sl_number *low,
+                                       const struct sl_number *normal,
+                                       enum sl_level_basis wanted,
+                                       const char *unknown_rule);
 /* Set an input from the defaults: the row for the circumstance, else the
  * row for all others. */
 struct sl_input *sl_plan_default(struct sl_plan *plan, enum sl_input_id id,

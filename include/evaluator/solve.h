@@ -11,15 +11,21 @@ struct sl_ends {
 
 /* How a case ended beside its figures. */
 struct sl_case_notes {
-    bool off_curve; /* the flow lies past an end of the NPSHR curve */
+    bool off_curve; /* the flow lies past an end of the published curve */
     bool stands;    /* the curve does not reach the discharge head */
 };
 
 struct sl_ends sl_ends_all(enum sl_corner corner);
 
-/* Solve one case.  Where water temperature is an unknown, its adverse end is
- * whichever of its two ends gives the smaller surplus, and its favourable
- * end the other: cold water on a long smooth pipe loses more by friction. */
+/* Solve one case.  Where water temperature is an unknown, it is tried at
+ * both ends and at its typical value: the adverse end is the one that gives
+ * the least surplus and the favourable end the one that gives the most, for
+ * cold water on a long smooth pipe loses more by friction.  One of the three
+ * without a figure leaves both ends without one.
+ *
+ * A suction loss at its adverse end counts in NPSHA and not in the flow,
+ * which it would lessen: so is the pump's own flow that of running alone,
+ * the most it can be, while others load the pipes it shares with them. */
 void sl_solve_case(const struct sl_plan *plan, const struct sl_ends *ends,
                    struct sl_case *solved, struct sl_case_notes *notes);
 
@@ -28,7 +34,8 @@ void sl_solve_case(const struct sl_plan *plan, const struct sl_ends *ends,
 double sl_solve_most_flow(const struct sl_plan *plan);
 
 /* The losses of each pipe of the path at a case's flow and the typical
- * ends; `losses` has room for path_count. */
+ * ends; `losses` has room for path_count.  NaN where a pipe's length or bore
+ * is not known. */
 void sl_solve_losses(const struct sl_plan *plan, double flow,
                      struct sl_pipe_loss *losses);
 

@@ -12,4 +12,10 @@
  * Outside the range, and for NaN or infinity: NaN. */
 double sl_standard_atmosphere(double altitude);
 
+/* The altitude at which standard air has a pressure: F6 turned round.
+ * in   pressure  [Pa], absolute, that of -1000 to 11000 m
+ * out  [m] over mean sea level
+ * Outside the range, and for NaN or infinity: NaN. */
+double sl_standard_altitude(double pressure);
+
 #endif

@@ -14,48 +14,74 @@ static double test_speed(const struct sl_curve *curve)
     return NAN;
 }
 
-/* How much faster than its curve the pump may run. */
-static double speed_ratio(struct sl_plan *plan)
+/* The speeds of its curve's test, of its rated point and the highest it runs
+ * at, rpm; each stands in for another that is not recorded. */
+struct speeds {
+    double test, rated, top;
+};
+
+static struct speeds speeds_of(const struct sl_plan *plan)
 {
     const struct sl_pump *pump = &plan->pump->record;
     double rated = sl_recorded(&pump->rated_speed);
     double test = test_speed(plan->pump->curve);
     double top = sl_recorded(&pump->max_speed);
-    struct sl_input *input;
 
     if (isnan(test))
         test = rated;
+    if (isnan(rated))
+        rated = test;
     if (isnan(top))
-        top = isnan(rated) ? test : rated;
-    if (isnan(top)) {
+        top = rated;
+    return (struct speeds){test, rated, top};
+}
+
+static void speed(struct sl_plan *plan, const struct speeds *speeds)
+{
+    const struct sl_pump *pump = &plan->pump->record;
+    struct sl_input *input;
+
+    if (isnan(speeds->top)) {
         plan->inputs[SL_IN_SPEED].rule =
             "no speed is recorded: that of its curve";
         plan->inputs[SL_IN_SPEED].value = sl_no_figure();
-        return 1;
+        return;
     }
     input = sl_plan_set(
         plan, SL_IN_SPEED, pump->max_speed.known ? SL_RECORDED : SL_DERIVED,
-        sl_exactly(top),
+        sl_exactly(speeds->top),
         pump->max_speed.known ? ""
                               : "no higher speed is recorded: a fixed drive");
     input->kind = SL_KIND_PUMP;
     input->line = pump->line;
-    if (isnan(test)) {
+    if (isnan(speeds->test)) {
         input->provenance = SL_UNKNOWN;
-        input->value = (struct sl_interval){top, NAN, NAN};
+        input->value = (struct sl_interval){speeds->top, NAN, NAN};
         input->rule = "the speed its figures were tested at is not recorded";
-        return 1;
     }
-    return top / test;
+}
+
+/* 1 where nothing is known to scale by. */
+static double ratio_of(double speed, double test)
+{
+    return isnan(speed / test) ? 1 : speed / test;
+}
+
+static const struct sl_default *npshr_exponent_row(const struct sl_plan *plan,
+                                                   double ratio)
+{
+    return sl_default_find(plan->tables,
+                           ratio > 1 ? "npshr_speed_exponent_up"
+                                     : "npshr_speed_exponent_down",
+                           "");
 }
 
 static double npshr_exponent(const struct sl_plan *plan, double ratio)
 {
-    const struct sl_default *row = sl_default_find(
-        plan->tables,
-        ratio > 1 ? "npshr_speed_exponent_up" : "npshr_speed_exponent_down",
-        "");
+    const struct sl_default *row = npshr_exponent_row(plan, ratio);
 
+    if (ratio == 1)
+        return 1; /* any: nothing is scaled */
     return row ? row->value.typical : NAN;
 }
 
@@ -64,9 +90,10 @@ enum curve_column { HEAD, NPSHR };
 /* The points of a curve that have a head, or an NPSHR, at the speed the
  * pump runs at. */
 static struct sl_curve_view view_of(struct sl_plan *plan,
-                                    enum curve_column column, double ratio)
+                                    enum curve_column column)
 {
     const struct sl_curve *curve = plan->pump->curve;
+    double ratio = plan->speed_ratio;
     size_t room = curve ? curve->point_count : 0;
     double *flow = sl_arena_new(plan->arena, room, sizeof *flow);
     double *value = sl_arena_new(plan->arena, room, sizeof *value);
@@ -92,48 +119,31 @@ static struct sl_curve_view view_of(struct sl_plan *plan,
 static void machine(struct sl_plan *plan)
 {
     const struct sl_pump *pump = &plan->pump->record;
-    double ratio = speed_ratio(plan);
-    double rated_speed = sl_recorded(&pump->rated_speed);
-    double top = plan->inputs[SL_IN_SPEED].value.typical;
-    double rated_ratio = top / rated_speed;
+    struct speeds speeds = speeds_of(plan);
 
-    plan->head = view_of(plan, HEAD, ratio);
-    plan->npshr = view_of(plan, NPSHR, ratio);
-    if (isnan(rated_ratio))
-        rated_ratio = 1;
+    speed(plan, &speeds);
+    plan->speed_ratio = ratio_of(speeds.top, speeds.test);
+    plan->rated_ratio = ratio_of(speeds.top, speeds.rated);
+    plan->head = view_of(plan, HEAD);
+    plan->npshr = view_of(plan, NPSHR);
     if (pump->rated_flow.known)
         plan->rated_flow =
-            sl_affinity_flow(pump->rated_flow.value, rated_ratio);
+            sl_affinity_flow(pump->rated_flow.value, plan->rated_ratio);
     if (pump->rated_npshr.known)
         plan->rated_npshr =
-            sl_affinity_npshr(pump->rated_npshr.value, rated_ratio,
-                              npshr_exponent(plan, rated_ratio));
+            sl_affinity_npshr(pump->rated_npshr.value, plan->rated_ratio,
+                              npshr_exponent(plan, plan->rated_ratio));
 }
 
 /* The discharge head to lift to; a lower one means more flow. */
 static void discharge_level(struct sl_plan *plan)
 {
     const struct sl_station *station = &plan->dossier->record;
-    bool want_low = plan->condition->discharge == SL_LEVEL_LOW;
-    const struct sl_number *wanted =
-        want_low ? &station->discharge_low : &station->discharge_normal;
-    const struct sl_number *other =
-        want_low ? &station->discharge_normal : &station->discharge_low;
-    struct sl_interval value = {other->value, NAN, other->value};
 
-    if (wanted->known || !other->known) {
-        sl_plan_record(plan, SL_IN_DISCHARGE_LEVEL, wanted, SL_KIND_STATION,
-                       station->line, "no discharge level is recorded");
-        return;
-    }
-    if (!want_low)
-        value = (struct sl_interval){other->value, other->value, NAN};
-    sl_plan_set(plan, SL_IN_DISCHARGE_LEVEL, SL_DERIVED, value,
-                want_low ? "the normal discharge level stands in for the "
-                           "lowest"
-                         : "the lowest discharge level stands in for the "
-                           "normal")
-        ->line = station->line;
+    sl_plan_low_or_normal(plan, SL_IN_DISCHARGE_LEVEL, &station->discharge_low,
+                          &station->discharge_normal,
+                          plan->condition->discharge,
+                          "no discharge level is recorded");
 }
 
 /* Smooth discharge pipe lets more flow through: its good end is adverse. */
@@ -174,6 +184,9 @@ static void discharge_pipe(struct sl_plan *plan)
         input->row = row;
     if (!station->discharge_material)
         input->row = sl_default_find(plan->tables, "discharge_roughness", "");
+    if (station->discharge_minor_k.known &&
+        delivery->roughness.adverse == delivery->roughness.favourable)
+        input->provenance = SL_DERIVED;
 }
 
 static void discharge_loss(struct sl_plan *plan)
@@ -252,6 +265,16 @@ static void npshr(struct sl_plan *plan)
     if (sl_curve_usable(&plan->npshr)) {
         input = sl_plan_set(plan, SL_IN_NPSHR, SL_RECORDED, sl_no_figure(),
                             "the maker's curve, at this flow");
+        if (plan->pump->curve->rejected_points) {
+            input->provenance = SL_UNKNOWN;
+            input->rule = "a point of its curve was rejected (see "
+                          "findings.csv); the curve without it bounds nothing";
+        }
+        if (plan->speed_ratio != 1) {
+            input->rule = "the maker's curve at this flow, brought to its "
+                          "highest speed";
+            input->row = npshr_exponent_row(plan, plan->speed_ratio);
+        }
         input->kind = SL_KIND_CURVE;
         input->line = plan->pump->curve->points[0].line;
     } else if (!isnan(plan->rated_npshr)) {
@@ -261,6 +284,8 @@ static void npshr(struct sl_plan *plan)
             "known at the rated point alone; it rises with the flow");
         input->kind = SL_KIND_PUMP;
         input->line = plan->pump->record.line;
+        if (plan->rated_ratio != 1)
+            input->row = npshr_exponent_row(plan, plan->rated_ratio);
     } else {
         sl_plan_set(plan, SL_IN_NPSHR, SL_UNKNOWN, sl_no_figure(),
                     "not recorded, and nothing bounds it");

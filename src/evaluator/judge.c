@@ -32,15 +32,18 @@ static bool open_input(const struct sl_pump_result *result,
 {
     if (!input->applies || input->provenance == SL_RECORDED)
         return false;
-    if (input->id == SL_IN_FLOW && result->flow_basis == SL_FLOW_SOLVED)
+    if (input->provenance == SL_DERIVED &&
+        (input->id == SL_IN_DISCHARGE_LOSS ||
+         (input->id == SL_IN_FLOW && result->flow_basis == SL_FLOW_SOLVED)))
         return false;
     if (input->provenance == SL_DERIVED)
         return !(input->value.adverse == input->value.favourable);
     return true;
 }
 
-static double surplus_with(const struct sl_plan *plan, enum sl_corner rest,
-                           enum sl_input_id id, enum sl_corner end)
+/* The case with one input at an end of its own. */
+static struct sl_case case_with(const struct sl_plan *plan, enum sl_corner rest,
+                                enum sl_input_id id, enum sl_corner end)
 {
     struct sl_ends ends = sl_ends_all(rest);
     struct sl_case solved;
@@ -48,7 +51,20 @@ static double surplus_with(const struct sl_plan *plan, enum sl_corner rest,
 
     ends.of[id] = end;
     sl_solve_case(plan, &ends, &solved, &notes);
-    return solved.surplus;
+    return solved;
+}
+
+static double surplus_with(const struct sl_plan *plan, enum sl_corner rest,
+                           enum sl_input_id id, enum sl_corner end)
+{
+    return case_with(plan, rest, id, end).surplus;
+}
+
+/* No honest figure at that end.  The ends of the discharge's loss are in
+ * the plan's roughness and K, not in the input's value. */
+static bool unbounded(const struct sl_input *input, double end)
+{
+    return input->id != SL_IN_DISCHARGE_LOSS && isnan(end);
 }
 
 /* Whether some other open input lacks an honest figure at its adverse end:
@@ -59,8 +75,8 @@ static bool another_is_unbounded(const struct sl_pump_result *result,
     for (int i = 0; i < SL_INPUT_COUNT; i++) {
         const struct sl_input *input = &result->inputs[i];
 
-        if (i != (int)id && i != SL_IN_DISCHARGE_LOSS &&
-            open_input(result, input) && isnan(input->value.adverse))
+        if (i != (int)id && open_input(result, input) &&
+            unbounded(input, input->value.adverse))
             return true;
     }
     return false;
@@ -74,7 +90,7 @@ static void weigh(const struct sl_plan *plan, struct sl_pump_result *result,
     double best = surplus_with(plan, SL_TYPICAL, id, SL_FAVOURABLE);
 
     input->swing = best - worst;
-    if (isnan(input->value.favourable) && id != SL_IN_DISCHARGE_LOSS) {
+    if (unbounded(input, input->value.favourable)) {
         input->settles = !another_is_unbounded(result, id);
         return;
     }
@@ -85,12 +101,17 @@ static void weigh(const struct sl_plan *plan, struct sl_pump_result *result,
 /* Settling first, then without bound, then by swing, then by place. */
 static bool matters_more(const struct sl_input *a, const struct sl_input *b)
 {
+    bool a_unbounded, b_unbounded;
+
     if (!b)
         return true;
     if (a->settles != b->settles)
         return a->settles;
-    if (isnan(a->swing) != isnan(b->swing))
-        return isnan(a->swing);
+    /* Not by the swing: that is NaN too where another input has no figure. */
+    a_unbounded = unbounded(a, a->value.adverse);
+    b_unbounded = unbounded(b, b->value.adverse);
+    if (a_unbounded != b_unbounded)
+        return a_unbounded;
     return a->swing > b->swing;
 }
 
@@ -102,17 +123,37 @@ static void weigh_unknowns(const struct sl_plan *plan,
 
         if (!open_input(result, input))
             continue;
+        input->open = true;
         weigh(plan, result, input);
         if (matters_more(input, result->leading_unknown))
             result->leading_unknown = input;
     }
 }
 
+/* A stand-in without a bound is counted as unknown, whatever it stands on. */
+static enum sl_provenance how_known(const struct sl_pump_result *result,
+                                    const struct sl_input *input)
+{
+    if (open_input(result, input) && unbounded(input, input->value.adverse))
+        return SL_UNKNOWN;
+    return input->provenance;
+}
+
 static void count_inputs(struct sl_pump_result *result)
 {
     for (int i = 0; i < SL_INPUT_COUNT; i++)
         if (result->inputs[i].applies)
-            result->counts[result->inputs[i].provenance]++;
+            result->counts[how_known(result, &result->inputs[i])]++;
+}
+
+/* What running off its curve, or standing, makes unknown is told as such;
+ * and an NPSHR that only lost its bounds has its own reason. */
+static bool told_otherwise(const struct sl_pump_result *result,
+                           const struct sl_input *input)
+{
+    if (input->id == SL_IN_NPSHR)
+        return result->off_curve || !isnan(result->cases[SL_TYPICAL].npshr);
+    return result->stands && input->id == SL_IN_FLOW;
 }
 
 /* "a, b and c are not known" over the inputs without any likely figure. */
@@ -126,7 +167,7 @@ static void name_missing(const struct sl_pump_result *result,
         const struct sl_input *input = &result->inputs[i];
 
         if (input->applies && input->provenance == SL_UNKNOWN &&
-            isnan(input->value.typical) && open_input(result, input))
+            isnan(input->value.typical) && !told_otherwise(result, input))
             names[count++] = sl_input_words(input->id);
     }
     for (size_t i = 0; i < count; i++)
@@ -153,14 +194,14 @@ static void reason_unproven(const struct sl_pump_result *result,
                                  "level: check curve, speed and levels");
     else if (result->off_curve)
         sl_text_add_string(text, "running alone it leaves the published end "
-                                 "of its NPSHR curve");
-    else if (leading && isnan(leading->value.adverse) && leading->rule[0])
+                                 "of its curve");
+    else if (leading && unbounded(leading, leading->value.adverse) &&
+             leading->rule[0])
         sl_text_addf(text, "%s: %s", sl_input_words(leading->id),
                      leading->rule);
     else if (notes[SL_ADVERSE].off_curve)
         sl_text_add_string(text, "at the adverse end of what is assumed it "
-                                 "leaves the published end of its NPSHR "
-                                 "curve");
+                                 "leaves the published end of its curve");
     else if (leading)
         sl_text_addf(text, "what is assumed decides, %s most",
                      sl_input_words(leading->id));
@@ -180,18 +221,39 @@ static void explain(const struct sl_plan *plan, struct sl_pump_result *result,
     sl_text_release(&text);
 }
 
-/* The extra loss that other pumps in a shared pipe may bring. */
+/* The extra loss that other pumps in a shared pipe may bring: from the
+ * losses, which are known where the surplus may not be. */
 static void set_running_together(const struct sl_plan *plan,
                                  struct sl_pump_result *result)
 {
     struct sl_input *input = &result->inputs[SL_IN_RUNNING_TOGETHER];
-    double together;
+    const struct sl_terms *alone = &result->cases[SL_TYPICAL].terms;
+    struct sl_case together;
 
     if (!input->applies)
         return;
-    together =
-        surplus_with(plan, SL_TYPICAL, SL_IN_RUNNING_TOGETHER, SL_ADVERSE);
-    input->value.adverse = result->cases[SL_TYPICAL].surplus - together;
+    together = case_with(plan, SL_TYPICAL, SL_IN_RUNNING_TOGETHER, SL_ADVERSE);
+    input->value.adverse = (alone->friction + alone->minor) -
+                           (together.terms.friction + together.terms.minor);
+}
+
+/* Off its published curve a pump's NPSHR is not known, and where it stands
+ * its flow is none: that is then the thing to find out. */
+static void mark_what_the_curve_lacks(struct sl_pump_result *result)
+{
+    struct sl_input *npshr = &result->inputs[SL_IN_NPSHR];
+    struct sl_input *flow = &result->inputs[SL_IN_FLOW];
+
+    if (result->off_curve) {
+        npshr->provenance = SL_UNKNOWN;
+        npshr->value = sl_no_figure();
+        npshr->rule = "the published curve ends before the flow it runs at "
+                      "alone";
+    }
+    if (result->stands) {
+        flow->provenance = SL_UNKNOWN;
+        flow->rule = "its curve does not reach the discharge level";
+    }
 }
 
 void sl_judge(const struct sl_plan *plan, struct sl_pump_result *result)
@@ -214,6 +276,7 @@ void sl_judge(const struct sl_plan *plan, struct sl_pump_result *result)
     result->likely = result->state == SL_UNPROVEN
                          ? sl_state_of(&result->cases[SL_TYPICAL])
                          : result->state;
+    mark_what_the_curve_lacks(result);
     set_running_together(plan, result);
     count_inputs(result);
     if (result->state == SL_UNPROVEN)

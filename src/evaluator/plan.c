@@ -47,6 +47,33 @@ struct sl_input *sl_plan_record(struct sl_plan *plan, enum sl_input_id id,
     return input;
 }
 
+struct sl_input *sl_plan_low_or_normal(struct sl_plan *plan,
+                                       enum sl_input_id id,
+                                       const struct sl_number *low,
+                                       const struct sl_number *normal,
+                                       enum sl_level_basis wanted,
+                                       const char *unknown_rule)
+{
+    bool want_low = wanted == SL_LEVEL_LOW;
+    const struct sl_number *number = want_low ? low : normal;
+    const struct sl_number *other = want_low ? normal : low;
+    struct sl_interval bound = {other->value, NAN, other->value};
+    struct sl_input *input;
+
+    if (number->known || !other->known)
+        return sl_plan_record(plan, id, number, SL_KIND_STATION,
+                              plan->dossier->record.line, unknown_rule);
+    if (!want_low)
+        bound = (struct sl_interval){other->value, other->value, NAN};
+    input = sl_plan_set(plan, id, SL_DERIVED, bound,
+                        want_low ? "the usual one stands in for the lowest, "
+                                   "which is not recorded"
+                                 : "the lowest one stands in for the usual, "
+                                   "which is not recorded");
+    input->line = plan->dossier->record.line;
+    return input;
+}
+
 const struct sl_default *sl_default_find(const struct sl_tables *tables,
                                          const char *field,
                                          const char *circumstance)

@@ -73,23 +73,25 @@ static struct sl_pipe_loss pipe_loss(const struct setting *setting,
     struct sl_pipe_loss loss = {.pipe = place->pipe, .factor = NAN};
     double bore = pipe->bore.value;
 
+    loss.velocity = loss.reynolds = loss.friction = loss.minor = NAN;
     loss.roughness = at(&place->roughness, ends->of[SL_IN_SUCTION_ROUGHNESS]);
     loss.minor_k = at(&place->minor_k, ends->of[SL_IN_SUCTION_MINOR]);
     loss.flow = flow;
     if (ends->of[SL_IN_RUNNING_TOGETHER] == SL_ADVERSE)
         loss.flow += place->others;
     if (!pipe->bore.known)
-        return loss; /* the stand-in for the whole pipe is added once */
+        return loss;
     loss.velocity = sl_pipe_velocity(loss.flow, bore);
     loss.reynolds = sl_reynolds(loss.velocity, bore, setting->viscosity);
     loss.minor = sl_minor_head(loss.minor_k, loss.velocity);
-    if (!pipe->length.known || loss.flow == 0)
+    if (!pipe->length.known)
         return loss;
     if (place->hazen_williams) {
         loss.friction = sl_hazen_williams_head(
             loss.flow, pipe->hazen_williams_c.value, pipe->length.value, bore);
         return loss;
     }
+    /* At rest there is no factor, and no loss either. */
     loss.factor = sl_friction_factor(loss.reynolds, loss.roughness / bore);
     loss.friction =
         sl_darcy_head(loss.factor, pipe->length.value, bore, loss.velocity);
@@ -116,9 +118,13 @@ static struct suction_loss suction_loss(const struct setting *setting,
 
     for (size_t i = 0; i < plan->path_count; i++) {
         struct sl_pipe_loss loss = pipe_loss(setting, &plan->path[i], flow);
+        const struct sl_pipe *pipe = &loss.pipe->record;
 
-        sum.friction += loss.friction;
-        sum.minor += loss.minor;
+        /* What a pipe without bore or length loses is in the stand-in. */
+        if (pipe->bore.known && pipe->length.known)
+            sum.friction += loss.friction;
+        if (pipe->bore.known)
+            sum.minor += loss.minor;
     }
     if (plan->path_count == 0)
         sum.minor += inlet_loss(setting, flow);
@@ -148,30 +154,65 @@ static double discharge_loss(const struct setting *setting, double flow)
            sl_minor_head(at(&delivery->minor_k, end), velocity);
 }
 
+/* V²/2g where the balance starts at a gauge on a pipe, and only there. */
+static double gauge_velocity_head(const struct setting *setting, double flow)
+{
+    const struct sl_plan *plan = setting->plan;
+
+    if (plan->source_kind != SL_MAIN || plan->path_count == 0 ||
+        !plan->path[0].pipe->record.bore.known)
+        return 0;
+    return sl_velocity_head(
+        sl_pipe_velocity(flow, plan->path[0].pipe->record.bore.value));
+}
+
 /* The head one pump alone must give at this flow (F12 for a set of one). */
 static double system_head(void *context, double flow)
 {
     const struct setting *setting = context;
     struct suction_loss suction = suction_loss(setting, flow);
 
-    return value(setting, SL_IN_DISCHARGE_LEVEL) - setting->source_head +
-           discharge_loss(setting, flow) + suction.friction + suction.minor;
+    return value(setting, SL_IN_DISCHARGE_LEVEL) - setting->source_head -
+           gauge_velocity_head(setting, flow) + discharge_loss(setting, flow) +
+           suction.friction + suction.minor;
+}
+
+/* The ends at which the flow is sought.  Loss on the suction side lessens
+ * NPSHA, but the flow too and with it NPSHR, which tells where the head curve
+ * is flat; so what is adverse in the balance is left out of the flow, and the
+ * two together bound every case between. */
+static struct sl_ends flow_ends(const struct sl_ends *ends)
+{
+    static const enum sl_input_id losses[] = {
+        SL_IN_SUCTION_PIPING,    SL_IN_SUCTION_LENGTH, SL_IN_SUCTION_BORE,
+        SL_IN_SUCTION_ROUGHNESS, SL_IN_SUCTION_MINOR,  SL_IN_RUNNING_TOGETHER};
+    struct sl_ends most = *ends;
+
+    for (size_t i = 0; i < sizeof losses / sizeof *losses; i++)
+        if (most.of[losses[i]] == SL_ADVERSE)
+            most.of[losses[i]] = SL_FAVOURABLE;
+    return most;
 }
 
 static double flow_of(const struct setting *setting,
                       struct sl_case_notes *notes)
 {
     const struct sl_plan *plan = setting->plan;
-    struct sl_system system = {system_head, (void *)setting};
+    struct sl_ends ends = flow_ends(setting->ends);
+    struct setting seeking = *setting;
+    struct sl_system system = {system_head, &seeking};
     struct sl_operating_point point;
 
     if (plan->flow_basis != SL_FLOW_SOLVED)
         return value(setting, SL_IN_FLOW);
+    seeking.ends = &ends;
     switch (
         sl_operating_point_find(&plan->head, &system, FLOW_TOLERANCE, &point)) {
     case SL_OPERATING_FOUND:
+        return point.flow;
     case SL_OPERATING_PAST_END:
     case SL_OPERATING_BEFORE_START:
+        notes->off_curve = true;
         return point.flow;
     case SL_OPERATING_STANDS:
         notes->stands = true;
@@ -184,17 +225,23 @@ static double flow_of(const struct setting *setting,
     }
 }
 
-/* NPSHR at a flow. A value known at the rated point alone holds from there
- * on as a bound from below, and nowhere as one from above. */
+/* NPSHR at a flow; off the curve the flow is a guess, and NPSHR there none.
+ * A value known at the rated point alone holds from there on as a bound from
+ * below, and nowhere as one from above. */
 static double npshr_at(const struct setting *setting, double flow,
                        struct sl_case_notes *notes)
 {
     const struct sl_plan *plan = setting->plan;
     double npshr;
 
+    if (notes->off_curve)
+        return NAN;
+    if (setting->ends->of[SL_IN_NPSHR] != SL_TYPICAL && plan->pump->curve &&
+        plan->pump->curve->rejected_points)
+        return NAN;
     if (sl_curve_usable(&plan->npshr)) {
         npshr = sl_curve_at(&plan->npshr, flow);
-        notes->off_curve = notes->off_curve || (isnan(npshr) && !isnan(flow));
+        notes->off_curve = isnan(npshr) && !isnan(flow);
         return npshr;
     }
     npshr = value(setting, SL_IN_NPSHR);
@@ -225,18 +272,6 @@ static struct setting setting_of(const struct sl_plan *plan,
                             : SL_IN_SOURCE_LEVEL) +
         value(&setting, SL_IN_SOURCE_PRESSURE) / (setting.density * SL_GRAVITY);
     return setting;
-}
-
-/* V²/2g where the balance starts at a gauge on a pipe, and only there. */
-static double gauge_velocity_head(const struct setting *setting, double flow)
-{
-    const struct sl_plan *plan = setting->plan;
-
-    if (plan->source_kind != SL_MAIN || plan->path_count == 0 ||
-        !plan->path[0].pipe->record.bore.known)
-        return 0;
-    return sl_velocity_head(
-        sl_pipe_velocity(flow, plan->path[0].pipe->record.bore.value));
 }
 
 static void balance(const struct setting *setting, double flow,
@@ -282,27 +317,43 @@ static void solve_at(const struct sl_plan *plan, const struct sl_ends *ends,
     solved->surplus = solved->terms.npsha - solved->required;
 }
 
+/* Whether one surplus lies further toward an end than another; the one
+ * without a figure does, at either end. */
+static bool further(enum sl_corner end, const struct sl_case *tried,
+                    const struct sl_case *kept)
+{
+    double a = tried->surplus, b = kept->surplus;
+
+    if (isnan(a) && isnan(b)) { /* without an NPSHR, NPSHA still has ends */
+        a = tried->terms.npsha;
+        b = kept->terms.npsha;
+    }
+    if (isnan(a) || isnan(b))
+        return isnan(a);
+    return end == SL_ADVERSE ? a < b : a > b;
+}
+
 void sl_solve_case(const struct sl_plan *plan, const struct sl_ends *ends,
                    struct sl_case *solved, struct sl_case_notes *notes)
 {
     const struct sl_interval *warmth = &plan->inputs[SL_IN_TEMPERATURE].value;
     enum sl_corner end = ends->of[SL_IN_TEMPERATURE];
-    struct sl_case other;
-    struct sl_case_notes other_notes;
-    bool other_is_worse;
 
     solve_at(plan, ends, at(warmth, end), solved, notes);
     if (end == SL_TYPICAL || warmth->adverse == warmth->favourable)
         return;
-    solve_at(plan, ends,
-             at(warmth, end == SL_ADVERSE ? SL_FAVOURABLE : SL_ADVERSE), &other,
-             &other_notes);
-    other_is_worse = other.surplus < solved->surplus;
-    if (isnan(other.surplus) || isnan(solved->surplus))
-        other_is_worse = isnan(other.surplus);
-    if (other_is_worse == (end == SL_ADVERSE)) {
-        *solved = other;
-        *notes = other_notes;
+    for (int corner = 0; corner < SL_CORNER_COUNT; corner++) {
+        struct sl_case tried;
+        struct sl_case_notes tried_notes;
+
+        if (corner == (int)end)
+            continue;
+        solve_at(plan, ends, at(warmth, (enum sl_corner)corner), &tried,
+                 &tried_notes);
+        if (further(end, &tried, solved)) {
+            *solved = tried;
+            *notes = tried_notes;
+        }
     }
 }
 
@@ -315,6 +366,10 @@ double sl_solve_most_flow(const struct sl_plan *plan)
     ends.of[SL_IN_DISCHARGE_LEVEL] = SL_ADVERSE;
     ends.of[SL_IN_DISCHARGE_LOSS] = SL_ADVERSE;
     ends.of[SL_IN_FLOW] = SL_ADVERSE;
+    /* All pumps of a station draw from one source: a higher one than known
+     * would help this pump more than it lets the others take. */
+    ends.of[SL_IN_SOURCE_LEVEL] = SL_TYPICAL;
+    ends.of[SL_IN_SOURCE_PRESSURE] = SL_TYPICAL;
     solve_at(plan, &ends, plan->inputs[SL_IN_TEMPERATURE].value.adverse,
              &solved, &notes);
     return notes.stands ? 0 : solved.flow;

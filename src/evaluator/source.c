@@ -75,6 +75,22 @@ static bool natural_source(const struct sl_station *station)
            station->service == SL_IRRIGATION || station->service == SL_SEAWATER;
 }
 
+/* The lowest level the audit knows of: what the controls permit; for a
+ * natural source also the lowest on record. */
+static const struct sl_number *lowest_level(const struct sl_station *station)
+{
+    if (natural_source(station) || !station->cut_out_level.known)
+        return lower(&station->cut_out_level, &station->record_low_level);
+    return &station->cut_out_level;
+}
+
+static enum sl_source_basis basis_of(const struct sl_station *station,
+                                     const struct sl_number *low)
+{
+    return low == &station->cut_out_level ? SL_SOURCE_CUT_OUT
+                                          : SL_SOURCE_RECORD_LOW;
+}
+
 static void level(struct sl_plan *plan, const struct sl_number *number,
                   enum sl_source_basis basis, struct sl_interval value,
                   enum sl_provenance provenance, const char *rule)
@@ -87,26 +103,21 @@ static void level(struct sl_plan *plan, const struct sl_number *number,
         input->line = plan->dossier->record.line;
 }
 
-/* The lowest level: what the controls permit; for a natural source also the
- * lowest on record.  A level that is not the lowest is a bound from above:
- * it can prove a pump short, never clear. */
+/* A level that is not the lowest is a bound from above: it can prove a pump
+ * short, never clear. */
 static void low_level(struct sl_plan *plan)
 {
     const struct sl_station *station = &plan->dossier->record;
-    const struct sl_number *cut_out = &station->cut_out_level;
-    const struct sl_number *record = &station->record_low_level;
+    const struct sl_number *lowest = lowest_level(station);
     const struct sl_number *normal = &station->normal_level;
-    const struct sl_number *lowest = cut_out;
 
-    if (natural_source(station))
-        lowest = lower(cut_out, record);
-    if (lowest->known)
-        level(plan, lowest,
-              lowest == cut_out ? SL_SOURCE_CUT_OUT : SL_SOURCE_RECORD_LOW,
+    if (lowest->known &&
+        (station->cut_out_level.known || natural_source(station)))
+        level(plan, lowest, basis_of(station, lowest),
               sl_exactly(lowest->value), SL_RECORDED, "");
-    else if (record->known)
-        level(plan, record, SL_SOURCE_RECORD_LOW,
-              (struct sl_interval){record->value, NAN, record->value},
+    else if (lowest->known)
+        level(plan, lowest, SL_SOURCE_RECORD_LOW,
+              (struct sl_interval){lowest->value, NAN, lowest->value},
               SL_DERIVED,
               "the lowest on record stands in for the cut-out level, which "
               "may be lower");
@@ -124,16 +135,13 @@ static void low_level(struct sl_plan *plan)
 static void usual_level(struct sl_plan *plan)
 {
     const struct sl_station *station = &plan->dossier->record;
-    const struct sl_number *low =
-        lower(&station->cut_out_level, &station->record_low_level);
+    const struct sl_number *low = lowest_level(station);
 
     if (station->normal_level.known)
         level(plan, &station->normal_level, SL_SOURCE_NORMAL,
               sl_exactly(station->normal_level.value), SL_RECORDED, "");
     else if (low->known)
-        level(plan, low,
-              low == &station->cut_out_level ? SL_SOURCE_CUT_OUT
-                                             : SL_SOURCE_RECORD_LOW,
+        level(plan, low, basis_of(station, low),
               (struct sl_interval){low->value, low->value, NAN}, SL_DERIVED,
               "the lowest known level stands in for the normal one");
     else
@@ -148,31 +156,16 @@ static void pressure(struct sl_plan *plan)
     const struct sl_number *low = &station->source_pressure_low;
     const struct sl_number *normal = &station->source_pressure_normal;
     bool want_low = plan->condition->pressure == SL_LEVEL_LOW;
-    const struct sl_number *wanted = want_low ? low : normal;
-    const struct sl_number *other = want_low ? normal : low;
-    struct sl_input *input;
 
-    input = sl_plan_record(plan, SL_IN_SOURCE_PRESSURE, wanted, SL_KIND_STATION,
-                           station->line, "no source pressure is recorded");
-    plan->source_basis = (wanted->known ? want_low : !want_low)
-                             ? SL_SOURCE_PRESSURE_LOW
-                             : SL_SOURCE_PRESSURE_NORMAL;
-    if (wanted->known)
-        return;
-    if (!other->known) {
+    sl_plan_low_or_normal(plan, SL_IN_SOURCE_PRESSURE, low, normal,
+                          plan->condition->pressure,
+                          "no source pressure is recorded");
+    if (!low->known && !normal->known)
         plan->source_basis = SL_SOURCE_UNKNOWN;
-        return;
-    }
-    *input = (struct sl_input){
-        .id = SL_IN_SOURCE_PRESSURE,
-        .applies = true,
-        .provenance = SL_DERIVED,
-        .line = station->line,
-        .rule = want_low ? "the normal pressure stands in for the lowest"
-                         : "the lowest pressure stands in for the normal",
-        .value = want_low
-                     ? (struct sl_interval){other->value, NAN, other->value}
-                     : (struct sl_interval){other->value, other->value, NAN}};
+    else if (low->known && (want_low || !normal->known))
+        plan->source_basis = SL_SOURCE_PRESSURE_LOW;
+    else
+        plan->source_basis = SL_SOURCE_PRESSURE_NORMAL;
 }
 
 static void surface(struct sl_plan *plan)
@@ -200,27 +193,49 @@ static void surface(struct sl_plan *plan)
 /* Elevations share one datum, so a recorded level tells about where the
  * site lies; but an owner may keep levels on a local datum, so it bounds
  * nothing. */
-static void site_elevation(struct sl_plan *plan)
+static const struct sl_number *level_hint(const struct sl_station *station)
 {
-    const struct sl_station *station = &plan->dossier->record;
     const struct sl_number *hint = &station->normal_level;
-    struct sl_interval value = {NAN, NAN, LOWEST_LAND};
 
     if (!hint->known)
         hint = lower(&station->cut_out_level, &station->record_low_level);
-    if (!hint->known)
-        hint = &station->source_pressure_elevation;
-    if (station->site_elevation.known) {
+    return hint->known ? hint : &station->source_pressure_elevation;
+}
+
+/* A low barometer read on the spot needs no elevation: the air is that of
+ * the altitude where standard air is as thin. In a storm it is just that,
+ * at other times no thinner. */
+static void elevation_by_barometer(struct sl_plan *plan, double altitude)
+{
+    struct sl_interval value = {altitude, altitude, LOWEST_LAND};
+
+    if (plan->condition->storm_barometer)
+        value = sl_exactly(altitude);
+    sl_plan_set(plan, SL_IN_SITE_ELEVATION, SL_DERIVED, value,
+                "not recorded; standard air there is as thin as the recorded "
+                "low barometer")
+        ->line = plan->dossier->record.line;
+}
+
+static void site_elevation(struct sl_plan *plan)
+{
+    const struct sl_station *station = &plan->dossier->record;
+    const struct sl_number *hint = level_hint(station);
+    double by_barometer =
+        sl_standard_altitude(sl_recorded(&station->barometer_low));
+
+    if (station->site_elevation.known)
         sl_plan_record(plan, SL_IN_SITE_ELEVATION, &station->site_elevation,
                        SL_KIND_STATION, station->line, "");
-        return;
-    }
-    value.typical = sl_recorded(hint);
-    sl_plan_set(plan, SL_IN_SITE_ELEVATION,
-                hint->known ? SL_DERIVED : SL_UNKNOWN, value,
-                hint->known ? "not recorded; a level stands in, if levels "
-                              "are heights above sea level"
-                            : "not recorded");
+    else if (!isnan(by_barometer))
+        elevation_by_barometer(plan, by_barometer);
+    else
+        sl_plan_set(plan, SL_IN_SITE_ELEVATION,
+                    hint->known ? SL_DERIVED : SL_UNKNOWN,
+                    (struct sl_interval){sl_recorded(hint), NAN, LOWEST_LAND},
+                    hint->known ? "not recorded; a level stands in, if levels "
+                                  "are heights above sea level"
+                                : "not recorded");
 }
 
 /* How far the air pressure may lie below the standard one, as a part of it,
@@ -233,18 +248,26 @@ static void barometer(struct sl_plan *plan)
 
     if (!plan->condition->storm_barometer)
         return;
-    standard = sl_standard_atmosphere(
-        plan->inputs[SL_IN_SITE_ELEVATION].value.typical);
-    if (low->known && station->site_elevation.known) {
-        struct sl_input *input =
-            sl_plan_set(plan, SL_IN_BAROMETER, SL_RECORDED,
-                        sl_exactly(1 - low->value / standard),
-                        "its fall, as a part of the standard pressure");
-
-        input->line = station->line;
+    if (!low->known) {
+        sl_plan_default(plan, SL_IN_BAROMETER, "barometer_fall", "");
         return;
     }
-    sl_plan_default(plan, SL_IN_BAROMETER, "barometer_fall", "");
+    if (!station->site_elevation.known)
+        return; /* it is the air pressure itself: see site_elevation() */
+    standard = sl_standard_atmosphere(station->site_elevation.value);
+    sl_plan_set(plan, SL_IN_BAROMETER, SL_RECORDED,
+                sl_exactly(1 - low->value / standard),
+                "its fall, as a part of the standard pressure")
+        ->line = station->line;
+}
+
+static void hold_within(struct sl_interval *value, double low, double high)
+{
+    double *ends[] = {&value->typical, &value->adverse, &value->favourable};
+
+    for (size_t i = 0; i < sizeof ends / sizeof *ends; i++)
+        if (!isnan(*ends[i]))
+            *ends[i] = fmin(fmax(*ends[i], low), high);
 }
 
 static void temperature(struct sl_plan *plan)
@@ -263,14 +286,12 @@ static void temperature(struct sl_plan *plan)
     input = sl_plan_default(plan, SL_IN_TEMPERATURE,
                             summer ? "water_temp_summer" : "water_temp_normal",
                             service_word(plan));
-    /* The usual water is no warmer than the warmest of the year. */
-    if (!summer && station->water_temp_summer.known) {
-        double warmest = station->water_temp_summer.value;
-
-        input->value.adverse = fmin(input->value.adverse, warmest);
-        input->value.typical = fmin(input->value.typical, warmest);
-        input->value.favourable = fmin(input->value.favourable, warmest);
-    }
+    /* The usual water is no warmer than the warmest of the year, and that
+     * no colder than the usual. */
+    if (!summer && station->water_temp_summer.known)
+        hold_within(&input->value, -INFINITY, station->water_temp_summer.value);
+    if (summer && station->water_temp_normal.known)
+        hold_within(&input->value, station->water_temp_normal.value, INFINITY);
 }
 
 static void gas(struct sl_plan *plan)

@@ -30,8 +30,10 @@ static size_t running_max(const struct sl_dossier *dossier)
 {
     const struct sl_number *most = &dossier->record.pumps_running_max;
 
-    if (!most->known || most->value >= (double)dossier->pump_count)
-        return dossier->pump_count;
+    size_t all = dossier->pump_count + (size_t)dossier->rejected_pumps;
+
+    if (!most->known || most->value >= (double)all)
+        return all;
     return most->value < 1 ? 1 : (size_t)most->value;
 }
 
@@ -47,6 +49,8 @@ static double others_flow(const struct sl_plan *plans, size_t pump,
         sl_arena_new(plans[pump].arena, dossier->pump_count, sizeof *flows);
     double sum = 0;
 
+    if (beside && dossier->rejected_pumps)
+        return NAN; /* it may draw through this pipe, nobody knows how much */
     for (size_t i = 0; i < dossier->pump_count; i++) {
         if (i == pump || !draws_through(&dossier->pumps[i], pipe))
             continue;
@@ -78,10 +82,14 @@ static void share_pipes(struct sl_plan *plans, size_t pump,
         sl_plan_set(plan, SL_IN_RUNNING_TOGETHER,
                     known ? SL_DERIVED : SL_ASSUMED,
                     (struct sl_interval){0, NAN, 0},
-                    known ? "others that may run beside it, at their largest "
-                            "flow, in the pipes they share"
-                          : "pumps_running_max is not recorded: all others, "
-                            "at their largest flow, in the pipes they share");
+                    plan->dossier->rejected_pumps
+                        ? "a pump of the station was rejected (see "
+                          "findings.csv); what it takes from shared pipes is "
+                          "not known"
+                    : known ? "others that may run beside it, at their largest "
+                              "flow, in the pipes they share"
+                            : "pumps_running_max is not recorded: all others, "
+                              "at their largest flow, in the pipes they share");
 }
 
 static void evaluate_condition(const struct sl_dossier *dossier,
@@ -156,4 +164,7 @@ void sl_evaluate_station(const struct sl_dossier *dossier,
     }
     if (result->worst)
         result->state = result->worst->state;
+    /* A pump that was rejected is not judged; the station is not clear. */
+    if (result->state == SL_CLEAR && dossier->rejected_pumps)
+        result->state = SL_UNPROVEN;
 }

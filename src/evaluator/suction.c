@@ -189,15 +189,25 @@ static void fittings(struct sl_plan *plan)
                 !(plan->inputs[SL_IN_SOURCE_LEVEL].value.typical >=
                   plan->inputs[SL_IN_DATUM].value.typical);
     size_t recorded = 0;
+    bool rejected = false;
 
     for (size_t i = 0; i < plan->path_count; i++) {
         struct sl_path_pipe *place = &plan->path[i];
 
         recorded += place->pipe->fitting_count;
+        rejected = rejected || place->pipe->rejected_fittings > 0;
         provenance = weaker(provenance, fittings_of(plan, place));
         sum.typical += place->minor_k.typical;
         sum.adverse += place->minor_k.adverse;
         sum.favourable += place->minor_k.favourable;
+    }
+    if (rejected) {
+        sum.adverse = NAN;
+        plan->path[plan->path_count - 1].minor_k.adverse = NAN;
+        sl_plan_set(plan, SL_IN_SUCTION_MINOR, SL_UNKNOWN, sum,
+                    "a fitting of the path was rejected (see findings.csv); "
+                    "what it loses is not counted");
+        return;
     }
     if (recorded) {
         sl_plan_set(plan, SL_IN_SUCTION_MINOR, provenance, sum,

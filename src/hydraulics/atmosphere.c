@@ -2,15 +2,26 @@
 
 #include <math.h>
 
+#define SEA_LEVEL 101325.0 /* Pa */
+#define TEMPERATURE 288.15 /* K, at sea level */
+#define LAPSE 0.0065       /* K/m */
+#define EXPONENT 5.255876  /* g0 M / (R lapse) */
+#define LOWEST (-1000.0)   /* m */
+#define HIGHEST 11000.0    /* m */
+
 double sl_standard_atmosphere(double altitude)
 {
-    const double sea_level = 101325.0; /* Pa */
-    const double temperature = 288.15; /* K, at sea level */
-    const double lapse = 0.0065;       /* K/m */
-    const double exponent = 5.255876;  /* g0 M / (R lapse) */
-
-    if (!(altitude >= -1000.0 && altitude <= 11000.0))
+    if (!(altitude >= LOWEST && altitude <= HIGHEST))
         return NAN;
-    return sea_level *
-           pow(1.0 - lapse * altitude / temperature, exponent); /* F6 */
+    return SEA_LEVEL *
+           pow(1.0 - LAPSE * altitude / TEMPERATURE, EXPONENT); /* F6 */
+}
+
+double sl_standard_altitude(double pressure)
+{
+    if (!(pressure <= sl_standard_atmosphere(LOWEST) &&
+          pressure >= sl_standard_atmosphere(HIGHEST)))
+        return NAN;
+    return (1.0 - pow(pressure / SEA_LEVEL, 1.0 / EXPONENT)) * TEMPERATURE /
+           LAPSE; /* F6 */
 }

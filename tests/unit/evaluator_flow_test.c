@@ -1,0 +1,511 @@
+/* The flow a pump is judged at: how it is found, what a speed does to it,
+ * and what other pumps add to the pipes they share. */
+#include <setjmp.h>
+#include <stdarg.h>
+#include <stddef.h>
+#include <stdint.h>
+#include <string.h>
+
+#include <cmocka.h>
+
+#include "evaluator/solve.h"
+#include "unit/evaluator_fixture.h"
+
+static const double summer_kelvin = 299.35;
+
+/* What the station asks of pump A in summer, by the formulas. */
+static double asked_head(double flow, double lift)
+{
+    double part = flow / 0.06;
+
+    return lift + 4.7 * part * part +
+           friction_of(flow, suction_length, suction_bore, suction_wall,
+                       summer_kelvin) +
+           minor_of(flow, suction_bore, suction_k);
+}
+
+/* By bisection, with a curve of so many times the published speed. */
+static double expected_flow(double lift, double ratio)
+{
+    const struct sl_curve_view head = {curve_flow, curve_head, POINTS};
+    double low = curve_flow[0] * ratio, high = curve_flow[POINTS - 1] * ratio;
+
+    for (int i = 0; i < 90; i++) {
+        double flow = (low + high) / 2;
+        double given = ratio * ratio * sl_curve_carried_on(&head, flow / ratio);
+
+        if (given > asked_head(flow, lift))
+            low = flow;
+        else
+            high = flow;
+    }
+    return low;
+}
+
+static void basis_goes_from_best_to_worst(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    f->pumps[0].record.largest_recorded_flow = known(0.0571);
+    f->pumps[0].record.rated_flow = known(0.0523);
+    pump = summer(f);
+    assert_int_equal(pump->flow_basis, SL_FLOW_SOLVED);
+    check_close("solved", pump->cases[SL_TYPICAL].flow,
+                expected_flow(327.3 - 298.35, 1), 1e-10, 0);
+
+    forget(&f->dossier.record.discharge_loss_flow);
+    pump = summer(f);
+    assert_int_equal(pump->flow_basis, SL_FLOW_RECORDED);
+    check_close("recorded", pump->cases[SL_TYPICAL].flow, 0.0571, 0, 0);
+    check_state("recorded", pump, SL_UNPROVEN, SL_CLEAR);
+    assert_false(pump->inputs[SL_IN_DISCHARGE_LOSS].applies);
+    assert_false(pump->inputs[SL_IN_DISCHARGE_LEVEL].applies);
+
+    forget(&f->pumps[0].record.largest_recorded_flow);
+    pump = summer(f);
+    assert_int_equal(pump->flow_basis, SL_FLOW_RATED);
+    check_close("rated", pump->cases[SL_TYPICAL].flow, 0.0523, 0, 0);
+    check_state("rated", pump, SL_UNPROVEN, SL_CLEAR);
+
+    forget(&f->pumps[0].record.rated_flow);
+    pump = summer(f);
+    assert_int_equal(pump->flow_basis, SL_FLOW_NONE);
+    check_nan("none", pump->cases[SL_TYPICAL].flow);
+    check_state("none", pump, SL_UNPROVEN, SL_UNPROVEN);
+}
+
+static void recorded_flow_is_seen_on_the_npshr_curve(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_curve_view curve = npshr_curve();
+    const struct sl_case *best;
+
+    fix_flow(f, 0.0733);
+    best = &summer(f)->cases[SL_FAVOURABLE];
+    check_close("npshr", best->npshr, sl_curve_at(&curve, 0.0733), 1e-12, 0);
+    check_nan("runout", f->result.worst->cases[SL_ADVERSE].flow);
+    fix_flow(f, 0.0887);
+    assert_true(summer(f)->off_curve);
+    check_nan("past its end", f->result.worst->cases[SL_TYPICAL].npshr);
+    check_state("past its end", f->result.worst, SL_UNPROVEN, SL_UNPROVEN);
+    assert_non_null(strstr(f->result.worst->reason, "leaves the published"));
+}
+
+/* The discharge lies so low that the pump runs past its last point. */
+static void runout_past_the_curve_is_unproven(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    f->dossier.record.discharge_low = known(306.9);
+    pump = summer(f);
+    assert_true(pump->off_curve);
+    assert_true(pump->cases[SL_TYPICAL].flow > curve_flow[POINTS - 1]);
+    check_nan("npshr", pump->cases[SL_TYPICAL].npshr);
+    check_state("past the end", pump, SL_UNPROVEN, SL_UNPROVEN);
+    /* In the usual case it stays on its curve. */
+    check_state("usual", &f->result.conditions[CONDITION_NORMAL].pumps[0],
+                SL_CLEAR, SL_CLEAR);
+}
+
+/* NPSHR published further than the head proves nothing: the flow there is a
+ * guess.  And far under its eye nothing is proven either. */
+static void npshr_past_the_head_curve_is_not_used(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    forget(&f->points[POINTS - 1].head);
+    f->dossier.record.discharge_low = known(316.3);
+    pump = summer(f);
+    assert_true(pump->cases[SL_TYPICAL].flow > curve_flow[POINTS - 2]);
+    assert_true(pump->cases[SL_TYPICAL].flow < curve_flow[POINTS - 1]);
+    assert_true(pump->off_curve);
+    check_state("on a guess", pump, SL_UNPROVEN, SL_UNPROVEN);
+    f->pumps[0].record.datum_elevation = known(315.2);
+    check_state("on a guess, high", summer(f), SL_UNPROVEN, SL_UNPROVEN);
+}
+
+static void flow_before_the_first_point_is_unproven(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    f->dossier.record.discharge_low = known(298.35 + 44.9);
+    pump = summer(f);
+    assert_true(pump->cases[SL_TYPICAL].flow < curve_flow[0]);
+    assert_true(pump->off_curve);
+    check_state("before the first", pump, SL_UNPROVEN, SL_UNPROVEN);
+}
+
+static void flat_curve_without_a_crossing_is_unproven(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    for (int i = 0; i < POINTS; i++)
+        f->points[i].head = known(417.3);
+    pump = summer(f);
+    assert_true(pump->off_curve);
+    check_nan("no flow", pump->cases[SL_TYPICAL].flow);
+    check_state("no crossing", pump, SL_UNPROVEN, SL_UNPROVEN);
+}
+
+static void pump_that_stands_says_so(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    f->dossier.record.discharge_low = known(351.7);
+    pump = summer(f);
+    assert_true(pump->stands);
+    assert_false(pump->off_curve);
+    check_state("stands", pump, SL_UNPROVEN, SL_UNPROVEN);
+    assert_non_null(strstr(pump->reason, "does not reach"));
+}
+
+/* --- speed ---------------------------------------------------------------- */
+
+static void faster_pump_is_scaled_with_exponent_two(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_curve_view curve = npshr_curve();
+    const struct sl_pump_result *pump;
+    double ratio = 1591.0 / 1478.0, flow;
+
+    f->pumps[0].record.max_speed = known(1591);
+    pump = summer(f);
+    flow = expected_flow(327.3 - 298.35, ratio);
+    check_close("flow", pump->cases[SL_TYPICAL].flow, flow, 1e-10, 0);
+    check_close("npshr", pump->cases[SL_TYPICAL].npshr,
+                ratio * ratio * sl_curve_at(&curve, flow / ratio), 1e-9, 0);
+    assert_non_null(pump->inputs[SL_IN_NPSHR].row);
+    assert_string_equal(pump->inputs[SL_IN_NPSHR].row->field,
+                        "npshr_speed_exponent_up");
+    check_provenance("speed", &pump->inputs[SL_IN_SPEED], SL_RECORDED);
+}
+
+static void slower_pump_is_scaled_with_exponent_one_and_a_half(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_curve_view curve = npshr_curve();
+    const struct sl_pump_result *pump;
+    double ratio = 1391.0 / 1478.0, flow;
+
+    f->pumps[0].record.max_speed = known(1391);
+    pump = summer(f);
+    flow = expected_flow(327.3 - 298.35, ratio);
+    check_close("flow", pump->cases[SL_TYPICAL].flow, flow, 1e-10, 0);
+    check_close("npshr", pump->cases[SL_TYPICAL].npshr,
+                pow(ratio, 1.5) * sl_curve_at(&curve, flow / ratio), 1e-9, 0);
+    assert_string_equal(pump->inputs[SL_IN_NPSHR].row->field,
+                        "npshr_speed_exponent_down");
+}
+
+/* The test's speed is the curve's, not the rated one, where it is given. */
+static void curve_with_a_speed_is_scaled_from_it(void **state)
+{
+    struct fixture *f = *state;
+    double from_test, ratio = 1478.0 / 1391.0;
+
+    f->points[2].speed = known(1391);
+    from_test = summer(f)->cases[SL_TYPICAL].flow;
+    check_close("flow", from_test, expected_flow(327.3 - 298.35, ratio), 1e-10,
+                0);
+    check_provenance("no higher speed", &f->result.worst->inputs[SL_IN_SPEED],
+                     SL_DERIVED);
+}
+
+static void no_speed_at_all_leaves_the_curve_as_it_is(void **state)
+{
+    struct fixture *f = *state;
+    double as_it_is = summer(f)->cases[SL_TYPICAL].flow;
+
+    forget(&f->pumps[0].record.rated_speed);
+    check_close("flow", summer(f)->cases[SL_TYPICAL].flow, as_it_is, 0, 0);
+    check_state("no speed", f->result.worst, SL_CLEAR, SL_CLEAR);
+    assert_false(f->result.worst->inputs[SL_IN_SPEED].applies);
+}
+
+static void rate_without_curve(struct fixture *f)
+{
+    f->pumps[0].curve = NULL;
+    f->pumps[0].record.rated_flow = known(0.0523);
+    f->pumps[0].record.rated_npshr = known(2.61);
+}
+
+static void rated_point_is_scaled_like_a_curve(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_case *typical;
+    double up = 1591.0 / 1478.0, down = 1391.0 / 1478.0;
+
+    rate_without_curve(f);
+    f->pumps[0].record.max_speed = known(1591);
+    typical = &summer(f)->cases[SL_TYPICAL];
+    check_close("flow up", typical->flow, 0.0523 * up, 1e-12, 0);
+    check_close("npshr up", typical->npshr, 2.61 * up * up, 1e-12, 0);
+    f->pumps[0].record.max_speed = known(1391);
+    typical = &summer(f)->cases[SL_TYPICAL];
+    check_close("flow down", typical->flow, 0.0523 * down, 1e-12, 0);
+    check_close("npshr down", typical->npshr, 2.61 * pow(down, 1.5), 1e-12, 0);
+}
+
+/* Without a rated speed the rated point is taken at that of the test. */
+static void rated_point_takes_the_speed_of_the_test(void **state)
+{
+    struct fixture *f = *state;
+    double down = 1391.0 / 1478.0;
+
+    for (int i = 0; i < POINTS; i++)
+        forget(&f->points[i].npshr);
+    f->points[0].speed = known(1478);
+    f->pumps[0].record.rated_flow = known(0.0523);
+    f->pumps[0].record.rated_npshr = known(2.61);
+    forget(&f->pumps[0].record.rated_speed);
+    f->pumps[0].record.max_speed = known(1391);
+    check_close("npshr", summer(f)->cases[SL_TYPICAL].npshr,
+                2.61 * pow(down, 1.5), 1e-12, 0);
+}
+
+/* --- pipes that pumps share ----------------------------------------------- */
+
+/* A and B draw through pipe D, C from the source alone. */
+static void share_a_header(struct fixture *f)
+{
+    f->pipes[0].draws_from = &f->pipes[3];
+    f->pipes[1].draws_from = &f->pipes[3];
+    f->pipes[3].fitting_count = 0;
+    f->pipes[3].record.length = known(63.7);
+    f->dossier.pump_count = 3;
+    f->dossier.record.pumps_running_max = known(3);
+}
+
+static double header_friction(double flow)
+{
+    return friction_of(flow, 63.7, suction_bore, suction_wall, summer_kelvin);
+}
+
+static void others_load_a_shared_pipe_at_the_adverse_end(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *a, *c;
+    double flow, own;
+
+    share_a_header(f);
+    a = summer(f);
+    flow = a->cases[SL_TYPICAL].flow;
+    own = friction_of(flow, suction_length, suction_bore, suction_wall,
+                      summer_kelvin);
+    check_close("alone", a->cases[SL_TYPICAL].terms.friction,
+                -(own + header_friction(flow)), 1e-10, 0);
+    check_close("its own flow stays", a->cases[SL_ADVERSE].flow, flow, 0, 0);
+    check_close("together", a->cases[SL_ADVERSE].terms.friction,
+                -(own + header_friction(2 * flow)), 1e-10, 0);
+    check_close("at best alone", a->cases[SL_FAVOURABLE].surplus,
+                a->cases[SL_TYPICAL].surplus, 0, 0);
+    check_provenance("together", &a->inputs[SL_IN_RUNNING_TOGETHER],
+                     SL_DERIVED);
+    check_close("loss", a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse,
+                header_friction(2 * flow) - header_friction(flow), 1e-9, 0);
+    c = &f->result.conditions[CONDITION_SUMMER].pumps[2];
+    assert_false(c->inputs[SL_IN_RUNNING_TOGETHER].applies);
+    check_close("C shares none", c->cases[SL_ADVERSE].surplus,
+                c->cases[SL_TYPICAL].surplus, 0, 0);
+}
+
+static void others_are_limited_by_what_may_run(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *a;
+    double flow, all;
+
+    share_a_header(f);
+    f->pipes[2].draws_from = &f->pipes[3]; /* C shares it too */
+    f->pumps[1].record.max_speed = known(1391);
+    flow = summer(f)->cases[SL_TYPICAL].flow;
+
+    /* Two may run: beside A the larger of B and C, which is C. */
+    f->dossier.record.pumps_running_max = known(2);
+    a = summer(f);
+    check_close("two", a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse,
+                header_friction(2 * flow) - header_friction(flow), 1e-9, 0);
+
+    f->dossier.record.pumps_running_max = known(1);
+    assert_false(summer(f)->inputs[SL_IN_RUNNING_TOGETHER].applies);
+
+    /* Not recorded: all, and that alone keeps no pump from clear. */
+    forget(&f->dossier.record.pumps_running_max);
+    a = summer(f);
+    check_provenance("all", &a->inputs[SL_IN_RUNNING_TOGETHER], SL_ASSUMED);
+    assert_true(a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse >
+                header_friction(2 * flow) - header_friction(flow));
+    check_state("all", a, SL_CLEAR, SL_CLEAR);
+    all = a->cases[SL_ADVERSE].surplus;
+
+    /* More than there are is all. */
+    f->dossier.record.pumps_running_max = known(7);
+    check_close("seven", summer(f)->cases[SL_ADVERSE].surplus, all, 0, 0);
+}
+
+static void running_together_can_keep_from_clear(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *a;
+    double together;
+
+    share_a_header(f);
+    a = summer(f);
+    together = a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse;
+    f->pumps[0].record.datum_elevation.value +=
+        a->cases[SL_TYPICAL].surplus - together / 2;
+    a = summer(f);
+    check_state("alone clear, together not", a, SL_UNPROVEN, SL_CLEAR);
+    assert_ptr_equal(a->leading_unknown, &a->inputs[SL_IN_RUNNING_TOGETHER]);
+    assert_true(a->leading_unknown->settles);
+    check_close("swing", a->leading_unknown->swing, together, 1e-9, 0);
+}
+
+static void
+pump_without_a_bound_leaves_the_shared_loss_without_one(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *a;
+
+    share_a_header(f);
+    f->pumps[1].curve = NULL;
+    f->pumps[1].record.rated_flow = known(0.0523);
+    f->pumps[1].record.rated_npshr = known(2.61);
+    a = summer(f);
+    check_nan("loss", a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse);
+    check_state("neighbour", a, SL_UNPROVEN, SL_CLEAR);
+    /* With one pump at a time the neighbour does not matter. */
+    f->dossier.record.pumps_running_max = known(1);
+    check_state("alone", summer(f), SL_CLEAR, SL_CLEAR);
+}
+
+static void pump_that_stands_adds_nothing(void **state)
+{
+    struct fixture *f = *state;
+
+    share_a_header(f);
+    f->pumps[1].record.max_speed = known(1013);
+    assert_false(summer(f)->inputs[SL_IN_RUNNING_TOGETHER].applies);
+    assert_true(f->result.conditions[CONDITION_SUMMER].pumps[1].stands);
+}
+
+/* The usual level not recorded bounds the flow of the others too: the
+ * lowest one, at which this pump is judged, is the one they have. */
+static void one_source_serves_all_pumps(void **state)
+{
+    struct fixture *f = *state;
+
+    share_a_header(f);
+    forget(&f->dossier.record.normal_level);
+    check_state("usual", judge_a(f, CONDITION_NORMAL), SL_CLEAR, SL_CLEAR);
+}
+
+static void one_main_serves_all_pumps(void **state)
+{
+    struct fixture *f = *state;
+
+    share_a_header(f);
+    f->dossier.record.source_kind = SL_MAIN;
+    f->dossier.record.source_pressure_low = known(11700);
+    f->dossier.record.source_pressure_elevation = known(297.74);
+    check_state("usual", judge_a(f, CONDITION_NORMAL), SL_CLEAR, SL_CLEAR);
+}
+
+/* An unknown eye does not hide what the others cost. */
+static void shared_loss_is_known_without_the_datum(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *a;
+
+    share_a_header(f);
+    forget(&f->pumps[0].record.datum_elevation);
+    a = summer(f);
+    assert_true(a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse > 0.1);
+    assert_ptr_equal(a->leading_unknown, &a->inputs[SL_IN_DATUM]);
+    assert_true(a->leading_unknown->settles);
+}
+
+/* Suction losses at their adverse end are not let lessen the flow. */
+static void adverse_suction_does_not_lessen_the_flow(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_case *cases;
+
+    forget(&f->pipes[0].record.roughness);
+    f->pipes[0].fitting_count = 0;
+    cases = summer(f)->cases;
+    check_close("flow", cases[SL_ADVERSE].flow, cases[SL_FAVOURABLE].flow, 0,
+                0);
+    assert_true(cases[SL_TYPICAL].flow < cases[SL_FAVOURABLE].flow);
+    check_close("K", cases[SL_ADVERSE].terms.minor,
+                -minor_of(cases[SL_ADVERSE].flow, suction_bore, 2.13), 1e-12,
+                0);
+}
+
+/* More loss in the suction, or a smoother discharge: the bound holds. */
+static void most_flow_bounds_the_flow_of_every_corner(void **state)
+{
+    struct fixture *f = *state;
+    struct sl_plan plan;
+    double most;
+
+    forget(&f->pipes[0].record.roughness);
+    forget(&f->dossier.record.water_temp_summer);
+    forget(&f->dossier.record.discharge_loss_flow);
+    f->dossier.record.discharge_length = known(812);
+    f->dossier.record.discharge_bore = known(0.263);
+    sl_plan_make(&plan, &f->dossier, &f->pumps[0],
+                 &conditions[CONDITION_SUMMER], &f->tables, &f->rule,
+                 &f->arena);
+    most = sl_solve_most_flow(&plan);
+    assert_true(most > 0.055 && most < 0.088);
+    for (int corner = 0; corner < SL_CORNER_COUNT; corner++) {
+        struct sl_ends ends = sl_ends_all((enum sl_corner)corner);
+        struct sl_case solved;
+        struct sl_case_notes notes;
+
+        sl_solve_case(&plan, &ends, &solved, &notes);
+        assert_true(solved.flow <= most);
+        assert_true(solved.flow > 0.04);
+    }
+}
+
+#define TEST(test)                                                             \
+    cmocka_unit_test_setup_teardown(test, fixture_setup, fixture_teardown)
+
+int main(void)
+{
+    const struct CMUnitTest tests[] = {
+        TEST(basis_goes_from_best_to_worst),
+        TEST(recorded_flow_is_seen_on_the_npshr_curve),
+        TEST(runout_past_the_curve_is_unproven),
+        TEST(npshr_past_the_head_curve_is_not_used),
+        TEST(flow_before_the_first_point_is_unproven),
+        TEST(flat_curve_without_a_crossing_is_unproven),
+        TEST(pump_that_stands_says_so),
+        TEST(faster_pump_is_scaled_with_exponent_two),
+        TEST(slower_pump_is_scaled_with_exponent_one_and_a_half),
+        TEST(curve_with_a_speed_is_scaled_from_it),
+        TEST(no_speed_at_all_leaves_the_curve_as_it_is),
+        TEST(rated_point_is_scaled_like_a_curve),
+        TEST(rated_point_takes_the_speed_of_the_test),
+        TEST(others_load_a_shared_pipe_at_the_adverse_end),
+        TEST(others_are_limited_by_what_may_run),
+        TEST(running_together_can_keep_from_clear),
+        TEST(pump_without_a_bound_leaves_the_shared_loss_without_one),
+        TEST(pump_that_stands_adds_nothing),
+        TEST(one_source_serves_all_pumps),
+        TEST(one_main_serves_all_pumps),
+        TEST(shared_loss_is_known_without_the_datum),
+        TEST(adverse_suction_does_not_lessen_the_flow),
+        TEST(most_flow_bounds_the_flow_of_every_corner),
+    };
+
+    return cmocka_run_group_tests(tests, NULL, NULL);
+}
