@@ -100,9 +100,10 @@ needed-to-test:
 
 # --- building --------------------------------------------------------------
 
-$(OUT)/summerlow: $(OBJECTS)
+# The folders stand for the files that were taken out of them.
+$(OUT)/summerlow: $(OBJECTS) $(ROOMS:%=src/%)
 	@echo "ld $@"
-	@$(CC) $(LINKING) -o $@ $^ $(LIBRARIES)
+	@$(CC) $(LINKING) -o $@ $(OBJECTS) $(LIBRARIES)
 
 $(OUT)/%.o: %.c | $(CATALOGUE) $(STYLE)
 	@mkdir -p $(@D)
@@ -113,7 +114,7 @@ $(OUT)/catalogue.o: $(CATALOGUE)
 	@mkdir -p $(@D)
 	@$(CC) $(CPPFLAGS) $(CFLAGS) -Wno-overlength-strings -MMD -MP -c -o $@ $<
 
-$(CATALOGUE): $(SQL) src/store/embed.sh
+$(CATALOGUE): $(SQL) $(wildcard sql/*) src/store/embed.sh
 	@sh src/store/embed.sh $(GENERATED)
 
 $(STYLE): src/ranker/report.css src/ranker/embed.sh
@@ -142,12 +143,14 @@ sample: ## make the sample inventory anew
 	python3 tests/sample/generate.py sample-inventory
 
 install: all ## install into DESTDIR and prefix
-	install -d $(DESTDIR)$(bindir) $(DESTDIR)$(mandir)/man1
-	install -m 755 $(OUT)/summerlow $(DESTDIR)$(bindir)/summerlow
-	install -m 644 docs/summerlow.1 $(DESTDIR)$(mandir)/man1/summerlow.1
+	install -d "$(DESTDIR)$(bindir)" "$(DESTDIR)$(mandir)/man1"
+	install -m 755 $(OUT)/summerlow "$(DESTDIR)$(bindir)/summerlow"
+	install -m 644 docs/summerlow.1 \
+	    "$(DESTDIR)$(mandir)/man1/summerlow.1"
 
 uninstall: ## take out what install put in
-	rm -f $(DESTDIR)$(bindir)/summerlow $(DESTDIR)$(mandir)/man1/summerlow.1
+	rm -f "$(DESTDIR)$(bindir)/summerlow" \
+	    "$(DESTDIR)$(mandir)/man1/summerlow.1"
 
 tidy: ## format the code
 	clang-format -i include/*/*.h src/*/*.c tests/unit/*.[ch]

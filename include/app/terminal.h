@@ -16,7 +16,9 @@ bool sl_stop_asked(void);
 void sl_progress(const char *what, long long done, long long all);
 void sl_progress_end(void);
 
-/* Text from an inventory, its control characters shown and not sent. */
+/* Text from an inventory; control characters, and the marks that would turn
+ * a line around, are shown by their code ("<1B>", "<202E>") and not sent; so is
+ * each byte that is not UTF-8. */
 void sl_print_safely(FILE *stream, const char *text);
 
 #endif

@@ -31,4 +31,14 @@ bool sl_same(const char *a, const char *b);
  * `length` when all of it is. */
 size_t sl_utf8_valid_length(const char *bytes, size_t length);
 
+/* The bytes of the character that `text` begins with, and its code; 0 and 0
+ * where the `left` bytes do not begin with well-formed UTF-8. */
+size_t sl_utf8_character(const char *text, size_t left, unsigned long *code);
+
+/* A character a reader cannot see, or that would turn the text around:
+ * controls U+0080-009F, bidirectional controls (U+061C, 200E, 200F,
+ * 202A-202E, 2066-2069), separators U+2028 and U+2029, noncharacters.
+ * Controls below U+0080 are for the caller to judge. */
+bool sl_utf8_hidden(unsigned long code);
+
 #endif

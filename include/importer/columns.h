@@ -30,13 +30,16 @@ struct sl_columns {
     struct sl_column *list; /* in the file's order */
     size_t count;           /* without unnamed ones at the end */
     size_t key;             /* the place of the kind's first field */
+    size_t station;         /* the place of its station_id, else of the key */
     long line;              /* of the header */
     struct sl_arena arena;
 };
 
-/* Why an inventory is refused: the first problem, and how many more. */
+/* Why an inventory is refused: as many problems as a message holds, of how
+ * many there are. */
 struct sl_refusal {
-    struct sl_text first;
+    struct sl_text problems;
+    int told;
     int count;
 };
 void sl_refusal_add(struct sl_refusal *refusal, const char *format, ...)

@@ -73,4 +73,11 @@ static inline const char *sl_csv_cell(const struct sl_csv_reader *reader,
     return reader->text + reader->cells[index].at;
 }
 
+/* A cell as far as it is there and fit to be shown; "" where it is not. */
+const char *sl_csv_shown_cell(const struct sl_csv_reader *reader, size_t i);
+
+/* A line of nothing but separators, as a spreadsheet leaves below a table:
+ * it is no more a record than an empty line. */
+bool sl_csv_is_blank(const struct sl_csv_reader *reader);
+
 #endif

@@ -26,10 +26,7 @@ struct sl_sink {
                              const void *record, struct sl_answer *answer,
                              struct sl_error *error);
     /* Note that a record is not kept, and why, with its text as read. */
-    enum sl_status (*set_aside)(void *context, enum sl_kind kind,
-                                enum sl_fate fate, long line,
-                                const char *record_id, const char *reason,
-                                const char *raw, size_t raw_length,
+    enum sl_status (*set_aside)(void *context, const struct sl_aside *aside,
                                 struct sl_error *error);
     /* The next pipe to take back once all pipes are read; *found false when
      * there is none left.  The sink has already removed it. */

@@ -1,7 +1,9 @@
 /* All that the inventory says about one station, in one piece.
  *
  * Everything lives in the arena it was read into.  Pumps are in order of
- * pump_id, pipes of pipe_id, a pipe's fittings in order of line. */
+ * pump_id, pipes of pipe_id, a pipe's fittings in order of line.  What was
+ * rejected on import is counted where it is missed: a sum or a curve without
+ * it is not all there is. */
 #ifndef SL_MODEL_DOSSIER_H
 #define SL_MODEL_DOSSIER_H
 
@@ -14,6 +16,7 @@ struct sl_curve {
     const char *curve_id;
     const struct sl_curve_point *points;
     size_t point_count;
+    long long rejected_points; /* records of it that were not kept */
 };
 
 struct sl_dossier_pipe {
@@ -21,6 +24,7 @@ struct sl_dossier_pipe {
     const struct sl_dossier_pipe *draws_from; /* NULL: the source */
     const struct sl_fitting *fittings;
     size_t fitting_count;
+    long long rejected_fittings; /* records of it that were not kept */
 };
 
 struct sl_dossier_pump {
@@ -36,6 +40,7 @@ struct sl_dossier {
     size_t pump_count;
     struct sl_dossier_pipe *pipes;
     size_t pipe_count;
+    long long rejected_pumps; /* records of it that were not kept */
 };
 
 #endif

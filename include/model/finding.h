@@ -9,6 +9,7 @@
 #include <stddef.h>
 
 #include "base/units.h"
+#include "model/records.h"
 
 enum sl_severity { SL_ERROR, SL_DOUBT, SL_NOTE };
 const char *sl_severity_name(enum sl_severity severity);
@@ -29,6 +30,18 @@ struct sl_finding {
 /* What became of a record.  Each record read has exactly one fate. */
 enum sl_fate { SL_KEPT, SL_REJECTED, SL_OUT_OF_SCOPE };
 const char *sl_fate_name(enum sl_fate fate);
+
+/* A record that is not kept, told by its importer. */
+struct sl_aside {
+    enum sl_kind kind;
+    enum sl_fate fate;
+    long line;
+    const char *record_id;  /* its key, "" when it has none */
+    const char *station_id; /* of a pump or pipe, as written; else "" */
+    const char *reason;
+    const char *raw; /* its text as read */
+    size_t raw_length;
+};
 
 /* One inventory file, counted.  read = kept + rejected + out_of_scope. */
 struct sl_file_sum {

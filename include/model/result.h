@@ -102,6 +102,8 @@ enum sl_quantity sl_input_quantity(enum sl_input_id id);
 struct sl_input {
     enum sl_input_id id;
     bool applies; /* it is part of this pump's balance at all */
+    bool open;    /* not known exactly: finding it out could change the
+                     verdict */
     enum sl_provenance provenance;
     struct sl_interval value; /* SI; NaN where there is no honest figure */
     enum sl_kind kind;        /* of the record it was read from */
@@ -145,7 +147,7 @@ struct sl_pump_result {
     int counts[SL_ASSUMED + 1]; /* inputs that apply, by provenance */
     /* The unknown that matters most; NULL when all is known. */
     const struct sl_input *leading_unknown;
-    struct sl_pipe_loss *losses;            /* from the source to the pump */
+    struct sl_pipe_loss *losses; /* from the source to the pump */
     size_t loss_count;
 };
 

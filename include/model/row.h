@@ -32,11 +32,13 @@ struct sl_pump_row {
 
 struct sl_station_row {
     long rank; /* from 1, within its block */
+    /* Clear pumps beside a rejected one: told as unproven, with the reason. */
     struct sl_pump_row worst;
     enum sl_state state;
     double people_served; /* NaN: not recorded */
     double latitude, longitude;
-    int pumps;
+    int pumps;          /* that were judged */
+    int pumps_rejected; /* that were not kept, so could not be */
     int pumps_by_state[SL_STATE_COUNT];
     long line; /* in stations.csv */
 };

@@ -2,7 +2,8 @@
  * units in the names, numbers with a point and no grouping, empty where
  * unknown.  A text cell that a spreadsheet would take for a formula gets an
  * apostrophe before it; numbers never do.  Control characters but line ends
- * and tabs are shown as their pictures, not sent.
+ * and tabs are shown as their pictures (U+0080-009F, which have none, as
+ * U+FFFD), not sent.
  *
  * Each table is a head, then rows in the order given.  Writing errors latch
  * in the stream and are reported when the file is committed. */

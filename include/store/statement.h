@@ -69,8 +69,9 @@ struct sl_store {
 
     struct sl_last_found last_found[SL_KIND_COUNT];
     /* Whether a vintage has any grade: 0 is no vintage. */
-    long long graded_vintage;
+    long long traits_vintage;
     bool graded;
+    bool has_rejected;
     /* Up to which station the pipes of a vintage were found sound. */
     long long recall_vintage, recall_station;
     /* Written when the transaction is committed or the sums are read. */

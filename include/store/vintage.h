@@ -36,10 +36,7 @@ enum sl_status sl_store_add_record(struct sl_store *store, long long vintage,
                                    struct sl_answer *answer,
                                    struct sl_error *error);
 enum sl_status sl_store_add_set_aside(struct sl_store *store, long long vintage,
-                                      enum sl_kind kind, enum sl_fate fate,
-                                      long line, const char *record_id,
-                                      const char *reason, const char *raw,
-                                      size_t raw_length,
+                                      const struct sl_aside *aside,
                                       struct sl_error *error);
 /* Take back one pipe whose draws_from is not kept, is another station's or
  * leads back to itself: station by station in the order they were kept,

@@ -179,6 +179,7 @@ CREATE TABLE set_aside (
     file TEXT NOT NULL, -- the file's name
     line INTEGER NOT NULL, -- its first line in that file, from 1
     record_id TEXT NOT NULL, -- its key, empty when it has none
+    station_id TEXT NOT NULL, -- of a pump or pipe, as written; else empty
     fate TEXT NOT NULL CHECK (fate IN ('rejected', 'out of scope')),
         -- rejected, or out of scope
     reason TEXT NOT NULL, -- why, in words
@@ -208,4 +209,5 @@ CREATE INDEX drawing_pipes ON suction_pipes (vintage, station, draws_from)
 CREATE INDEX fittings_of_pipe ON suction_fittings (pipe, line);
 CREATE INDEX grades_of_vintage ON grades (vintage);
 CREATE INDEX set_aside_by_record ON set_aside (vintage, file, record_id);
+CREATE INDEX set_aside_by_station ON set_aside (vintage, file, station_id);
 CREATE INDEX findings_of_vintage ON findings (vintage);

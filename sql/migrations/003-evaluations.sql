@@ -20,6 +20,7 @@ CREATE TABLE station_results (
     worst_pump INTEGER, -- that pump's key; NULL: no pump was kept
     worst_condition TEXT, -- that condition; NULL: no pump was kept
     pumps INTEGER NOT NULL, -- how many were judged
+    pumps_rejected INTEGER NOT NULL, -- how many could not be: not kept
     pumps_short INTEGER NOT NULL, -- of these, by their worst condition
     pumps_thin INTEGER NOT NULL, -- likewise
     pumps_unproven INTEGER NOT NULL, -- likewise
@@ -91,7 +92,7 @@ CREATE TABLE unknowns (
     pump INTEGER NOT NULL REFERENCES pumps, -- the pump's key
     condition TEXT NOT NULL, -- the condition's name
     input TEXT NOT NULL, -- the column to fill in
-    provenance TEXT NOT NULL CHECK (provenance IN ('assumed', 'unknown')),
+    provenance TEXT NOT NULL CHECK (provenance IN ('derived', 'assumed', 'unknown')),
         -- assumed: a default stands in; unknown: nothing can
     field TEXT, -- of the default used; NULL: none
     circumstance TEXT, -- of the default used; NULL: none

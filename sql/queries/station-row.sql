@@ -2,7 +2,8 @@
 SELECT
     s.station_id, s.name AS station_name, s.service, s.installation,
     s.people_served, s.latitude, s.longitude, s.line,
-    t.state AS station_state, t.pumps, t.pumps_short, t.pumps_thin,
+    t.state AS station_state, t.pumps, t.pumps_rejected,
+    t.pumps_short, t.pumps_thin,
     t.pumps_unproven, t.pumps_clear,
     p.pump_id, p.make_up, r.condition,
     r.state, r.likely, r.reason, r.flow_basis, r.source_basis,

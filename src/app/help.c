@@ -8,7 +8,7 @@
     "  3    input refused, nothing written\n"                                  \
     "  4    a file or the store could not be read or written\n"                \
     "  70   a bug of ours, or out of memory\n"                                 \
-    "  130  interrupted, nothing changed\n"
+    "  130  interrupted: what was stored or written before is as it was\n"
 
 static const char general[] =
     "summerlow finds the pumps of a portfolio that cavitate in the hottest\n"

@@ -33,17 +33,13 @@ static enum sl_status keep_record(void *context, enum sl_kind kind,
                                kind, record, answer, error);
 }
 
-static enum sl_status set_aside(void *context, enum sl_kind kind,
-                                enum sl_fate fate, long line,
-                                const char *record_id, const char *reason,
-                                const char *raw, size_t raw_length,
+static enum sl_status set_aside(void *context, const struct sl_aside *aside,
                                 struct sl_error *error)
 {
     struct intake *intake = context;
 
-    return sl_store_add_set_aside(
-        intake->run->store, intake->run->vintage.vintage, kind, fate, line,
-        record_id, reason, raw, raw_length, error);
+    return sl_store_add_set_aside(intake->run->store,
+                                  intake->run->vintage.vintage, aside, error);
 }
 
 static enum sl_status recall(void *context, struct sl_recall *taken,

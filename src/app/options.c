@@ -102,6 +102,23 @@ static size_t place_of(int code)
     return i;
 }
 
+/* What getopt could not take: a short option within a word ("-xh") by its
+ * letter, since optind still points before it; else the word. */
+static enum sl_status not_taken(int code, char **words, struct sl_error *error)
+{
+    const char *word = words[optind - 1];
+    char letter[] = {'-', (char)optopt, '\0'};
+
+    if (code == '?' && optopt > 0 && optopt < OPT_STORE)
+        word = letter;
+    return sl_error_set(error, SL_USAGE,
+                        code == '?' ? "the option \"%s\" is not known; see "
+                                      "summerlow --help"
+                                    : "the option \"%s\" needs a value; see "
+                                      "summerlow --help",
+                        word);
+}
+
 static enum sl_status read_options(int count, char **words, unsigned *given,
                                    struct sl_options *options,
                                    struct sl_error *error)
@@ -118,13 +135,7 @@ static enum sl_status read_options(int count, char **words, unsigned *given,
     while (!status &&
            (code = getopt_long(count, words, ":hV", list, NULL)) != -1) {
         if (code == '?' || code == ':')
-            return sl_error_set(error, SL_USAGE,
-                                code == '?'
-                                    ? "the option \"%s\" is not known; see "
-                                      "summerlow --help"
-                                    : "the option \"%s\" needs a value; see "
-                                      "summerlow --help",
-                                words[optind - 1]);
+            return not_taken(code, words, error);
         *given |= 1U << place_of(code);
         status = take(code, optarg, options, error);
     }
@@ -143,6 +154,28 @@ static enum sl_status find_command(const char *word, struct sl_options *options,
                         "\"%s\" is no command; use audit, import, evaluate, "
                         "rank or explain",
                         word);
+}
+
+/* SQLite keeps a store of these names in memory, or reads them as a URI; a
+ * result that nobody can open again is no result. */
+static enum sl_status check_place(const char *option, const char *path,
+                                  struct sl_error *error)
+{
+    if (!path || (path[0] != '\0' && strcmp(path, ":memory:") != 0 &&
+                  strncmp(path, "file:", strlen("file:")) != 0))
+        return SL_OK;
+    return sl_error_set(error, SL_USAGE,
+                        "--%s \"%s\" names no place on disk; give a path, as "
+                        "in ./results",
+                        option, path);
+}
+
+static enum sl_status check_places(const struct sl_options *options,
+                                   struct sl_error *error)
+{
+    enum sl_status status = check_place("store", options->store, error);
+
+    return status ? status : check_place("out", options->out, error);
 }
 
 static enum sl_status check(const struct sl_options *options, unsigned given,
@@ -168,7 +201,7 @@ static enum sl_status check(const struct sl_options *options, unsigned given,
         return sl_error_set(error, SL_USAGE,
                             "%s needs --out DIR; see summerlow %s --help", name,
                             name);
-    return SL_OK;
+    return check_places(options, error);
 }
 
 enum sl_status sl_options_parse(int count, char **words,

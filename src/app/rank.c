@@ -190,33 +190,53 @@ static const struct {
     {"findings.csv", "what the import had to say", write_findings},
 };
 
+#define OUTPUT_COUNT (sizeof outputs / sizeof outputs[0])
+
+/* Written to the last byte, and not yet in its place. */
 static enum sl_status write_one(struct sl_run *run, const char *folder,
                                 size_t which, const struct sl_summary *summary,
+                                struct sl_output *output,
                                 struct sl_error *error)
 {
-    struct sl_output output;
     struct lists lists = {0};
     enum sl_status status =
-        sl_output_open(&output, folder, outputs[which].name, error);
+        sl_output_open(output, folder, outputs[which].name, error);
 
     if (status)
         return status;
     lists.table =
-        (struct sl_table_writer){.stream = output.stream,
+        (struct sl_table_writer){.stream = output->stream,
                                  .units = run->options->units,
                                  .summary = summary,
                                  .vocabularies = &run->tables.vocabularies};
     lists.report =
-        (struct sl_report){.stream = output.stream,
+        (struct sl_report){.stream = output->stream,
                            .units = run->options->units,
                            .summary = summary,
                            .vocabularies = &run->tables.vocabularies};
     status = outputs[which].write(run, &lists, error);
-    if (status) {
-        sl_output_abandon(&output);
-        return status;
-    }
-    return sl_output_commit(&output, error);
+    /* What cannot be written out fails here, before any file is replaced. */
+    if (!status && (fflush(output->stream) != 0 || ferror(output->stream)))
+        status = sl_output_commit(output, error);
+    return status;
+}
+
+/* All files are written before the first is replaced, so that a full disk or
+ * Ctrl-C does not leave lists of two audits in one folder. */
+static enum sl_status write_all(struct sl_run *run, const char *folder,
+                                const struct sl_summary *summary,
+                                struct sl_error *error)
+{
+    struct sl_output files[OUTPUT_COUNT] = {0};
+    enum sl_status status = SL_OK;
+
+    for (size_t i = 0; i < OUTPUT_COUNT && !status; i++)
+        status = write_one(run, folder, i, summary, &files[i], error);
+    for (size_t i = 0; i < OUTPUT_COUNT && !status; i++)
+        status = sl_output_commit(&files[i], error);
+    for (size_t i = 0; i < OUTPUT_COUNT; i++)
+        sl_output_abandon(&files[i]);
+    return status;
 }
 
 enum sl_status sl_run_rank(struct sl_run *run, const char *folder,
@@ -233,13 +253,11 @@ enum sl_status sl_run_rank(struct sl_run *run, const char *folder,
     summary.version = SL_VERSION;
     summary.conditions = run->tables.conditions;
     summary.condition_count = run->tables.condition_count;
-    for (size_t i = 0; i < sizeof outputs / sizeof outputs[0]; i++) {
-        status = write_one(run, folder, i, &summary, error);
-        if (status)
-            return status;
-    }
+    status = write_all(run, folder, &summary, error);
+    if (status)
+        return status;
     puts("Files written:");
-    for (size_t i = 0; i < sizeof outputs / sizeof outputs[0]; i++)
+    for (size_t i = 0; i < OUTPUT_COUNT; i++)
         printf("  %s/%s: %s\n", folder, outputs[i].name, outputs[i].holds);
     return SL_OK;
 }

@@ -136,16 +136,18 @@ static void pipe_line(const struct sl_sheet *sheet,
                       const struct sl_pipe_loss *loss)
 {
     char flow[48], velocity[48], friction[48], minor[48], roughness[48];
+    char reynolds[48], factor[48];
 
     fputs("  ", sheet->stream);
     sl_print_safely(sheet->stream, loss->pipe->record.pipe_id);
     fprintf(sheet->stream,
-            ": flow %s, velocity %s, Re %.0f, roughness %s, f %.5f, friction "
+            ": flow %s, velocity %s, Re %s, roughness %s, f %s, friction "
             "%s, K %.2f, fittings %s (suction_pipes.csv:%ld)\n",
             figure(sheet, SL_FLOW, loss->flow, 1, flow),
             figure(sheet, SL_VELOCITY, loss->velocity, 2, velocity),
-            loss->reynolds,
-            figure(sheet, SL_BORE, loss->roughness, 3, roughness), loss->factor,
+            figure(sheet, SL_PURE, loss->reynolds, 0, reynolds),
+            figure(sheet, SL_BORE, loss->roughness, 3, roughness),
+            figure(sheet, SL_PURE, loss->factor, 5, factor),
             figure(sheet, SL_LENGTH, loss->friction, 3, friction),
             loss->minor_k, figure(sheet, SL_LENGTH, loss->minor, 3, minor),
             loss->pipe->record.line);

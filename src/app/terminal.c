@@ -50,26 +50,27 @@ void sl_progress_end(void)
     fputs("\r\033[K", stderr);
 }
 
-/* The length of a control character at `text`, 0 when it is none: C0, DEL,
- * and C1 as UTF-8 (C2 80 to C2 9F). */
-static size_t control_length(const unsigned char *text)
+/* What a terminal would obey, or what would turn the line around. */
+static bool is_unsafe(unsigned long code)
 {
-    if (text[0] < 0x20 || text[0] == 0x7F)
-        return 1;
-    return text[0] == 0xC2 && text[1] >= 0x80 && text[1] <= 0x9F ? 2 : 0;
+    return code < 0x20 || code == 0x7F || sl_utf8_hidden(code);
 }
 
 void sl_print_safely(FILE *stream, const char *text)
 {
-    const unsigned char *at = (const unsigned char *)text;
+    size_t left = strlen(text);
 
-    while (*at) {
-        size_t control = control_length(at);
+    while (left > 0) {
+        unsigned long code;
+        size_t length = sl_utf8_character(text, left, &code);
 
-        if (control == 0)
-            putc(*at++, stream);
+        if (length > 0 && !is_unsafe(code))
+            fwrite(text, 1, length, stream);
         else
-            fprintf(stream, "<%02X>", at[control - 1]);
-        at += control;
+            fprintf(stream, "<%02lX>",
+                    length ? code : (unsigned long)(unsigned char)*text);
+        length = length ? length : 1;
+        text += length;
+        left -= length;
     }
 }

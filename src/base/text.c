@@ -118,3 +118,43 @@ size_t sl_utf8_valid_length(const char *bytes, size_t length)
     }
     return at;
 }
+
+/* Bytes of the character that begins at `text`, 0 if it is not UTF-8. */
+static size_t character_length(const char *text, size_t left)
+{
+    for (size_t length = 1; length <= 4 && length <= left; length++)
+        if (sl_utf8_valid_length(text, length) == length)
+            return length;
+    return 0;
+}
+
+static unsigned long character_code(const char *text, size_t length)
+{
+    static const unsigned char lead_bits[] = {0, 0x7F, 0x1F, 0x0F, 0x07};
+    unsigned long code = (unsigned char)text[0] & lead_bits[length];
+
+    for (size_t i = 1; i < length; i++)
+        code = code << 6 | ((unsigned char)text[i] & 0x3FU);
+    return code;
+}
+
+bool sl_utf8_hidden(unsigned long code)
+{
+    static const unsigned long ranges[][2] = {
+        {0x80, 0x9F},     {0x061C, 0x061C}, {0x200E, 0x200F},
+        {0x2028, 0x202E}, {0x2066, 0x2069}, {0xFDD0, 0xFDEF},
+    };
+
+    for (size_t i = 0; i < sizeof ranges / sizeof ranges[0]; i++)
+        if (code >= ranges[i][0] && code <= ranges[i][1])
+            return true;
+    return (code & 0xFFFE) == 0xFFFE;
+}
+
+size_t sl_utf8_character(const char *text, size_t left, unsigned long *code)
+{
+    size_t length = character_length(text, left);
+
+    *code = length ? character_code(text, length) : 0;
+    return length;
+}

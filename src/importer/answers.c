@@ -35,8 +35,8 @@ static void no_such(const struct sl_answer *answer, const char *value,
 
     sl_problem_set(problem, reference->no_such,
                    "correct the key, or add the record it names",
-                   "%s \"%s\" is not in %s", reference->field, value,
-                   sl_record_kind(reference->to)->file);
+                   "%s has no \"%s\"", sl_record_kind(reference->to)->file,
+                   value);
 }
 
 static void reference_rejected(const struct sl_answer *answer,

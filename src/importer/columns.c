@@ -17,12 +17,15 @@ void sl_refusal_add(struct sl_refusal *refusal, const char *format, ...)
     char message[REFUSAL_LENGTH];
     va_list arguments;
 
-    if (refusal->count++ > 0)
+    refusal->count++;
+    if (refusal->problems.length > REFUSAL_LENGTH)
         return;
+    refusal->told++;
     va_start(arguments, format);
     vsnprintf(message, sizeof message, format, arguments);
     va_end(arguments);
-    sl_text_add_string(&refusal->first, message);
+    sl_text_addf(&refusal->problems, "%s%s",
+                 refusal->problems.length ? "; also " : "", message);
 }
 
 static bool has_unit(const struct sl_field *field)
@@ -191,6 +194,41 @@ const struct sl_column *sl_columns_of(const struct sl_columns *columns,
     return NULL;
 }
 
+/* The header that may be meant by a column that is not there. */
+static const char *meant_by(const struct sl_columns *columns,
+                            const struct sl_field *field)
+{
+    struct sl_text nearest = {0};
+    const char *header = NULL;
+
+    for (size_t i = 0; !header && i < columns->count; i++) {
+        const char *tried = columns->list[i].header;
+
+        if (!columns->list[i].field &&
+            sl_columns_nearest(columns->kind, tried, &nearest) &&
+            strncmp(sl_text_string(&nearest), field->name,
+                    strlen(field->name)) == 0)
+            header = tried;
+    }
+    sl_text_release(&nearest);
+    return header;
+}
+
+static void refuse_missing(const struct sl_columns *columns,
+                           const struct sl_field *field,
+                           struct sl_refusal *refusal)
+{
+    const char *meant = meant_by(columns, field);
+
+    sl_refusal_add(refusal,
+                   "%s:%ld: column \"%s%s\" is missing; no %s can be read "
+                   "without it%s%s%s",
+                   columns->kind->file, columns->line, field->name,
+                   has_unit(field) ? "_<unit>" : "", columns->kind->name,
+                   meant ? "; if \"" : "", meant ? meant : "",
+                   meant ? "\" is meant, name it so" : "");
+}
+
 static void require(struct sl_columns *columns, struct sl_refusal *refusal)
 {
     const struct sl_record_kind *kind = columns->kind;
@@ -200,13 +238,11 @@ static void require(struct sl_columns *columns, struct sl_refusal *refusal)
         const struct sl_column *column = sl_columns_of(columns, field);
 
         if (field->required && !column)
-            sl_refusal_add(refusal,
-                           "%s:%ld: column \"%s%s\" is missing; no %s can be "
-                           "read without it",
-                           kind->file, columns->line, field->name,
-                           has_unit(field) ? "_<unit>" : "", kind->name);
+            refuse_missing(columns, field, refusal);
         if (i == 0 && column)
-            columns->key = (size_t)(column - columns->list);
+            columns->key = columns->station = (size_t)(column - columns->list);
+        if (column && sl_same(field->name, "station_id"))
+            columns->station = (size_t)(column - columns->list);
     }
 }
 

@@ -235,3 +235,25 @@ enum sl_status sl_csv_reader_next(struct sl_csv_reader *reader,
     }
     return SL_OK;
 }
+
+const char *sl_csv_shown_cell(const struct sl_csv_reader *reader, size_t i)
+{
+    const char *text;
+
+    if (i >= reader->count)
+        return "";
+    text = sl_csv_cell(reader, i);
+    if (strlen(text) < reader->cells[i].length ||
+        sl_utf8_valid_length(text, reader->cells[i].length) <
+            reader->cells[i].length)
+        return "";
+    return text;
+}
+
+bool sl_csv_is_blank(const struct sl_csv_reader *reader)
+{
+    for (size_t i = 0; i < reader->count; i++)
+        if (reader->cells[i].length > 0)
+            return false;
+    return reader->surplus == 0;
+}

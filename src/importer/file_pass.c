@@ -31,21 +31,17 @@ struct pass {
     long long next_progress;
 };
 
-/* The key as far as it is known and fit to be shown. */
 static const char *record_id(const struct pass *pass)
 {
-    const struct sl_csv_reader *reader = &pass->reader;
-    size_t key = pass->as->columns->key;
-    const char *text;
+    return sl_csv_shown_cell(&pass->reader, pass->as->columns->key);
+}
 
-    if (key >= reader->count)
-        return "";
-    text = sl_csv_cell(reader, key);
-    if (strlen(text) < reader->cells[key].length ||
-        sl_utf8_valid_length(text, reader->cells[key].length) <
-            reader->cells[key].length)
-        return "";
-    return text;
+/* The station that a pump or pipe says it belongs to, "" for other kinds. */
+static const char *station_of(const struct pass *pass)
+{
+    return pass->as->columns->station == pass->as->columns->key
+               ? ""
+               : sl_csv_shown_cell(&pass->reader, pass->as->columns->station);
 }
 
 static enum sl_status tell(const struct pass *pass, enum sl_severity severity,
@@ -104,14 +100,20 @@ static enum sl_status set_aside(struct pass *pass, enum sl_fate fate,
                                 const char *reason, struct sl_error *error)
 {
     const struct sl_sink *sink = pass->as->sink;
+    struct sl_aside aside = {.kind = pass->as->kind,
+                             .fate = fate,
+                             .line = pass->reader.line,
+                             .record_id = record_id(pass),
+                             .station_id = station_of(pass),
+                             .reason = reason,
+                             .raw = pass->reader.raw,
+                             .raw_length = pass->reader.raw_length};
 
     if (fate == SL_REJECTED)
         pass->as->sum->rejected++;
     else
         pass->as->sum->out_of_scope++;
-    return sink->set_aside(sink->context, pass->as->kind, fate,
-                           pass->reader.line, record_id(pass), reason,
-                           pass->reader.raw, pass->reader.raw_length, error);
+    return sink->set_aside(sink->context, &aside, error);
 }
 
 static enum sl_status reject(struct pass *pass, struct sl_error *error)
@@ -260,6 +262,8 @@ static enum sl_status take_record(struct pass *pass,
     size_t wanted = pass->as->columns->count;
     enum sl_status status;
 
+    if (outcome == SL_CSV_RECORD && sl_csv_is_blank(reader))
+        return SL_OK;
     pass->errors = 0;
     pass->as->sum->read++;
     if (outcome != SL_CSV_RECORD) {

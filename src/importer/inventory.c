@@ -175,14 +175,15 @@ enum sl_status sl_inventory_read_headers(struct sl_inventory *inventory,
 
     for (int i = 0; i < SL_KIND_COUNT && !status; i++)
         status = first_pass(inventory, i, &refusal, error);
-    if (!status && refusal.count > 1)
-        sl_text_addf(&refusal.first, " (and %d more)", refusal.count - 1);
+    if (!status && refusal.count > refusal.told)
+        sl_text_addf(&refusal.problems, " (and %d more)",
+                     refusal.count - refusal.told);
     if (!status && refusal.count > 0)
         status = sl_error_set(error, SL_REFUSED, "%s",
-                              sl_text_string(&refusal.first));
+                              sl_text_string(&refusal.problems));
     if (!status)
         hash_all(inventory);
-    sl_text_release(&refusal.first);
+    sl_text_release(&refusal.problems);
     return status;
 }
 

@@ -21,6 +21,12 @@ static enum sl_status take_back(const struct sl_file_pass *pass,
         .reason = sl_text_string(&problem->reason),
         .remedy = sl_text_string(&problem->remedy),
     };
+    struct sl_aside aside = {.kind = pass->kind,
+                             .line = recall->line,
+                             .record_id = recall->record_id,
+                             .station_id = "",
+                             .reason = finding.reason,
+                             .raw = ""};
     enum sl_status status = SL_OK;
 
     if (fate == SL_KEPT)
@@ -35,10 +41,9 @@ static enum sl_status take_back(const struct sl_file_pass *pass,
         pass->sum->out_of_scope++;
     }
     /* Its text went by long ago. */
+    aside.fate = fate;
     if (!status)
-        status =
-            sink->set_aside(sink->context, pass->kind, fate, recall->line,
-                            recall->record_id, finding.reason, "", 0, error);
+        status = sink->set_aside(sink->context, &aside, error);
     return status;
 }
 

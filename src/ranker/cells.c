@@ -20,24 +20,35 @@ static void write_character(FILE *stream, char character)
     fputc(code == 0x7F ? 0xA1 : 0x80 + code, stream);
 }
 
-static void write_quoted(FILE *stream, const char *text)
+/* U+0080 to U+009F: controls too, and without a picture. */
+static bool is_late_control(const char *text)
 {
-    fputc('"', stream);
+    return (unsigned char)text[0] == 0xC2 && (unsigned char)text[1] >= 0x80 &&
+           (unsigned char)text[1] <= 0x9F;
+}
+
+static void write_characters(FILE *stream, const char *text)
+{
     for (; *text != '\0'; text++) {
+        if (is_late_control(text)) {
+            fputs("\uFFFD", stream);
+            text++;
+            continue;
+        }
         if (*text == '"')
             fputc('"', stream);
         write_character(stream, *text);
     }
-    fputc('"', stream);
 }
 
+/* A quote is doubled within quotes, and is not met outside them. */
 static void write_plain_or_quoted(FILE *stream, const char *text)
 {
-    if (strpbrk(text, ",\"\r\n"))
-        write_quoted(stream, text);
-    else
-        for (; *text != '\0'; text++)
-            write_character(stream, *text);
+    const char *quote = strpbrk(text, ",\"\r\n") ? "\"" : "";
+
+    fputs(quote, stream);
+    write_characters(stream, text);
+    fputs(quote, stream);
 }
 
 static void begin_cell(struct sl_cells *cells)

@@ -4,6 +4,9 @@
 
 #include "ranker/digits.h"
 
+/* Of an interval; as many as sl_digits_decimals() gives. */
+#define MOST_DECIMALS 4
+
 static void write_column_head(const struct sl_report *report,
                               const struct sl_page_column *column)
 {
@@ -184,17 +187,33 @@ void sl_page_quantity(const struct sl_report *report, enum sl_quantity quantity,
         write_unit(report, quantity);
 }
 
+/* Shown with so many decimals it would read as zero, and is not. */
+static bool reads_as_zero(double shown, int decimals)
+{
+    return isfinite(shown) && shown != 0 &&
+           fabs(shown) < 0.5 * pow(10, -decimals);
+}
+
 /* Heads, levels and temperatures have one decimal; the rest, from bores to
- * roughness, about three digits. */
+ * roughness, about three digits; more, to four, where one of the three would
+ * else be shown as a zero. */
 static int interval_decimals(const struct sl_report *report,
                              enum sl_quantity quantity,
                              const struct sl_interval *value)
 {
-    double typical = sl_shown(quantity, report->units, value->typical);
+    const double shown[] = {
+        sl_shown(quantity, report->units, value->typical),
+        sl_shown(quantity, report->units, value->adverse),
+        sl_shown(quantity, report->units, value->favourable),
+    };
+    int decimals = quantity == SL_LENGTH ? 1 : sl_digits_decimals(shown[0]);
 
-    if (quantity == SL_LENGTH || quantity == SL_TEMPERATURE)
-        return 1;
-    return sl_digits_decimals(typical);
+    if (quantity == SL_TEMPERATURE)
+        return 1; /* its zero is a temperature as any other */
+    for (size_t i = 0; i < sizeof shown / sizeof shown[0]; i++)
+        while (decimals < MOST_DECIMALS && reads_as_zero(shown[i], decimals))
+            decimals++;
+    return decimals;
 }
 
 void sl_page_interval(const struct sl_report *report, enum sl_quantity quantity,

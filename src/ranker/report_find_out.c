@@ -53,8 +53,12 @@ static void write_now(const struct sl_report *report, const void *row)
 
 static void write_swing(const struct sl_report *report, const void *row)
 {
+    const struct sl_interval *value = &unknown(row)->value;
+
     if (isfinite(unknown(row)->swing))
         sl_page_quantity(report, SL_LENGTH, unknown(row)->swing, 1);
+    else if (isfinite(value->adverse) && isfinite(value->favourable))
+        sl_markup(report->stream, "unknown");
     else
         sl_markup(report->stream, "no bound");
 }

@@ -33,19 +33,25 @@ static void write_finding(const struct sl_report *report)
         return;
     }
     if (risky == 0)
-        sl_markup(report->stream, "None");
+        sl_markup(report->stream, "No station");
     else
         sl_markup_count(report->stream, risky);
     sl_markup(report->stream, " of ");
-    sl_page_counted(report, stations_in_all(summary), "station", "stations");
-    sl_markup(report->stream, risky == 1 ? " is" : " are");
-    sl_markup(report->stream, " at risk of cavitation under the conditions "
-                              "audited.");
+    sl_markup_count(report->stream, stations_in_all(summary));
+    sl_markup(report->stream, risky > 1 ? " stations are" : " is");
+    sl_markup(report->stream, " established to be at risk of cavitation under "
+                              "the conditions audited.");
     if (summary->stations_by_state[SL_UNPROVEN] > 0) {
         sl_markup(report->stream, " What is on record does not settle ");
         sl_markup_count(report->stream,
                         summary->stations_by_state[SL_UNPROVEN]);
         sl_markup(report->stream, " more.");
+    }
+    if (summary->sums[SL_KIND_STATION].rejected > 0) {
+        sl_markup(report->stream, " Not among them: ");
+        sl_page_counted(report, summary->sums[SL_KIND_STATION].rejected,
+                        "station record that was rejected.",
+                        "station records that were rejected.");
     }
     sl_markup(report->stream, "</p>\n");
 }

@@ -118,6 +118,7 @@ static void station_pumps(struct sl_cells *cells,
                           const struct sl_station_row *row)
 {
     sl_cell_count(cells, "pumps", row->pumps);
+    sl_cell_count(cells, "pumps_rejected", row->pumps_rejected);
     sl_cell_count(cells, "pumps_short", row->pumps_by_state[SL_SHORT]);
     sl_cell_count(cells, "pumps_thin", row->pumps_by_state[SL_THIN]);
     sl_cell_count(cells, "pumps_unproven", row->pumps_by_state[SL_UNPROVEN]);

@@ -347,7 +347,8 @@ void sl_words_next_step(const struct sl_pump_row *row, struct sl_text *text)
     } else if (!has_pump(row)) {
         say(&telling, "add its pumps to the inventory");
     } else {
-        say(&telling, "fill in what the reason calls unknown");
+        say(&telling, "mend the records that were rejected (findings.csv), "
+                      "then audit again");
     }
 }
 

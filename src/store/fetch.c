@@ -4,6 +4,7 @@
 
 #include "base/text.h"
 #include "model/fields.h"
+#include "store/missed.h"
 #include "store/statement.h"
 #include "store/vintage.h"
 
@@ -192,9 +193,16 @@ static enum sl_status fetch_pipes(const struct sl_fetching *fetching)
     dossier->pipes = items;
     if (status || !dossier->pipe_count)
         return status;
-    for (size_t i = 0; i < dossier->pipe_count; i++)
-        dossier->pipes[i].draws_from =
-            find_pipe(dossier, dossier->pipes[i].record.draws_from);
+    for (size_t i = 0; !status && i < dossier->pipe_count; i++) {
+        struct sl_dossier_pipe *pipe = &dossier->pipes[i];
+
+        pipe->draws_from = find_pipe(dossier, pipe->record.draws_from);
+        status = sl_count_rejected(fetching->store, fetching->vintage,
+                                   SL_KIND_FITTING, pipe->record.pipe_id,
+                                   &pipe->rejected_fittings, fetching->error);
+    }
+    if (status)
+        return status;
     status = fetch_of_station(fetching, SL_QUERY_FITTINGS_OF_STATION,
                               SL_KIND_FITTING, "suction_fitting",
                               sizeof *fittings, &items, &count);
@@ -242,6 +250,10 @@ static enum sl_status fetch_curve(const struct sl_fetching *fetching,
                        sizeof *curve->points, &items, &curve->point_count);
     curve->points = items;
     pump->curve = curve;
+    if (!status)
+        status = sl_count_rejected(fetching->store, fetching->vintage,
+                                   SL_KIND_CURVE, curve->curve_id,
+                                   &curve->rejected_points, fetching->error);
     return status;
 }
 
@@ -267,34 +279,13 @@ static enum sl_status fetch_pumps(const struct sl_fetching *fetching)
     return status;
 }
 
-static enum sl_status learn_graded(const struct sl_fetching *fetching)
-{
-    struct sl_store *store = fetching->store;
-    struct sl_statement *statement = NULL;
-    bool row = false;
-    enum sl_status status = SL_OK;
-
-    if (store->graded_vintage == fetching->vintage)
-        return SL_OK;
-    status = sl_statement_use(store, SL_QUERY_ANY_GRADE, &statement,
-                              fetching->error);
-    if (status)
-        return status;
-    sl_bind_whole(statement, "vintage", fetching->vintage);
-    status = sl_statement_step(statement, &row, fetching->error);
-    if (status)
-        return status;
-    store->graded = sl_read_whole(statement, "graded") != 0;
-    store->graded_vintage = fetching->vintage;
-    return sl_statement_end(statement, fetching->error);
-}
-
 /* The station a bound statement gives, and the rest of its dossier. */
 static enum sl_status fetch_dossier(const struct sl_fetching *fetching,
                                     struct sl_statement *statement, bool *found)
 {
     struct sl_dossier *dossier = fetching->dossier;
-    enum sl_status status = learn_graded(fetching);
+    enum sl_status status =
+        sl_learn_traits(fetching->store, fetching->vintage, fetching->error);
 
     *dossier = (struct sl_dossier){.station = 0};
     if (!status)
@@ -306,6 +297,10 @@ static enum sl_status fetch_dossier(const struct sl_fetching *fetching,
                           &dossier->record);
     if (!status)
         status = sl_statement_end(statement, fetching->error);
+    if (!status)
+        status = sl_count_rejected_pumps(
+            fetching->store, fetching->vintage, dossier->record.station_id,
+            &dossier->rejected_pumps, fetching->error);
     if (!status)
         status = fetch_pipes(fetching);
     if (!status)

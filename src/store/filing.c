@@ -175,8 +175,7 @@ static enum sl_status add_unknowns(const struct sl_filing *filing, size_t pump)
     for (int i = 0; harshest && !status && i < SL_INPUT_COUNT; i++) {
         const struct sl_input *input = &harshest->pumps[pump].inputs[i];
 
-        if (input->applies && (input->provenance == SL_UNKNOWN ||
-                               input->provenance == SL_ASSUMED))
+        if (input->open)
             status = add_unknown(filing, harshest->condition->condition,
                                  filing->pumps[pump], input);
     }
@@ -204,6 +203,7 @@ static enum sl_status add_station(const struct sl_filing *filing,
                      result->worst_condition->condition->condition);
     }
     sl_bind_whole(statement, "pumps", (long long)result->dossier->pump_count);
+    sl_bind_whole(statement, "pumps_rejected", result->dossier->rejected_pumps);
     sl_bind_whole(statement, "pumps_short", counts[SL_SHORT]);
     sl_bind_whole(statement, "pumps_thin", counts[SL_THIN]);
     sl_bind_whole(statement, "pumps_unproven", counts[SL_UNPROVEN]);

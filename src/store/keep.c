@@ -90,7 +90,7 @@ static enum sl_status add_grade(const struct sl_keeping *keeping,
     sl_bind_text(statement, "field", field);
     sl_bind_whole(statement, "vintage", keeping->vintage);
     sl_bind_text(statement, "grade", letter);
-    keeping->store->graded_vintage = 0;
+    keeping->store->traits_vintage = 0;
     return sl_statement_run(statement, keeping->error);
 }
 

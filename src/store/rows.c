@@ -42,6 +42,11 @@ static const char *input_word(int value)
     return sl_input_column((enum sl_input_id)value);
 }
 
+static const char *provenance_word(int value)
+{
+    return sl_provenance_name((enum sl_provenance)value);
+}
+
 static enum sl_state read_state(struct sl_statement *row, const char *name)
 {
     const char *word = sl_read_text(row, name);
@@ -98,10 +103,16 @@ static void read_station(struct sl_statement *row,
     if (!*station->worst.pump_id)
         station->worst.reason = "no pump of it was kept";
     station->state = read_state(row, "station_state");
+    if (station->state == SL_UNPROVEN && station->worst.state == SL_CLEAR) {
+        station->worst.state = SL_UNPROVEN;
+        station->worst.reason = "a pump of it was rejected and could not be "
+                                "judged";
+    }
     station->people_served = sl_read_number(row, "people_served");
     station->latitude = sl_read_number(row, "latitude");
     station->longitude = sl_read_number(row, "longitude");
     station->pumps = (int)sl_read_whole(row, "pumps");
+    station->pumps_rejected = (int)sl_read_whole(row, "pumps_rejected");
     station->pumps_by_state[SL_SHORT] = (int)sl_read_whole(row, "pumps_short");
     station->pumps_by_state[SL_THIN] = (int)sl_read_whole(row, "pumps_thin");
     station->pumps_by_state[SL_UNPROVEN] =
@@ -235,10 +246,8 @@ static void read_unknown(struct sl_statement *row,
     unknown->likely = read_state(row, "likely");
     unknown->input = (enum sl_input_id)named(sl_read_text(row, "input"),
                                              input_word, SL_INPUT_COUNT - 1);
-    unknown->provenance =
-        sl_same(sl_read_text(row, "provenance"), sl_provenance_name(SL_ASSUMED))
-            ? SL_ASSUMED
-            : SL_UNKNOWN;
+    unknown->provenance = (enum sl_provenance)named(
+        sl_read_text(row, "provenance"), provenance_word, SL_ASSUMED);
     unknown->value = read_interval(row);
     unknown->swing = sl_read_number(row, "swing");
     unknown->settles = sl_read_whole(row, "settles") != 0;

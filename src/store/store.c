@@ -100,7 +100,7 @@ static void forget_pending(struct sl_store *store)
 {
     for (int kind = 0; kind < SL_KIND_COUNT; kind++)
         store->last_found[kind].vintage = 0;
-    store->graded_vintage = 0;
+    store->traits_vintage = 0;
     store->recall_vintage = 0;
     store->recall_station = 0;
     store->counted_evaluation = 0;

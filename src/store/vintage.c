@@ -49,10 +49,8 @@ enum sl_status sl_store_add_vintage(struct sl_store *store,
 }
 
 enum sl_status sl_store_add_set_aside(struct sl_store *store, long long vintage,
-                                      enum sl_kind kind, enum sl_fate fate,
-                                      long line, const char *record_id,
-                                      const char *reason, const char *raw,
-                                      size_t raw_length, struct sl_error *error)
+                                      const struct sl_aside *aside,
+                                      struct sl_error *error)
 {
     struct sl_statement *statement = NULL;
     enum sl_status status =
@@ -61,12 +59,14 @@ enum sl_status sl_store_add_set_aside(struct sl_store *store, long long vintage,
     if (status)
         return status;
     sl_bind_whole(statement, "vintage", vintage);
-    sl_bind_text(statement, "file", sl_record_kind(kind)->file);
-    sl_bind_whole(statement, "line", line);
-    sl_bind_text(statement, "record_id", record_id ? record_id : "");
-    sl_bind_text(statement, "fate", sl_fate_name(fate));
-    sl_bind_text(statement, "reason", reason);
-    sl_bind_bytes(statement, "raw", raw, raw_length);
+    sl_bind_text(statement, "file", sl_record_kind(aside->kind)->file);
+    store->traits_vintage = 0;
+    sl_bind_whole(statement, "line", aside->line);
+    sl_bind_text(statement, "record_id", aside->record_id);
+    sl_bind_text(statement, "station_id", aside->station_id);
+    sl_bind_text(statement, "fate", sl_fate_name(aside->fate));
+    sl_bind_text(statement, "reason", aside->reason);
+    sl_bind_bytes(statement, "raw", aside->raw, aside->raw_length);
     return sl_statement_run(statement, error);
 }
 

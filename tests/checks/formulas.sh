@@ -4,8 +4,7 @@
 set -u
 bad=0
 known=$(sed -n 's/^#* *\**\(F[0-9][0-9]*\)\b.*/\1/p' docs/formulas.md | sort -u)
-cited=$(grep -ohE '\bF[0-9]+\b' src/hydraulics/*.c src/evaluator/*.c \
-    src/app/*.c include/hydraulics/*.h | sort -u)
+cited=$(grep -ohE '\bF[0-9]+\b' src/*/*.c include/*/*.h | sort -u)
 [ -n "$known" ] || {
     echo "docs/formulas.md has no formula"
     exit 1

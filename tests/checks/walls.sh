@@ -11,7 +11,8 @@ allowed()
     shift
     for file in src/"$room"/*.c include/"$room"/*.h; do
         [ -f "$file" ] || continue
-        for used in $(sed -n 's|^#include "\([a-z]*\)/.*|\1|p' "$file"); do
+        for used in $(sed -n 's|^ *# *include *["<]\([a-z]*\)/.*|\1|p' \
+            "$file" | grep -vx sys); do
             case " $room $* " in
             *" $used "*) ;;
             *)
@@ -26,7 +27,8 @@ allowed()
 # only ROOM HEADER: no other room includes this library.
 only()
 {
-    for file in $(grep -l "#include <$2>" src/*/*.c include/*/*.h); do
+    for file in $(grep -lE "# *include *[<\"]$2[>\"]" \
+        src/*/*.c include/*/*.h); do
         case $file in
         */"$1"/*) ;;
         *)
@@ -50,7 +52,9 @@ only importer csv.h
 only importer sha2.h
 
 # Only app prints, exits, reads the environment or the clock.
-for file in $(grep -lE '\b(exit|getenv|time|printf|puts|putchar|isatty) ?\(' \
+calls='exit|_exit|abort|getenv|time|clock|clock_gettime|gettimeofday|printf'
+calls="$calls|puts|putchar|perror|isatty|signal|sigaction"
+for file in $(grep -lE "\b($calls) ?\(|^[^/*]*\b(stdin|stdout|stderr)\b" \
     src/*/*.c); do
     case $file in
     src/app/* | src/base/memory.c) ;;
@@ -82,13 +86,21 @@ for symbol in $(nm -u $objects | sed -n 's/^ *U //p' | sort -u); do
     esac
 done
 
+state=$(nm $objects | grep -E ' [BbCDdGgSs] ')
+[ -z "$state" ] || {
+    echo "hydraulics keeps state: $state"
+    bad=1
+}
+
 # Unchecked text functions are banned everywhere.
-if grep -nwE '(strcpy|strcat|sprintf|strtok|atoi|atof|localtime|setlocale)' \
-    src/*/*.c include/*/*.h; then
+banned='strcpy|strcat|sprintf|vsprintf|strtok|atoi|atol|atoll|atof|gets|scanf'
+banned="$banned|sscanf|fscanf|localtime|ctime|asctime|setlocale"
+if grep -nE "\b($banned) *\(" src/*/*.c include/*/*.h; then
     echo "a banned function"
     bad=1
 fi
-if grep -nw strtod src/*/*.c | grep -v '^src/base/number.c:'; then
+if grep -nwE 'strtod|strtof|strtold' src/*/*.c |
+    grep -v '^src/base/number.c:'; then
     echo "strtod belongs in src/base/number.c, behind the number grammar"
     bad=1
 fi

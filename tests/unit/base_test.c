@@ -174,6 +174,40 @@ static void utf8_is_told_from_what_is_not(void **state)
             fail_msg("%s was not told", rows[i].why);
 }
 
+static void hidden_characters_are_told(void **state)
+{
+    static const struct {
+        const char *bytes;
+        size_t length;
+        unsigned long code;
+        bool hidden;
+    } rows[] = {
+        {"\x1B[", 1, 0x1B, false},
+        {"\xC2\x9B", 2, 0x9B, true},
+        {"\xC2\xA0", 2, 0xA0, false},
+        {"\xD8\x9C", 2, 0x061C, true},
+        {"\xE2\x80\x8D", 3, 0x200D, false},
+        {"\xE2\x80\xAE", 3, 0x202E, true},
+        {"\xE2\x80\xAF", 3, 0x202F, false},
+        {"\xE2\x81\xA9", 3, 0x2069, true},
+        {"\xEF\xBF\xBE", 3, 0xFFFE, true},
+        {"\xF0\x9F\x92\xA7", 4, 0x1F4A7, false},
+        {"\x9B", 0, 0, false},
+        {"\xE2\x80", 0, 0, false},
+    };
+
+    (void)state;
+    for (size_t i = 0; i < sizeof rows / sizeof rows[0]; i++) {
+        unsigned long code = 1;
+
+        assert_int_equal(
+            sl_utf8_character(rows[i].bytes, strlen(rows[i].bytes), &code),
+            rows[i].length);
+        assert_int_equal(code, rows[i].code);
+        assert_int_equal(sl_utf8_hidden(code), rows[i].hidden);
+    }
+}
+
 static void text_grows_and_ends_in_nul(void **state)
 {
     struct sl_text text = {0};
@@ -343,6 +377,7 @@ int main(void)
         cmocka_unit_test(each_quantity_names_each_of_its_units),
         cmocka_unit_test(shown_units_are_the_systems),
         cmocka_unit_test(utf8_is_told_from_what_is_not),
+        cmocka_unit_test(hidden_characters_are_told),
         cmocka_unit_test(text_grows_and_ends_in_nul),
         cmocka_unit_test(an_arena_gives_zeroed_pieces_that_do_not_overlap),
         cmocka_unit_test(want_of_memory_ends_the_program_with_status_70),

@@ -479,6 +479,51 @@ static void most_flow_bounds_the_flow_of_every_corner(void **state)
 #define TEST(test)                                                             \
     cmocka_unit_test_setup_teardown(test, fixture_setup, fixture_teardown)
 
+/* A record that was rejected is missed: what rests on it has no bound, and
+ * is not called clear. */
+static void a_rejected_fitting_leaves_the_losses_without_a_bound(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    check_state("complete", summer(f), SL_CLEAR, SL_CLEAR);
+    f->pipes[0].rejected_fittings = 1;
+    pump = summer(f);
+    check_state("one rejected", pump, SL_UNPROVEN, SL_CLEAR);
+    check_nan("adverse", pump->cases[SL_ADVERSE].surplus);
+    assert_ptr_equal(pump->leading_unknown, &pump->inputs[SL_IN_SUCTION_MINOR]);
+    assert_non_null(strstr(pump->reason, "was rejected"));
+}
+
+static void a_rejected_curve_point_leaves_npshr_without_a_bound(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    f->curve.rejected_points = 2;
+    pump = summer(f);
+    check_state("points rejected", pump, SL_UNPROVEN, SL_CLEAR);
+    check_nan("adverse", pump->cases[SL_ADVERSE].npshr);
+    check_nan("favourable", pump->cases[SL_FAVOURABLE].npshr);
+    assert_ptr_equal(pump->leading_unknown, &pump->inputs[SL_IN_NPSHR]);
+    f->pumps[0].record.datum_elevation = known(318.0);
+    check_state("nor short", summer(f), SL_UNPROVEN, SL_SHORT);
+}
+
+static void a_rejected_pump_keeps_its_station_from_clear(void **state)
+{
+    struct fixture *f = *state;
+
+    f->dossier.record.pumps_running_max = known(1);
+    assert_int_equal(judge(f)->state, SL_CLEAR);
+    f->dossier.rejected_pumps = 1;
+    assert_int_equal(judge(f)->state, SL_UNPROVEN);
+    assert_int_equal(f->result.worst->state, SL_CLEAR);
+    /* Beside it, it could draw through the same pipe. */
+    f->dossier.record.pumps_running_max = known(2);
+    check_state("beside a rejected one", summer(f), SL_UNPROVEN, SL_CLEAR);
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
@@ -505,6 +550,9 @@ int main(void)
         TEST(shared_loss_is_known_without_the_datum),
         TEST(adverse_suction_does_not_lessen_the_flow),
         TEST(most_flow_bounds_the_flow_of_every_corner),
+        TEST(a_rejected_fitting_leaves_the_losses_without_a_bound),
+        TEST(a_rejected_curve_point_leaves_npshr_without_a_bound),
+        TEST(a_rejected_pump_keeps_its_station_from_clear),
     };
 
     return cmocka_run_group_tests(tests, NULL, NULL);

@@ -61,25 +61,22 @@ static enum sl_status hear_record(void *context, enum sl_kind kind,
     return SL_OK;
 }
 
-static enum sl_status hear_aside(void *context, enum sl_kind kind,
-                                 enum sl_fate fate, long line,
-                                 const char *record_id, const char *reason,
-                                 const char *raw, size_t raw_length,
+static enum sl_status hear_aside(void *context, const struct sl_aside *aside,
                                  struct sl_error *error)
 {
     struct counts *counts = context;
     unsigned touched = 0;
 
-    (void)kind;
     (void)error;
-    must(line >= 2, "a record begins behind the header");
-    must_be_text(record_id);
-    must_be_text(reason);
-    must(raw_length > 0, "a record has a text");
-    for (size_t i = 0; i < raw_length; i++)
-        touched += (unsigned char)raw[i];
-    must(touched > 0 || raw[0] == '\0', "the text can be read");
-    counts->aside[fate]++;
+    must(aside->line >= 2, "a record begins behind the header");
+    must_be_text(aside->record_id);
+    must_be_text(aside->station_id);
+    must_be_text(aside->reason);
+    must(aside->raw_length > 0, "a record has a text");
+    for (size_t i = 0; i < aside->raw_length; i++)
+        touched += (unsigned char)aside->raw[i];
+    must(touched > 0 || aside->raw[0] == '\0', "the text can be read");
+    counts->aside[aside->fate]++;
     return SL_OK;
 }
 

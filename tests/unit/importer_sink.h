@@ -181,18 +181,19 @@ static inline enum sl_status hear_record(void *context, enum sl_kind kind,
 }
 
 static inline enum sl_status
-hear_aside(void *context, enum sl_kind kind, enum sl_fate fate, long line,
-           const char *record_id, const char *reason, const char *raw,
-           size_t raw_length, struct sl_error *error)
+hear_aside(void *context, const struct sl_aside *aside, struct sl_error *error)
 {
     struct listener *listener = context;
 
     (void)error;
     listener->aside++;
-    sl_text_addf(&listener->heard, "%s %s:%ld \"%s\": %s\n    raw ",
-                 sl_fate_name(fate), sl_record_kind(kind)->file, line,
-                 record_id, reason);
-    write_raw(&listener->heard, raw, raw_length);
+    sl_text_addf(&listener->heard, "%s %s:%ld \"%s\"",
+                 sl_fate_name(aside->fate), sl_record_kind(aside->kind)->file,
+                 aside->line, aside->record_id);
+    if (aside->station_id[0])
+        sl_text_addf(&listener->heard, " of \"%s\"", aside->station_id);
+    sl_text_addf(&listener->heard, ": %s\n    raw ", aside->reason);
+    write_raw(&listener->heard, aside->raw, aside->raw_length);
     sl_text_add_string(&listener->heard, "\n");
     return SL_OK;
 }

@@ -285,7 +285,13 @@ static void what_is_no_inventory_is_refused(void **state)
         {"station_id\n", "pump_id,rated_flow,rated_head\n",
          "pumps.csv:1: column \"rated_flow\" has no unit; name it "
          "rated_flow_l_s, rated_flow_gpm, rated_flow_m3_s, rated_flow_m3_h, "
-         "rated_flow_mgd, rated_flow_cfs (and 2 more)"},
+         "rated_flow_mgd, rated_flow_cfs; also pumps.csv:1: column "
+         "\"rated_head\" has no unit; name it rated_head_m, rated_head_ft, "
+         "rated_head_cm, rated_head_mm, rated_head_in; also pumps.csv:1: "
+         "column \"station_id\" is missing; no pump can be read without it"},
+        {"Station ID,name\n", PUMPS,
+         "column \"station_id\" is missing; no station can be read without "
+         "it; if \"Station ID\" is meant, name it so"},
         {"station_id,\"name\n", PUMPS,
          "stations.csv:1: the header cannot be read: a quote opens here and "
          "is not rightly closed; close the quote or take it out"},

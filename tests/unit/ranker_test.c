@@ -14,6 +14,7 @@
 #include "ranker/cells.h"
 #include "ranker/digits.h"
 #include "ranker/markup.h"
+#include "ranker/page.h"
 #include "ranker/report.h"
 #include "ranker/tables.h"
 #include "ranker/words.h"
@@ -288,7 +289,9 @@ static void test_why_of_what_is_not_proven(void **state)
     check_next_step(&row.worst, "find out the elevation of the impeller eye");
     check_leading(&row.worst, "");
     row.worst.leading_unknown = NULL;
-    check_next_step(&row.worst, "fill in what the reason calls unknown");
+    check_next_step(&row.worst, "mend the records that were rejected "
+                                "(findings.csv), then audit "
+                                "again");
     row.worst.reason = "";
     row.worst.pump_id = NULL;
     check_why(&row.worst, SL_SI, "no pump of this station is on record");
@@ -455,6 +458,10 @@ static const struct {
     {"\rx", "\"'\rx\""},
     {"=HYPERLINK(\"x\",\"y\")", "\"'=HYPERLINK(\"\"x\"\",\"\"y\"\")\""},
     {"0107", "0107"},
+    {"\x1B[2J\x7F", "\u241B[2J\u2421"},
+    {"\xC2\x9B"
+     "2J, \xC2\x80\xC2\xA0",
+     "\"\uFFFD2J, \uFFFD\u00A0\""},
     {NULL, ""},
 };
 
@@ -619,7 +626,8 @@ static void test_ranked_stations_golden(void **state)
         "condition,flow_basis,source_basis,shortfall_m,margin_m,"
         "margin_adverse_m,margin_favourable_m,npsha_m,npshr_m,required_m,"
         "flow_l_s,why,next_step,inputs_recorded,inputs_derived,"
-        "inputs_assumed,inputs_unknown,people_served,pumps,pumps_short,"
+        "inputs_assumed,inputs_unknown,people_served,pumps,pumps_rejected,"
+        "pumps_short,"
         "pumps_thin,pumps_unproven,pumps_clear,latitude,longitude,"
         "stations_csv_line,vintage,inventory_sha256\r\n"
         "1,at risk,short,0107,Juniper Draw,raw water,dry pit,short,P-2,"
@@ -628,7 +636,7 @@ static void test_ranked_stations_golden(void **state)
         "eye; air at 1,830 m is worth only 8.3 m; suction losses take 1.2 m; "
         "NPSHR 4.1 m at 95 L/s (rated flow)\",confirm the eye's elevation and "
         "the lowest source level on site; then look into a higher low-level "
-        "cut-out,14,2,3,0,184200,3,2,0,0,1,41.203817,-104.824610,2,2026,"
+        "cut-out,14,2,3,0,184200,3,0,2,0,0,1,41.203817,-104.824610,2,2026,"
         "3f9a\r\n");
     free(capture.bytes);
 }
@@ -672,6 +680,46 @@ static void write_page(struct capture *capture,
         sl_report_default(&report, &standard);
     sl_report_end(&report);
     captured(capture);
+}
+
+static void test_a_small_value_is_not_shown_as_zero(void **state)
+{
+    static const struct {
+        enum sl_quantity quantity;
+        enum sl_unit_system units;
+        struct sl_interval value;
+        const char *want;
+    } cases[] = {
+        {SL_LENGTH, SL_SI, {0.023, 0.12, 0}, "0.02&nbsp;m (0.12 … 0.00)"},
+        {SL_LENGTH, SL_US, {0.023, 0.12, 0}, "0.1&nbsp;ft (0.4 … 0.0)"},
+        {SL_LENGTH, SL_SI, {1.52, 2.31, 0}, "1.5&nbsp;m (2.3 … 0.0)"},
+        {SL_BORE,
+         SL_SI,
+         {0.25, 0.25, 0.0000015},
+         "250.000&nbsp;mm (250.000 … 0.002)"},
+        {SL_BORE, SL_SI, {NAN, 0.00123, NAN}, "unknown (1 … unknown)"},
+        {SL_TEMPERATURE,
+         SL_US,
+         {255.372222, 273.15, 255.37},
+         "0.0&nbsp;°F (32.0 … 0.0)"},
+    };
+
+    (void)state;
+    for (size_t i = 0; i < COUNT(cases); i++) {
+        struct capture capture;
+        struct sl_report report = {.units = cases[i].units};
+        struct sl_text want = {0};
+        const char *range = strchr(cases[i].want, '(');
+
+        capture_begin(&capture);
+        report.stream = capture.stream;
+        sl_page_interval(&report, cases[i].quantity, &cases[i].value);
+        sl_text_add(&want, cases[i].want, (size_t)(range - cases[i].want));
+        sl_text_addf(&want, "<span class=\"range\">%s</span>", range);
+        check_string("interval", captured(&capture), want.bytes);
+        sl_text_release(&want);
+        free(capture.bytes);
+    }
 }
 
 static void check_paired(const char *page, const char *open, const char *close,
@@ -754,8 +802,9 @@ static void test_a_page_tells_the_audit(void **state)
     (void)state;
     write_page(&capture, rows, COUNT(rows));
     page = capture.bytes;
-    assert_non_null(strstr(page, "5 of 15 stations are at risk of cavitation "
-                                 "under the conditions audited. What is on "
+    assert_non_null(strstr(page, "5 of 15 stations are established to be at "
+                                 "risk of cavitation under the conditions "
+                                 "audited. What is on "
                                  "record does not settle 4 more."));
     assert_non_null(
         strstr(page, "<b>2</b> stations <span class=\"state short"));
@@ -845,6 +894,7 @@ int main(void)
         cmocka_unit_test(test_number_cells),
         cmocka_unit_test(test_head_and_row_have_the_same_cells),
         cmocka_unit_test(test_ranked_stations_golden),
+        cmocka_unit_test(test_a_small_value_is_not_shown_as_zero),
         cmocka_unit_test(test_an_empty_page_says_so),
         cmocka_unit_test(test_a_hostile_inventory_stays_text),
         cmocka_unit_test(test_a_page_tells_the_audit),

@@ -7,8 +7,9 @@
 static void set_aside(struct fixture *f, enum sl_kind kind, enum sl_fate fate,
                       long line, const char *id)
 {
-    must(f, sl_store_add_set_aside(f->store, f->vintage, kind, fate, line, id,
-                                   "a reason", "raw", 3, &f->error));
+    struct sl_aside aside = {kind, fate, line, id, "", "a reason", "raw", 3};
+
+    must(f, sl_store_add_set_aside(f->store, f->vintage, &aside, &f->error));
 }
 
 static void assert_answer(struct sl_answer answer, enum sl_answer_kind kind,
@@ -467,15 +468,15 @@ static enum sl_status note_aside(void *context,
 
 static void set_aside_records_keep_their_bytes(void **state)
 {
+    static const struct sl_aside latin = {
+        SL_KIND_PUMP, SL_REJECTED, 12, "P", "S", "why", "P,\xE9", 3};
+    static const struct sl_aside utf8 = {
+        SL_KIND_PUMP, SL_OUT_OF_SCOPE, 3, "", "S", "why", "P,\xC3\xA9", 4};
     struct fixture *f = *state;
     struct sl_text text = {NULL, 0, 0};
 
-    must(f,
-         sl_store_add_set_aside(f->store, f->vintage, SL_KIND_PUMP, SL_REJECTED,
-                                12, "P", "why", "P,\xE9", 3, &f->error));
-    must(f, sl_store_add_set_aside(f->store, f->vintage, SL_KIND_PUMP,
-                                   SL_OUT_OF_SCOPE, 3, NULL, "why",
-                                   "P,\xC3\xA9", 4, &f->error));
+    must(f, sl_store_add_set_aside(f->store, f->vintage, &latin, &f->error));
+    must(f, sl_store_add_set_aside(f->store, f->vintage, &utf8, &f->error));
     set_aside(f, SL_KIND_CURVE, SL_REJECTED, 4, "C");
     must(f, sl_store_each_set_aside(f->store, f->vintage, note_aside, &text,
                                     &f->error));
@@ -594,6 +595,35 @@ static void columns_keep_how_they_were_understood(void **state)
 #define IN_VINTAGE(test)                                                       \
     cmocka_unit_test_setup_teardown(test, fixture_vintage, fixture_end)
 
+/* What was rejected is missed where it belongs. */
+static void rejected_records_are_counted_in_the_dossier(void **state)
+{
+    struct fixture *f = *state;
+    struct sl_aside pump = {SL_KIND_PUMP, SL_REJECTED, 7,    "P9",
+                            "S",          "why",       "P9", 2};
+    struct sl_dossier dossier = {.station = 0};
+    struct sl_arena arena = {0};
+    bool found = false;
+
+    keep_station(f, 2, "S");
+    keep_pipe(f, 3, "A", "S", NULL);
+    must(f, sl_store_add_set_aside(f->store, f->vintage, &pump, &f->error));
+    pump.station_id = "T";
+    must(f, sl_store_add_set_aside(f->store, f->vintage, &pump, &f->error));
+    pump.station_id = "S";
+    pump.fate = SL_OUT_OF_SCOPE;
+    must(f, sl_store_add_set_aside(f->store, f->vintage, &pump, &f->error));
+    set_aside(f, SL_KIND_FITTING, SL_REJECTED, 4, "A");
+    set_aside(f, SL_KIND_FITTING, SL_REJECTED, 5, "A");
+    set_aside(f, SL_KIND_FITTING, SL_REJECTED, 6, "B");
+    must(f, sl_store_next_dossier(f->store, f->vintage, "", &arena, &dossier,
+                                  &found, &f->error));
+    assert_true(found);
+    assert_int_equal(dossier.rejected_pumps, 1);
+    assert_int_equal(dossier.pipes[0].rejected_fittings, 2);
+    sl_arena_release(&arena);
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
@@ -613,6 +643,7 @@ int main(void)
         IN_VINTAGE(a_recalled_pipe_leaves_no_grade),
         IN_VINTAGE(a_word_that_is_none_is_our_bug),
         IN_VINTAGE(set_aside_records_keep_their_bytes),
+        IN_VINTAGE(rejected_records_are_counted_in_the_dossier),
         IN_VINTAGE(findings_come_as_told),
         IN_VINTAGE(vintages_are_found_by_content),
         IN_VINTAGE(sums_come_back_by_kind),

@@ -403,6 +403,7 @@ static void doubt(struct sl_pump_result *result, enum sl_input_id id,
                   enum sl_provenance provenance, double swing, bool settles)
 {
     result->inputs[id].provenance = provenance;
+    result->inputs[id].open = true;
     result->inputs[id].swing = swing;
     result->inputs[id].settles = settles;
     result->state = SL_UNPROVEN;
@@ -418,9 +419,9 @@ static void what_settles_is_found_out_first(void **state)
     doubt(&a.results[1][0], SL_IN_TEMPERATURE, SL_ASSUMED, 0.4, false);
     doubt(&a.results[1][0], SL_IN_DATUM, SL_UNKNOWN, NAN, false);
     doubt(&a.results[1][0], SL_IN_GAS, SL_ASSUMED, 0.6, true);
-    /* What is no part of the balance is nothing to find out. */
+    /* What is not open is nothing to find out. */
     doubt(&a.results[1][0], SL_IN_BAROMETER, SL_ASSUMED, 9, true);
-    a.results[1][0].inputs[SL_IN_BAROMETER].applies = false;
+    a.results[1][0].inputs[SL_IN_BAROMETER].open = false;
     file(&e, &a);
     make(&e, &b, "B", 20, 1);
     b.results[1][0].likely = SL_THIN;

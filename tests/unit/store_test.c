@@ -339,11 +339,13 @@ static void die_writing(struct fixture *f)
         sl_store_add_vintage(f->store, &next, &f->error))
         _exit(1);
     /* More than the cache holds, so that pages reach the file. */
-    for (long line = 1; line <= 48; line++)
-        if (sl_store_add_set_aside(f->store, next.vintage, SL_KIND_PUMP,
-                                   SL_REJECTED, line, "P", "why", raw, length,
-                                   &f->error))
+    for (long line = 1; line <= 48; line++) {
+        struct sl_aside aside = {SL_KIND_PUMP, SL_REJECTED, line, "P",
+                                 "S",          "why",       raw,  length};
+
+        if (sl_store_add_set_aside(f->store, next.vintage, &aside, &f->error))
             _exit(1);
+    }
     _exit(0);
 }
 
