@@ -49,7 +49,7 @@ NEEDED_TO_TEST := $(NEEDED_TO_BUILD) libcmocka-dev sqlite3
 
 .DELETE_ON_ERROR:
 .SUFFIXES:
-.PHONY: all help demo test check unit cli clean install uninstall tidy \
+.PHONY: all help demo test check unit cli recompute clean install uninstall tidy \
         sample needed-to-build needed-to-test
 
 all: needed-to-build ## build the program (the default)
@@ -136,6 +136,21 @@ unit: $(TESTS) $(FUZZERS) ## the unit and reference tests
 
 cli: $(OUT)/summerlow ## the command-line cases
 	@sh tests/cli/run.sh $(OUT)/summerlow
+
+# A second implementation on general-purpose libraries; see
+# docs/verification.md.
+NEEDED_TO_RECOMPUTE := python3 python3-iapws python3-fluids python3-scipy
+RECOMPUTED := sample-inventory tests/independent/hard-cases
+
+recompute: all ## work every pump out anew by other libraries, and compare
+	@$(call need,$(NEEDED_TO_RECOMPUTE))
+	@for inventory in $(RECOMPUTED); do \
+	    out=build/recompute/$$(basename $$inventory); \
+	    $(OUT)/summerlow audit $$inventory --out $$out >/dev/null 2>&1 \
+	        || test $$? -eq 1 || exit 1; \
+	    /usr/bin/python3 tests/independent/recompute.py $$inventory $$out \
+	        || exit 1; \
+	done
 
 # --- the rest --------------------------------------------------------------
 

@@ -33,6 +33,10 @@ void sl_solve_case(const struct sl_plan *plan, const struct sl_ends *ends,
  * not bounded. */
 double sl_solve_most_flow(const struct sl_plan *plan);
 
+/* The loss of the discharge at a flow, m. */
+struct sl_interval sl_solve_discharge_loss(const struct sl_plan *plan,
+                                           double flow);
+
 /* The losses of each pipe of the path at a case's flow and the typical
  * ends; `losses` has room for path_count.  NaN where a pipe's length or bore
  * is not known. */

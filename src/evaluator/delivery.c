@@ -175,8 +175,8 @@ static void discharge_pipe(struct sl_plan *plan)
     delivery->roughness = discharge_roughness(plan);
     delivery->minor_k = row ? row->value : sl_no_figure();
     input = sl_plan_set(plan, SL_IN_DISCHARGE_LOSS, SL_ASSUMED, sl_no_figure(),
-                        "by the main's length and bore; its roughness, or "
-                        "its fittings' K, from a table");
+                        "at this flow, by the main's length and bore; its "
+                        "roughness, or its fittings' K, from a table");
     input->line = station->line;
     if (station->discharge_minor_k.known)
         delivery->minor_k = sl_exactly(station->discharge_minor_k.value);
@@ -258,6 +258,15 @@ static void flow(struct sl_plan *plan)
     }
 }
 
+static long first_npshr_line(const struct sl_curve *curve)
+{
+    size_t i = 0;
+
+    while (i + 1 < curve->point_count && !curve->points[i].npshr.known)
+        i++;
+    return curve->points[i].line;
+}
+
 static void npshr(struct sl_plan *plan)
 {
     struct sl_input *input;
@@ -276,7 +285,7 @@ static void npshr(struct sl_plan *plan)
             input->row = npshr_exponent_row(plan, plan->speed_ratio);
         }
         input->kind = SL_KIND_CURVE;
-        input->line = plan->pump->curve->points[0].line;
+        input->line = first_npshr_line(plan->pump->curve);
     } else if (!isnan(plan->rated_npshr)) {
         input = sl_plan_set(
             plan, SL_IN_NPSHR, SL_DERIVED,

@@ -32,9 +32,8 @@ static bool open_input(const struct sl_pump_result *result,
 {
     if (!input->applies || input->provenance == SL_RECORDED)
         return false;
-    if (input->provenance == SL_DERIVED &&
-        (input->id == SL_IN_DISCHARGE_LOSS ||
-         (input->id == SL_IN_FLOW && result->flow_basis == SL_FLOW_SOLVED)))
+    if (input->provenance == SL_DERIVED && input->id == SL_IN_FLOW &&
+        result->flow_basis == SL_FLOW_SOLVED)
         return false;
     if (input->provenance == SL_DERIVED)
         return !(input->value.adverse == input->value.favourable);
@@ -60,13 +59,6 @@ static double surplus_with(const struct sl_plan *plan, enum sl_corner rest,
     return case_with(plan, rest, id, end).surplus;
 }
 
-/* No honest figure at that end.  The ends of the discharge's loss are in
- * the plan's roughness and K, not in the input's value. */
-static bool unbounded(const struct sl_input *input, double end)
-{
-    return input->id != SL_IN_DISCHARGE_LOSS && isnan(end);
-}
-
 /* Whether some other open input lacks an honest figure at its adverse end:
  * then this one alone settles nothing. */
 static bool another_is_unbounded(const struct sl_pump_result *result,
@@ -76,7 +68,7 @@ static bool another_is_unbounded(const struct sl_pump_result *result,
         const struct sl_input *input = &result->inputs[i];
 
         if (i != (int)id && open_input(result, input) &&
-            unbounded(input, input->value.adverse))
+            isnan(input->value.adverse))
             return true;
     }
     return false;
@@ -90,7 +82,7 @@ static void weigh(const struct sl_plan *plan, struct sl_pump_result *result,
     double best = surplus_with(plan, SL_TYPICAL, id, SL_FAVOURABLE);
 
     input->swing = best - worst;
-    if (unbounded(input, input->value.favourable)) {
+    if (isnan(input->value.favourable)) {
         input->settles = !another_is_unbounded(result, id);
         return;
     }
@@ -108,8 +100,8 @@ static bool matters_more(const struct sl_input *a, const struct sl_input *b)
     if (a->settles != b->settles)
         return a->settles;
     /* Not by the swing: that is NaN too where another input has no figure. */
-    a_unbounded = unbounded(a, a->value.adverse);
-    b_unbounded = unbounded(b, b->value.adverse);
+    a_unbounded = isnan(a->value.adverse);
+    b_unbounded = isnan(b->value.adverse);
     if (a_unbounded != b_unbounded)
         return a_unbounded;
     return a->swing > b->swing;
@@ -134,7 +126,7 @@ static void weigh_unknowns(const struct sl_plan *plan,
 static enum sl_provenance how_known(const struct sl_pump_result *result,
                                     const struct sl_input *input)
 {
-    if (open_input(result, input) && unbounded(input, input->value.adverse))
+    if (open_input(result, input) && isnan(input->value.adverse))
         return SL_UNKNOWN;
     return input->provenance;
 }
@@ -195,8 +187,7 @@ static void reason_unproven(const struct sl_pump_result *result,
     else if (result->off_curve)
         sl_text_add_string(text, "running alone it leaves the published end "
                                  "of its curve");
-    else if (leading && unbounded(leading, leading->value.adverse) &&
-             leading->rule[0])
+    else if (leading && isnan(leading->value.adverse) && leading->rule[0])
         sl_text_addf(text, "%s: %s", sl_input_words(leading->id),
                      leading->rule);
     else if (notes[SL_ADVERSE].off_curve)
@@ -277,6 +268,9 @@ void sl_judge(const struct sl_plan *plan, struct sl_pump_result *result)
                          ? sl_state_of(&result->cases[SL_TYPICAL])
                          : result->state;
     mark_what_the_curve_lacks(result);
+    if (plan->flow_basis == SL_FLOW_SOLVED)
+        result->inputs[SL_IN_DISCHARGE_LOSS].value =
+            sl_solve_discharge_loss(plan, result->cases[SL_TYPICAL].flow);
     set_running_together(plan, result);
     count_inputs(result);
     if (result->state == SL_UNPROVEN)

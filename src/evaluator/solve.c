@@ -2,32 +2,15 @@
 
 #include <math.h>
 
+#include "evaluator/losses.h"
 #include "hydraulics/atmosphere.h"
 #include "hydraulics/constants.h"
-#include "hydraulics/friction.h"
-#include "hydraulics/minor_loss.h"
 #include "hydraulics/npsh.h"
 #include "hydraulics/operating_point.h"
 #include "hydraulics/water.h"
 
 /* Flows are solved to this, m³/s: far below what any head shows. */
 #define FLOW_TOLERANCE 1e-13
-
-/* What stays the same while the flow is sought. */
-struct setting {
-    const struct sl_plan *plan;
-    const struct sl_ends *ends;
-    double density;
-    double viscosity; /* kinematic, m²/s */
-    double vapour_pressure;
-    double source_head; /* m, of the surface or main, gauge */
-};
-
-/* Friction and fittings from the source to the pump, m. */
-struct suction_loss {
-    double friction;
-    double minor;
-};
 
 struct sl_ends sl_ends_all(enum sl_corner corner)
 {
@@ -38,143 +21,22 @@ struct sl_ends sl_ends_all(enum sl_corner corner)
     return ends;
 }
 
-static double at(const struct sl_interval *interval, enum sl_corner end)
-{
-    switch (end) {
-    case SL_ADVERSE:
-        return interval->adverse;
-    case SL_FAVOURABLE:
-        return interval->favourable;
-    default:
-        return interval->typical;
-    }
-}
-
-/* The value of an input at its end; 0 when it plays no part. */
-static double value(const struct setting *setting, enum sl_input_id id)
-{
-    const struct sl_input *input = &setting->plan->inputs[id];
-
-    return input->applies ? at(&input->value, setting->ends->of[id]) : 0;
-}
-
 /* NaN where the input has no honest figure at its end, else 0. */
-static double doubt(const struct setting *setting, enum sl_input_id id)
+static double doubt(const struct sl_setting *setting, enum sl_input_id id)
 {
-    return value(setting, id) * 0;
-}
-
-static struct sl_pipe_loss pipe_loss(const struct setting *setting,
-                                     const struct sl_path_pipe *place,
-                                     double flow)
-{
-    const struct sl_pipe *pipe = &place->pipe->record;
-    const struct sl_ends *ends = setting->ends;
-    struct sl_pipe_loss loss = {.pipe = place->pipe, .factor = NAN};
-    double bore = pipe->bore.value;
-
-    loss.velocity = loss.reynolds = loss.friction = loss.minor = NAN;
-    loss.roughness = at(&place->roughness, ends->of[SL_IN_SUCTION_ROUGHNESS]);
-    loss.minor_k = at(&place->minor_k, ends->of[SL_IN_SUCTION_MINOR]);
-    loss.flow = flow;
-    if (ends->of[SL_IN_RUNNING_TOGETHER] == SL_ADVERSE)
-        loss.flow += place->others;
-    if (!pipe->bore.known)
-        return loss;
-    loss.velocity = sl_pipe_velocity(loss.flow, bore);
-    loss.reynolds = sl_reynolds(loss.velocity, bore, setting->viscosity);
-    loss.minor = sl_minor_head(loss.minor_k, loss.velocity);
-    if (!pipe->length.known)
-        return loss;
-    if (place->hazen_williams) {
-        loss.friction = sl_hazen_williams_head(
-            loss.flow, pipe->hazen_williams_c.value, pipe->length.value, bore);
-        return loss;
-    }
-    /* At rest there is no factor, and no loss either. */
-    loss.factor = sl_friction_factor(loss.reynolds, loss.roughness / bore);
-    loss.friction =
-        sl_darcy_head(loss.factor, pipe->length.value, bore, loss.velocity);
-    return loss;
-}
-
-/* A pump that stands in its water loses only what its inlet takes: K on the
- * inlet's diameter, or a default head. */
-static double inlet_loss(const struct setting *setting, double flow)
-{
-    const struct sl_plan *plan = setting->plan;
-    double amount = value(setting, SL_IN_SUCTION_MINOR);
-
-    if (isnan(plan->inlet_diameter))
-        return amount;
-    return sl_minor_head(amount, sl_pipe_velocity(flow, plan->inlet_diameter));
-}
-
-static struct suction_loss suction_loss(const struct setting *setting,
-                                        double flow)
-{
-    const struct sl_plan *plan = setting->plan;
-    struct suction_loss sum = {0};
-
-    for (size_t i = 0; i < plan->path_count; i++) {
-        struct sl_pipe_loss loss = pipe_loss(setting, &plan->path[i], flow);
-        const struct sl_pipe *pipe = &loss.pipe->record;
-
-        /* What a pipe without bore or length loses is in the stand-in. */
-        if (pipe->bore.known && pipe->length.known)
-            sum.friction += loss.friction;
-        if (pipe->bore.known)
-            sum.minor += loss.minor;
-    }
-    if (plan->path_count == 0)
-        sum.minor += inlet_loss(setting, flow);
-    if (plan->unmeasured < SL_INPUT_COUNT)
-        sum.friction += value(setting, plan->unmeasured);
-    return sum;
-}
-
-static double discharge_loss(const struct setting *setting, double flow)
-{
-    const struct sl_delivery *delivery = &setting->plan->delivery;
-    enum sl_corner end = setting->ends->of[SL_IN_DISCHARGE_LOSS];
-    double velocity, reynolds, factor;
-
-    if (!isnan(delivery->loss_flow)) {
-        double part = flow / delivery->loss_flow;
-
-        return delivery->loss_head * part * part; /* F21 */
-    }
-    if (flow == 0)
-        return 0;
-    velocity = sl_pipe_velocity(flow, delivery->bore);
-    reynolds = sl_reynolds(velocity, delivery->bore, setting->viscosity);
-    factor = sl_friction_factor(reynolds,
-                                at(&delivery->roughness, end) / delivery->bore);
-    return sl_darcy_head(factor, delivery->length, delivery->bore, velocity) +
-           sl_minor_head(at(&delivery->minor_k, end), velocity);
-}
-
-/* V²/2g where the balance starts at a gauge on a pipe, and only there. */
-static double gauge_velocity_head(const struct setting *setting, double flow)
-{
-    const struct sl_plan *plan = setting->plan;
-
-    if (plan->source_kind != SL_MAIN || plan->path_count == 0 ||
-        !plan->path[0].pipe->record.bore.known)
-        return 0;
-    return sl_velocity_head(
-        sl_pipe_velocity(flow, plan->path[0].pipe->record.bore.value));
+    return sl_setting_value(setting, id) * 0;
 }
 
 /* The head one pump alone must give at this flow (F12 for a set of one). */
 static double system_head(void *context, double flow)
 {
-    const struct setting *setting = context;
-    struct suction_loss suction = suction_loss(setting, flow);
+    const struct sl_setting *setting = context;
+    struct sl_suction_loss suction = sl_suction_loss_at(setting, flow);
 
-    return value(setting, SL_IN_DISCHARGE_LEVEL) - setting->source_head -
-           gauge_velocity_head(setting, flow) + discharge_loss(setting, flow) +
-           suction.friction + suction.minor;
+    return sl_setting_value(setting, SL_IN_DISCHARGE_LEVEL) -
+           setting->source_head - sl_gauge_velocity_head(setting, flow) +
+           sl_discharge_loss_at(setting, flow) + suction.friction +
+           suction.minor;
 }
 
 /* The ends at which the flow is sought.  Loss on the suction side lessens
@@ -194,17 +56,17 @@ static struct sl_ends flow_ends(const struct sl_ends *ends)
     return most;
 }
 
-static double flow_of(const struct setting *setting,
+static double flow_of(const struct sl_setting *setting,
                       struct sl_case_notes *notes)
 {
     const struct sl_plan *plan = setting->plan;
     struct sl_ends ends = flow_ends(setting->ends);
-    struct setting seeking = *setting;
+    struct sl_setting seeking = *setting;
     struct sl_system system = {system_head, &seeking};
     struct sl_operating_point point;
 
     if (plan->flow_basis != SL_FLOW_SOLVED)
-        return value(setting, SL_IN_FLOW);
+        return sl_setting_value(setting, SL_IN_FLOW);
     seeking.ends = &ends;
     switch (
         sl_operating_point_find(&plan->head, &system, FLOW_TOLERANCE, &point)) {
@@ -228,7 +90,7 @@ static double flow_of(const struct setting *setting,
 /* NPSHR at a flow; off the curve the flow is a guess, and NPSHR there none.
  * A value known at the rated point alone holds from there on as a bound from
  * below, and nowhere as one from above. */
-static double npshr_at(const struct setting *setting, double flow,
+static double npshr_at(const struct sl_setting *setting, double flow,
                        struct sl_case_notes *notes)
 {
     const struct sl_plan *plan = setting->plan;
@@ -244,17 +106,18 @@ static double npshr_at(const struct setting *setting, double flow,
         notes->off_curve = isnan(npshr) && !isnan(flow);
         return npshr;
     }
-    npshr = value(setting, SL_IN_NPSHR);
+    npshr = sl_setting_value(setting, SL_IN_NPSHR);
     if (setting->ends->of[SL_IN_NPSHR] == SL_FAVOURABLE &&
         !(flow >= plan->rated_flow))
         return NAN;
     return npshr;
 }
 
-static struct setting setting_of(const struct sl_plan *plan,
-                                 const struct sl_ends *ends, double temperature)
+static struct sl_setting setting_of(const struct sl_plan *plan,
+                                    const struct sl_ends *ends,
+                                    double temperature)
 {
-    struct setting setting = {.plan = plan, .ends = ends};
+    struct sl_setting setting = {.plan = plan, .ends = ends};
     double salinity = plan->salinity;
 
     if (salinity == 0) {
@@ -267,31 +130,34 @@ static struct setting setting_of(const struct sl_plan *plan,
     }
     setting.viscosity = sl_water_viscosity(temperature) / setting.density;
     setting.source_head =
-        value(&setting, plan->source_kind == SL_MAIN
-                            ? SL_IN_SOURCE_PRESSURE_ELEVATION
-                            : SL_IN_SOURCE_LEVEL) +
-        value(&setting, SL_IN_SOURCE_PRESSURE) / (setting.density * SL_GRAVITY);
+        sl_setting_value(&setting, plan->source_kind == SL_MAIN
+                                       ? SL_IN_SOURCE_PRESSURE_ELEVATION
+                                       : SL_IN_SOURCE_LEVEL) +
+        sl_setting_value(&setting, SL_IN_SOURCE_PRESSURE) /
+            (setting.density * SL_GRAVITY);
     return setting;
 }
 
-static void balance(const struct setting *setting, double flow,
+static void balance(const struct sl_setting *setting, double flow,
                     struct sl_terms *terms)
 {
     const struct sl_plan *plan = setting->plan;
-    struct suction_loss suction = suction_loss(setting, flow);
-    double air = sl_standard_atmosphere(value(setting, SL_IN_SITE_ELEVATION));
+    struct sl_suction_loss suction = sl_suction_loss_at(setting, flow);
+    double air =
+        sl_standard_atmosphere(sl_setting_value(setting, SL_IN_SITE_ELEVATION));
     struct sl_balance heads = {
         .air_pressure = air,
-        .air_fall = air * value(setting, SL_IN_BAROMETER),
-        .gauge_pressure = value(setting, SL_IN_SOURCE_PRESSURE),
-        .surface = value(setting, plan->source_kind == SL_MAIN
-                                      ? SL_IN_SOURCE_PRESSURE_ELEVATION
-                                      : SL_IN_SOURCE_LEVEL),
-        .datum = value(setting, SL_IN_DATUM),
-        .velocity_head = gauge_velocity_head(setting, flow),
+        .air_fall = air * sl_setting_value(setting, SL_IN_BAROMETER),
+        .gauge_pressure = sl_setting_value(setting, SL_IN_SOURCE_PRESSURE),
+        .surface =
+            sl_setting_value(setting, plan->source_kind == SL_MAIN
+                                          ? SL_IN_SOURCE_PRESSURE_ELEVATION
+                                          : SL_IN_SOURCE_LEVEL),
+        .datum = sl_setting_value(setting, SL_IN_DATUM),
+        .velocity_head = sl_gauge_velocity_head(setting, flow),
         .friction = suction.friction,
         .minor = suction.minor,
-        .gas = value(setting, SL_IN_GAS),
+        .gas = sl_setting_value(setting, SL_IN_GAS),
         .density = setting->density,
         .vapour_pressure = setting->vapour_pressure,
     };
@@ -305,7 +171,7 @@ static void solve_at(const struct sl_plan *plan, const struct sl_ends *ends,
                      double temperature, struct sl_case *solved,
                      struct sl_case_notes *notes)
 {
-    struct setting setting = setting_of(plan, ends, temperature);
+    struct sl_setting setting = setting_of(plan, ends, temperature);
 
     *notes = (struct sl_case_notes){0};
     solved->flow = flow_of(&setting, notes);
@@ -339,7 +205,7 @@ void sl_solve_case(const struct sl_plan *plan, const struct sl_ends *ends,
     const struct sl_interval *warmth = &plan->inputs[SL_IN_TEMPERATURE].value;
     enum sl_corner end = ends->of[SL_IN_TEMPERATURE];
 
-    solve_at(plan, ends, at(warmth, end), solved, notes);
+    solve_at(plan, ends, sl_interval_at(warmth, end), solved, notes);
     if (end == SL_TYPICAL || warmth->adverse == warmth->favourable)
         return;
     for (int corner = 0; corner < SL_CORNER_COUNT; corner++) {
@@ -348,8 +214,8 @@ void sl_solve_case(const struct sl_plan *plan, const struct sl_ends *ends,
 
         if (corner == (int)end)
             continue;
-        solve_at(plan, ends, at(warmth, (enum sl_corner)corner), &tried,
-                 &tried_notes);
+        solve_at(plan, ends, sl_interval_at(warmth, (enum sl_corner)corner),
+                 &tried, &tried_notes);
         if (further(end, &tried, solved)) {
             *solved = tried;
             *notes = tried_notes;
@@ -375,13 +241,29 @@ double sl_solve_most_flow(const struct sl_plan *plan)
     return notes.stands ? 0 : solved.flow;
 }
 
+struct sl_interval sl_solve_discharge_loss(const struct sl_plan *plan,
+                                           double flow)
+{
+    double loss[SL_CORNER_COUNT];
+
+    for (int corner = 0; corner < SL_CORNER_COUNT; corner++) {
+        struct sl_ends ends = sl_ends_all((enum sl_corner)corner);
+        struct sl_setting setting = setting_of(
+            plan, &ends, plan->inputs[SL_IN_TEMPERATURE].value.typical);
+
+        loss[corner] = sl_discharge_loss_at(&setting, flow);
+    }
+    return (struct sl_interval){loss[SL_TYPICAL], loss[SL_ADVERSE],
+                                loss[SL_FAVOURABLE]};
+}
+
 void sl_solve_losses(const struct sl_plan *plan, double flow,
                      struct sl_pipe_loss *losses)
 {
     struct sl_ends ends = sl_ends_all(SL_TYPICAL);
-    struct setting setting =
+    struct sl_setting setting =
         setting_of(plan, &ends, plan->inputs[SL_IN_TEMPERATURE].value.typical);
 
     for (size_t i = 0; i < plan->path_count; i++)
-        losses[i] = pipe_loss(&setting, &plan->path[i], flow);
+        losses[i] = sl_pipe_loss_at(&setting, &plan->path[i], flow);
 }

@@ -111,7 +111,8 @@ static void measure(struct sl_plan *plan, enum sl_input_id id, double value,
                     const char *rule)
 {
     struct sl_input *input =
-        sl_plan_set(plan, id, SL_RECORDED, sl_exactly(value), rule);
+        sl_plan_set(plan, id, plan->path_count > 1 ? SL_DERIVED : SL_RECORDED,
+                    sl_exactly(value), plan->path_count > 1 ? rule : "");
 
     input->kind = SL_KIND_PIPE;
     input->line = plan->pump->suction->record.line;

@@ -44,7 +44,8 @@ static const struct sl_field station_fields[] = {
            "degrees east, WGS 84", "the station is not on the map"),
     NUMBER(sl_station, site_elevation, SL_LENGTH, ELEVATIONS, false,
            "ground above sea level; sets the air pressure",
-           "the air pressure has no bound: no pump here can be judged"),
+           "a low barometer tells it, else a level stands in without a bound: "
+           "no pump here can be called clear"),
     WORD(sl_station, installation, SL_WORDS_INSTALLATION, false,
          "where the pumps stand", "told from the pumps' make-up"),
     WORD(sl_station, source_kind, SL_WORDS_SOURCE_KIND, false,
@@ -63,9 +64,11 @@ static const struct sl_field station_fields[] = {
            "lowest source level the controls permit",
            "the lowest on record stands in; without that no pump is clear"),
     NUMBER(sl_station, record_low_level, SL_LENGTH, ELEVATIONS, false,
-           "lowest source level ever recorded", "the cut-out is used"),
+           "lowest source level ever recorded; audited for raw water, "
+           "irrigation and seawater, where no control can hold it",
+           "the cut-out is used"),
     NUMBER(sl_station, normal_level, SL_LENGTH, ELEVATIONS, false,
-           "usual source level", "the lowest known level is used"),
+           "usual source level", "the level that is audited as lowest is used"),
     NUMBER(sl_station, water_temp_summer, SL_TEMPERATURE, TEMPERATURES, false,
            "warmest water of the year",
            "a default by service, with its interval"),
@@ -78,7 +81,7 @@ static const struct sl_field station_fields[] = {
            "a storm allowance off the standard atmosphere"),
     NUMBER(sl_station, discharge_low, SL_LENGTH, RANGE(-450, 8000), false,
            "lowest discharge level or hydraulic grade",
-           "the flow is not solved: recorded or rated flow is used"),
+           "the usual one stands in, without a bound"),
     NUMBER(sl_station, discharge_normal, SL_LENGTH, RANGE(-450, 8000), false,
            "usual discharge level or hydraulic grade",
            "the normal condition uses the lowest"),
@@ -127,7 +130,7 @@ static const struct sl_field pump_fields[] = {
     NUMBER(sl_pump, datum_elevation, SL_LENGTH, ELEVATIONS, false,
            "the impeller eye: shaft axis of a horizontal pump, inlet edge "
            "of the first-stage blades of a vertical one",
-           "no bound: the pump cannot be judged"),
+           "no bound: it can be proven short by its inlet's lip alone"),
     TEXT(sl_pump, curve_id, false, "the maker's curve it runs on",
          "only the rated point is known: it cannot be called clear"),
     NUMBER(sl_pump, rated_flow, SL_FLOW, RANGE(1e-6, 200), false,
@@ -150,7 +153,9 @@ static const struct sl_field pump_fields[] = {
     NUMBER(sl_pump, eye_diameter, SL_BORE, RANGE(0.005, 15), false,
            "diameter of the impeller eye", "nothing yet"),
     NUMBER(sl_pump, inlet_elevation, SL_LENGTH, ELEVATIONS, false,
-           "lip of the bell or opening", "nothing yet"),
+           "lip of the bell or opening; bounds an impeller eye that is not "
+           "recorded",
+           "nothing, where the eye is recorded"),
     NUMBER(sl_pump, inlet_diameter, SL_BORE, RANGE(0.005, 15), false,
            "diameter of the bell or opening",
            "a default inlet loss, with its interval"),
@@ -200,7 +205,8 @@ static const struct sl_field pipe_fields[] = {
     NUMBER(sl_pipe, roughness, SL_BORE, RANGE(0, 0.1), false,
            "absolute roughness", "taken from the material's row"),
     NUMBER(sl_pipe, hazen_williams_c, SL_PURE, RANGE(20, 200), false,
-           "Hazen-Williams C", "friction by Darcy and Colebrook"),
+           "Hazen-Williams C; used where the roughness is not recorded",
+           "friction by Darcy and Colebrook"),
 };
 
 static const struct sl_field fitting_fields[] = {

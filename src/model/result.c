@@ -46,7 +46,7 @@ static const struct {
                                "the source's gauge pressure", SL_PRESSURE},
     [SL_IN_SOURCE_PRESSURE_ELEVATION] = {"source_pressure_elevation",
                                          "the gauge's elevation", SL_LENGTH},
-    [SL_IN_SOURCE_LEVEL] = {"cut_out_level", "the lowest source level",
+    [SL_IN_SOURCE_LEVEL] = {"cut_out_level", "the source level",
                             SL_LENGTH},
     [SL_IN_DATUM] = {"datum_elevation", "the elevation of the impeller eye",
                      SL_LENGTH},

@@ -219,7 +219,7 @@ static void level_that_stands_in_is_the_reason(void **state)
     pump = summer(f);
     assert_ptr_equal(pump->leading_unknown, &pump->inputs[SL_IN_SOURCE_LEVEL]);
     assert_true(pump->leading_unknown->settles);
-    assert_non_null(strstr(pump->reason, "the lowest source level: the lowest "
+    assert_non_null(strstr(pump->reason, "the source level: the lowest "
                                          "on record stands in"));
 }
 
