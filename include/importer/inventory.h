@@ -20,8 +20,8 @@
 
 struct sl_sink {
     void *context;
-    /* Keep one record of a kind.  Its raw text is for the case that the
-     * importer sets it aside later.  Fallible: the store may be full. */
+    /* Keep one record of a kind, or answer why not.  Fallible: the store may
+     * be full. */
     enum sl_status (*record)(void *context, enum sl_kind kind,
                              const void *record, struct sl_answer *answer,
                              struct sl_error *error);
@@ -36,7 +36,8 @@ struct sl_sink {
                               struct sl_error *error);
     enum sl_status (*column)(void *context, const struct sl_column_use *use,
                              struct sl_error *error);
-    /* Called now and then with bytes read of all bytes; false: stop. */
+    /* Called now and then, and before each recall, with bytes read of all
+     * bytes; false: stop. */
     bool (*progress)(void *context, long long done, long long all);
 };
 

@@ -39,7 +39,7 @@ struct sl_aside {
     const char *record_id;  /* its key, "" when it has none */
     const char *station_id; /* of a pump or pipe, as written; else "" */
     const char *reason;
-    const char *raw; /* its text as read */
+    const char *raw; /* its text as read; NULL of a pipe taken back */
     size_t raw_length;
 };
 

@@ -96,6 +96,8 @@ enum sl_status sl_output_commit(struct sl_output *output,
     FILE *stream = output->stream;
     int bad = ferror(stream);
 
+    /* What an earlier write failed of is forgotten by now. */
+    errno = EIO;
     bad |= fflush(stream) != 0 || fsync(fileno(stream)) != 0;
     output->stream = NULL;
     bad |= fclose(stream) != 0;

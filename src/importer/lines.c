@@ -116,9 +116,8 @@ void sl_lines_return(struct sl_lines *lines, size_t length, long line)
 
 enum sl_status sl_lines_skip(struct sl_lines *lines, struct sl_error *error)
 {
-    enum sl_status status = SL_OK;
-
     for (;;) {
+        enum sl_status status;
         size_t end = line_end(lines, 0);
 
         if (end != lines->next || lines->ended) {

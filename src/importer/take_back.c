@@ -26,7 +26,7 @@ static enum sl_status take_back(const struct sl_file_pass *pass,
                              .record_id = recall->record_id,
                              .station_id = "",
                              .reason = finding.reason,
-                             .raw = ""};
+                             .raw = NULL};
     enum sl_status status = SL_OK;
 
     if (fate == SL_KEPT)
@@ -57,6 +57,16 @@ enum sl_status sl_file_pass_recall(const struct sl_file_pass *pass,
     bool found = false;
 
     for (;;) {
+        if (sink->progress &&
+            !sink->progress(sink->context,
+                            pass->bytes_before + pass->file->position,
+                            pass->bytes_all)) {
+            status = sl_error_set(error, SL_INTERRUPTED,
+                                  "stopped while reading %s; nothing was "
+                                  "changed",
+                                  sl_record_kind(pass->kind)->file);
+            break;
+        }
         status = sink->recall(sink->context, &recall, &found, error);
         if (status || !found)
             break;

@@ -180,6 +180,53 @@ static struct sl_dossier_pipe *find_pipe(const struct sl_dossier *dossier,
     return NULL;
 }
 
+/* Only a file changed by other means is so: an import takes back what leads
+ * nowhere or round in a loop. */
+static enum sl_status changed(const struct sl_fetching *fetching,
+                              const char *what, const char *id)
+{
+    return sl_error_set(fetching->error, SL_STORE,
+                        "the store \"%s\" was changed by other means: %s "
+                        "\"%s\"; import the inventory into a new store",
+                        fetching->store->path, what, id);
+}
+
+/* Each pipe is walked up once, so that a long chain costs no more: `walks`
+ * says by which walk, and only the walk under way can meet itself. */
+static enum sl_status check_no_loop(const struct sl_fetching *fetching)
+{
+    const struct sl_dossier *dossier = fetching->dossier;
+    const struct sl_dossier_pipe *first = dossier->pipes;
+    size_t *walks =
+        sl_arena_new(fetching->arena, dossier->pipe_count, sizeof *walks);
+
+    for (size_t walk = 1; walk <= dossier->pipe_count; walk++) {
+        const struct sl_dossier_pipe *pipe = &first[walk - 1];
+
+        for (; pipe && !walks[pipe - first]; pipe = pipe->draws_from)
+            walks[pipe - first] = walk;
+        if (pipe && walks[pipe - first] == walk)
+            return changed(fetching, "a loop of pipes leads through",
+                           pipe->record.pipe_id);
+    }
+    return SL_OK;
+}
+
+static enum sl_status link_pipes(const struct sl_fetching *fetching)
+{
+    struct sl_dossier *dossier = fetching->dossier;
+
+    for (size_t i = 0; i < dossier->pipe_count; i++) {
+        struct sl_dossier_pipe *pipe = &dossier->pipes[i];
+
+        pipe->draws_from = find_pipe(dossier, pipe->record.draws_from);
+        if (pipe->record.draws_from && !pipe->draws_from)
+            return changed(fetching, "no pipe of the station is draws_from",
+                           pipe->record.draws_from);
+    }
+    return check_no_loop(fetching);
+}
+
 static enum sl_status fetch_pipes(const struct sl_fetching *fetching)
 {
     struct sl_dossier *dossier = fetching->dossier;
@@ -193,10 +240,10 @@ static enum sl_status fetch_pipes(const struct sl_fetching *fetching)
     dossier->pipes = items;
     if (status || !dossier->pipe_count)
         return status;
+    status = link_pipes(fetching);
     for (size_t i = 0; !status && i < dossier->pipe_count; i++) {
         struct sl_dossier_pipe *pipe = &dossier->pipes[i];
 
-        pipe->draws_from = find_pipe(dossier, pipe->record.draws_from);
         status = sl_count_rejected(fetching->store, fetching->vintage,
                                    SL_KIND_FITTING, pipe->record.pipe_id,
                                    &pipe->rejected_fittings, fetching->error);
@@ -211,7 +258,8 @@ static enum sl_status fetch_pipes(const struct sl_fetching *fetching)
         struct sl_dossier_pipe *pipe = find_pipe(dossier, fittings[i].pipe_id);
 
         if (!pipe)
-            continue;
+            return changed(fetching, "no pipe of the station is pipe_id",
+                           fittings[i].pipe_id);
         if (!pipe->fitting_count)
             pipe->fittings = &fittings[i];
         pipe->fitting_count++;
@@ -270,6 +318,10 @@ static enum sl_status fetch_pumps(const struct sl_fetching *fetching)
         struct sl_dossier_pump *pump = &dossier->pumps[i];
 
         pump->suction = find_pipe(dossier, pump->record.suction_pipe_id);
+        if (pump->record.suction_pipe_id && !pump->suction)
+            return changed(fetching,
+                           "no pipe of the station is suction_pipe_id",
+                           pump->record.suction_pipe_id);
         if (!pump->record.curve_id)
             continue;
         pump->curve = curve_read_before(dossier, i, pump->record.curve_id);

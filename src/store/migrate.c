@@ -57,6 +57,11 @@ static enum sl_status refuse_foreign(struct sl_store *store,
 static enum sl_status check_version(struct sl_store *store, long long version,
                                     struct sl_error *error)
 {
+    if (version < 0)
+        return sl_error_set(error, SL_STORE,
+                            "the store \"%s\" says it is of version %lld, "
+                            "which none is: it was changed by other means",
+                            store->path, version);
     if (version > newest_version())
         return sl_error_set(error, SL_STORE,
                             "the store \"%s\" is of version %lld, this program "
@@ -120,6 +125,16 @@ static size_t kept_length(const char *text)
     return length;
 }
 
+/* A name out of the file is text like any other: one with a quote in it
+ * must not end its own quoting. */
+static void add_drop(struct sl_text *drop, const char *view)
+{
+    sl_text_add_string(drop, "DROP VIEW \"");
+    for (; *view; view++)
+        sl_text_add(drop, *view == '"' ? "\"\"" : view, *view == '"' ? 2 : 1);
+    sl_text_add_string(drop, "\";");
+}
+
 static bool is_ours(const char *kept)
 {
     for (size_t i = 0; i < sl_views_count; i++)
@@ -144,8 +159,7 @@ static enum sl_status compare_views(struct sl_store *store, bool *same,
 
     *same = true;
     while (code == SQLITE_OK && sqlite3_step(asked) == SQLITE_ROW) {
-        sl_text_addf(drop, "DROP VIEW \"%s\";",
-                     (const char *)sqlite3_column_text(asked, 0));
+        add_drop(drop, (const char *)sqlite3_column_text(asked, 0));
         if (!is_ours((const char *)sqlite3_column_text(asked, 1)))
             *same = false;
         count++;

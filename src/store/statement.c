@@ -33,6 +33,12 @@ enum sl_status sl_store_fault(const struct sl_store *store, const char *sql,
                             "no room to write the store \"%s\"; it is as it "
                             "was: make room and try again",
                             store->path);
+    if (code == SQLITE_READONLY_ROLLBACK)
+        return sl_error_set(error, SL_STORE,
+                            "the store \"%s\" was being written when its "
+                            "writer died; import or evaluate once to bring it "
+                            "back to what it was, and keep its journal",
+                            store->path);
     if ((code & 0xFF) == SQLITE_NOTADB)
         return sl_error_set(error, SL_STORE,
                             "the file \"%s\" is no store of this program; "

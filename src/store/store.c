@@ -43,6 +43,12 @@ enum sl_status sl_store_open(const char *path, enum sl_store_mode mode,
     opened->writing = mode != SL_STORE_READ;
     opened->path = sl_new(strlen(path) + 1, 1);
     memcpy(opened->path, path, strlen(path));
+    /* SQLite takes an empty name for a file that it deletes when done. */
+    if (!*path) {
+        status = sl_error_set(error, SL_STORE,
+                              "the name of the store is empty; name a file");
+        goto done;
+    }
     /* No mutex: a store is used by one thread at a time. */
     if (sqlite3_open_v2(path, &opened->database,
                         flags_of[mode] | SQLITE_OPEN_NOMUTEX,

@@ -462,6 +462,30 @@ static void fill_large(struct sl_text *text)
         sl_text_addf(text, "S%06d,\"Station\nnumber %d\"\n", i, i);
 }
 
+/* Taking back may be long where a station has very many pipes. */
+static void taking_back_can_be_stopped(void **state)
+{
+    static const struct sl_recall recalls[] = {
+        {"B", "X", 3, {SL_ANSWER_NO_SUCH, "draws_from", NULL, 0}}};
+    struct folder folder;
+    struct listener listener = {.recalls = recalls, .recall_count = 1};
+    struct listener stopping = {.recalls = recalls, .recall_count = 1};
+    struct sl_error error = {0};
+
+    (void)state;
+    folder_make(&folder);
+    folder_put(&folder, "stations.csv", "station_id\nS\n");
+    folder_put(&folder, "pumps.csv", PUMPS);
+    folder_put(&folder, "suction_pipes.csv",
+               "pipe_id,station_id,draws_from\nA,S,\nB,S,X\n");
+    assert_int_equal(import_folder(&folder, &listener, &error), SL_OK);
+    /* The last two calls: before "none left", and in pumps.csv. */
+    stopping.stop_at = listener.progress - 4;
+    assert_int_equal(import_folder(&folder, &stopping, &error), SL_INTERRUPTED);
+    assert_non_null(strstr(error.message, "reading suction_pipes.csv"));
+    folder_remove(&folder);
+}
+
 static void progress_is_told_and_can_stop(void **state)
 {
     struct folder folder;
@@ -643,6 +667,7 @@ int main(int argc, char **argv)
         cmocka_unit_test(a_file_overwritten_in_place_is_told),
         cmocka_unit_test(a_sink_that_fails_stops_the_reading),
         cmocka_unit_test(an_answer_about_no_column_is_our_bug),
+        cmocka_unit_test(taking_back_can_be_stopped),
         cmocka_unit_test(progress_is_told_and_can_stop),
         cmocka_unit_test(records_over_the_seam_of_pieces_are_whole),
         cmocka_unit_test(a_line_without_end_is_passed_over),

@@ -100,6 +100,16 @@ static void newer_store_is_refused(void **state)
     assert_refused_untouched(f, SL_STORE_READ, "use the newer program");
 }
 
+static void a_version_none_has_is_refused(void **state)
+{
+    struct fixture *f = *state;
+
+    open_and_close(f, SL_STORE_CREATE);
+    file_does(f, "PRAGMA user_version = -5");
+    assert_refused_untouched(f, SL_STORE_CREATE, "which none is");
+    assert_refused_untouched(f, SL_STORE_READ, "which none is");
+}
+
 static void older_store_is_not_read(void **state)
 {
     struct fixture *f = *state;
@@ -150,6 +160,32 @@ static void changed_views_are_made_anew(void **state)
                                   "type = 'view'"),
                      5);
     assert_int_equal(file_says(f, "SELECT count(*) FROM station_order"), 0);
+}
+
+/* Undoing the quoting of its name, a view could run what it likes. */
+static void a_view_named_to_break_out_is_only_dropped(void **state)
+{
+    struct fixture *f = *state;
+
+    open_and_close(f, SL_STORE_CREATE);
+    file_does(f, "CREATE VIEW \"a\"\"; DELETE FROM conditions; --\" AS "
+                 "SELECT 1");
+    open_and_close(f, SL_STORE_CREATE);
+    assert_int_equal(file_says(f, "SELECT count(*) FROM conditions"), 2);
+    assert_int_equal(file_says(f, "SELECT count(*) FROM sqlite_schema WHERE "
+                                  "type = 'view'"),
+                     5);
+}
+
+static void a_store_without_a_name_is_refused(void **state)
+{
+    struct fixture *f = *state;
+    struct sl_store *store = NULL;
+
+    assert_int_equal(sl_store_open("", SL_STORE_CREATE, &store, &f->error),
+                     SL_STORE);
+    assert_null(store);
+    assert_non_null(strstr(f->error.message, "empty"));
 }
 
 static void every_statement_prepares(void **state)
@@ -368,6 +404,10 @@ static void a_killed_writer_leaves_the_old_state(void **state)
     assert_int_equal(ended, 0);
     snprintf(journal, sizeof journal, "%s-journal", f->path);
     assert_int_equal(access(journal, F_OK), 0);
+    /* A reader may not put it back, and says who can. */
+    assert_int_equal(sl_store_open(f->path, SL_STORE_READ, &store, &f->error),
+                     SL_STORE);
+    assert_non_null(strstr(f->error.message, "import or evaluate once"));
     must(f, sl_store_open(f->path, SL_STORE_CREATE, &store, &f->error));
     assert_int_equal(sl_store_count_stations(store, f->vintage), 1);
     assert_int_equal(sl_store_count_stations(store, f->vintage + 1), 0);
@@ -523,10 +563,13 @@ int main(void)
         IN_FOLDER(opening_again_changes_no_byte),
         IN_FOLDER(reading_makes_no_file),
         IN_FOLDER(newer_store_is_refused),
+        IN_FOLDER(a_version_none_has_is_refused),
         IN_FOLDER(older_store_is_not_read),
         IN_FOLDER(other_database_is_refused),
         IN_FOLDER(no_database_is_refused),
         IN_FOLDER(changed_views_are_made_anew),
+        IN_FOLDER(a_view_named_to_break_out_is_only_dropped),
+        IN_FOLDER(a_store_without_a_name_is_refused),
         IN_VINTAGE(every_statement_prepares),
         IN_VINTAGE(every_view_can_be_read),
         IN_FOLDER(columns_are_the_list_of_fields),
