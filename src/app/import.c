@@ -198,8 +198,8 @@ static enum sl_status read_records(struct sl_run *run,
     sl_progress_end();
     if (!status && intake.findings > intake.shown)
         fprintf(stderr,
-                "%lld more findings are not shown; all are in "
-                "findings.csv and the store\n",
+                "%lld more findings are not shown; all are in the store, "
+                "and in findings.csv once it is ranked\n",
                 intake.findings - intake.shown);
     return status;
 }

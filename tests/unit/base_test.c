@@ -7,8 +7,11 @@
 #include <stdint.h>
 
 #include <cmocka.h>
+#include <errno.h>
+#include <signal.h>
 #include <stdlib.h>
 #include <string.h>
+#include <sys/resource.h>
 #include <sys/stat.h>
 #include <sys/wait.h>
 #include <unistd.h>
@@ -344,6 +347,31 @@ static void a_full_disk_keeps_the_earlier_file(void **state)
     assert_int_equal(rmdir(folder), 0);
 }
 
+/* A disk that was full for a while: what is in the file has a hole. */
+static void an_earlier_failed_write_is_told(void **state)
+{
+    char *folder = scratch_folder();
+    struct sl_output output;
+    struct sl_error error = {0};
+    struct rlimit limit, none;
+
+    (void)state;
+    assert_int_equal(sl_output_open(&output, folder, "list.csv", &error), 0);
+    setvbuf(output.stream, NULL, _IONBF, 0);
+    signal(SIGXFSZ, SIG_IGN);
+    assert_int_equal(getrlimit(RLIMIT_FSIZE, &limit), 0);
+    none = limit;
+    none.rlim_cur = 0;
+    setrlimit(RLIMIT_FSIZE, &none);
+    fputs("lost", output.stream);
+    setrlimit(RLIMIT_FSIZE, &limit);
+    fputs("written", output.stream);
+    errno = 0;
+    assert_int_equal(sl_output_commit(&output, &error), SL_FILE);
+    assert_non_null(strstr(error.message, strerror(EIO)));
+    assert_int_equal(rmdir(folder), 0);
+}
+
 static void folders_are_made_with_their_parents(void **state)
 {
     char *folder = scratch_folder();
@@ -384,6 +412,7 @@ int main(void)
         cmocka_unit_test(errors_keep_their_message_and_every_status_a_name),
         cmocka_unit_test(an_output_appears_only_when_committed),
         cmocka_unit_test(a_full_disk_keeps_the_earlier_file),
+        cmocka_unit_test(an_earlier_failed_write_is_told),
         cmocka_unit_test(folders_are_made_with_their_parents),
     };
 

@@ -467,10 +467,11 @@ static void taking_back_can_be_stopped(void **state)
 {
     static const struct sl_recall recalls[] = {
         {"B", "X", 3, {SL_ANSWER_NO_SUCH, "draws_from", NULL, 0}}};
+    struct listener none = {0};
+    struct listener one = {.recalls = recalls, .recall_count = 1};
     struct folder folder;
-    struct listener listener = {.recalls = recalls, .recall_count = 1};
-    struct listener stopping = {.recalls = recalls, .recall_count = 1};
     struct sl_error error = {0};
+    int stopped_in_pipes = 0;
 
     (void)state;
     folder_make(&folder);
@@ -478,12 +479,23 @@ static void taking_back_can_be_stopped(void **state)
     folder_put(&folder, "pumps.csv", PUMPS);
     folder_put(&folder, "suction_pipes.csv",
                "pipe_id,station_id,draws_from\nA,S,\nB,S,X\n");
-    assert_int_equal(import_folder(&folder, &listener, &error), SL_OK);
-    /* The last two calls: before "none left", and in pumps.csv. */
-    stopping.stop_at = listener.progress - 4;
-    assert_int_equal(import_folder(&folder, &stopping, &error), SL_INTERRUPTED);
-    assert_non_null(strstr(error.message, "reading suction_pipes.csv"));
+    assert_int_equal(import_folder(&folder, &none, &error), SL_OK);
+    assert_int_equal(import_folder(&folder, &one, &error), SL_OK);
+    assert_int_equal(one.progress, none.progress + 1);
+    for (long at = 1; at <= one.progress; at++) {
+        struct listener stopping = {
+            .recalls = recalls, .recall_count = 1, .stop_at = at};
+
+        assert_int_equal(import_folder(&folder, &stopping, &error),
+                         SL_INTERRUPTED);
+        stopped_in_pipes += strstr(error.message, "suction_pipes") != NULL;
+        listener_release(&stopping);
+    }
+    /* At its first record, and before each of two recalls. */
+    assert_int_equal(stopped_in_pipes, 3);
     folder_remove(&folder);
+    listener_release(&none);
+    listener_release(&one);
 }
 
 static void progress_is_told_and_can_stop(void **state)

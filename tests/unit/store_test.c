@@ -5,6 +5,7 @@
 #include <sys/wait.h>
 
 #include "base/text.h"
+#include "unit/check.h"
 
 static void open_and_close(struct fixture *f, enum sl_store_mode mode)
 {
@@ -478,6 +479,19 @@ static void published_tables_are_read(void **state)
     assert_int_equal(t->rules[0].trust, 'N');
 }
 
+/* Common practice, no source: a rounded entrance has K 0.25. */
+static void a_rounded_entrance_has_a_k_of_a_quarter(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_words *fittings =
+        &f->tables.vocabularies.of[SL_WORDS_FITTING];
+    int rounded = sl_word_find(fittings, "rounded entrance", 16);
+
+    assert_int_not_equal(rounded, 0);
+    check_close("K of a rounded entrance",
+                f->tables.fittings[rounded - 1].k.typical, 0.25, 0, 0);
+}
+
 /* Ends of an interval lie about the typical value, and each row has its
  * source: what a slip of the pen in the data would break. */
 static void published_intervals_hold_together(void **state)
@@ -582,6 +596,7 @@ int main(void)
         IN_FOLDER(a_reading_store_cannot_be_written),
         IN_VINTAGE(the_same_content_twice_is_our_bug),
         IN_VINTAGE(published_tables_are_read),
+        IN_VINTAGE(a_rounded_entrance_has_a_k_of_a_quarter),
         IN_VINTAGE(published_intervals_hold_together),
         IN_FOLDER(the_schema_is_documented),
         cmocka_unit_test(input_columns_are_told_apart),
