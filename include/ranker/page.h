@@ -82,4 +82,8 @@ void sl_page_unknowns_end(struct sl_report *report);
 /* End the list of what was set aside and its section. */
 void sl_page_set_aside_end(struct sl_report *report);
 
+/* A pump, with its station and condition below it. */
+void sl_page_pump(const struct sl_report *report, const char *pump_id,
+                  const char *station, const char *condition);
+
 #endif

@@ -238,3 +238,14 @@ void sl_page_counted(const struct sl_report *report, long long count,
     sl_markup(report->stream, " ");
     sl_markup_text(report->stream, count == 1 ? one : many);
 }
+
+void sl_page_pump(const struct sl_report *report, const char *pump_id,
+                  const char *station, const char *condition)
+{
+    sl_page_name(report, pump_id);
+    sl_markup(report->stream, "<small>");
+    sl_page_name(report, station);
+    sl_markup(report->stream, " · ");
+    sl_page_name(report, condition);
+    sl_markup(report->stream, "</small>");
+}

@@ -19,13 +19,9 @@ static void write_pump(const struct sl_report *report, const void *any)
 {
     const struct sl_unknown_row *row = any;
 
-    sl_page_name(report, row->pump_id);
-    sl_markup(report->stream, "<small>");
-    sl_page_name(report,
-                 row->station_name ? row->station_name : row->station_id);
-    sl_markup(report->stream, " · ");
-    sl_page_name(report, row->condition);
-    sl_markup(report->stream, "</small>");
+    sl_page_pump(report, row->pump_id,
+                 row->station_name ? row->station_name : row->station_id,
+                 row->condition);
 }
 
 static void write_input(const struct sl_report *report, const void *row)
