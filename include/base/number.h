@@ -1,8 +1,8 @@
 /* Numbers as people write them in an inventory.
  *
- * Grammar: [+-] digits [. digits] [e [+-] digits], or . digits; a point is
- * the decimal mark; nothing before or after.  Not taken: grouping marks,
- * decimal commas, units, "nan", "inf", hexadecimal. */
+ * Grammar: [+-] digits [. [digits]] [e [+-] digits], or . digits; a point is
+ * the decimal mark; nothing before or after, 63 characters at most.  Not
+ * taken: grouping marks, decimal commas, units, "nan", "inf", hexadecimal. */
 #ifndef SL_BASE_NUMBER_H
 #define SL_BASE_NUMBER_H
 

@@ -208,6 +208,7 @@ CREATE INDEX drawing_pipes ON suction_pipes (vintage, station, draws_from)
     WHERE draws_from IS NOT NULL;
 CREATE INDEX fittings_of_pipe ON suction_fittings (pipe, line);
 CREATE INDEX grades_of_vintage ON grades (vintage);
-CREATE INDEX set_aside_by_record ON set_aside (vintage, file, record_id);
+CREATE INDEX set_aside_by_record
+    ON set_aside (vintage, file, record_id, line);
 CREATE INDEX set_aside_by_station ON set_aside (vintage, file, station_id);
 CREATE INDEX findings_of_vintage ON findings (vintage);

@@ -49,6 +49,23 @@ static void reference_rejected(const struct sl_answer *answer,
                    answer->line);
 }
 
+/* The key of a curve's point is its curve and its flow. */
+static void duplicate(const struct sl_record_kind *kind,
+                      const struct sl_answer *answer, const char *value,
+                      struct sl_problem *problem)
+{
+    if (kind == sl_record_kind(SL_KIND_CURVE))
+        sl_problem_set(problem, "duplicate-key", "keep one of the two points",
+                       "the curve \"%s\" has a point at this flow already "
+                       "(%s:%ld)",
+                       value, kind->file, answer->line);
+    else
+        sl_problem_set(problem, "duplicate-key",
+                       "keep one of the two records, or give each its own key",
+                       "\"%s\" is taken by the record at %s:%ld", value,
+                       kind->file, answer->line);
+}
+
 static void other_station(const struct sl_answer *answer, const char *value,
                           struct sl_problem *problem)
 {
@@ -74,10 +91,7 @@ enum sl_fate sl_answer_fate(const struct sl_record_kind *kind,
                        answer->line);
         return SL_OUT_OF_SCOPE;
     case SL_ANSWER_DUPLICATE:
-        sl_problem_set(problem, "duplicate-key",
-                       "keep one of the two records, or give each its own key",
-                       "\"%s\" is taken by the record at %s:%ld", value,
-                       kind->file, answer->line);
+        duplicate(kind, answer, value, problem);
         break;
     case SL_ANSWER_NO_SUCH:
         no_such(answer, value, problem);
