@@ -27,6 +27,11 @@ enum sl_status sl_run_open(struct sl_run *run, const char *path,
 /* The newest vintage, and (where `evaluated`) its newest evaluation. */
 enum sl_status sl_run_find_newest(struct sl_run *run, bool evaluated,
                                   struct sl_error *error);
+/* The rule the lists are ranked on: the first of the table, which must not
+ * be empty. */
+enum sl_status sl_run_find_rule(const struct sl_run *run,
+                                const struct sl_margin_rule **rule,
+                                struct sl_error *error);
 void sl_run_close(struct sl_run *run);
 
 /* The steps. Import and evaluate work inside a transaction of the caller's

@@ -7,7 +7,8 @@
 /* Solve the three corners of a plan and draw the state from them:
  * short   NPSHA below NPSHR even with every unknown at its favourable end;
  * thin    likewise the margin rule not met;
- * clear   the rule met with every unknown at its adverse end;
+ * clear   the rule met with every unknown at its adverse end, and figures
+ *         at the typical one;
  * unproven otherwise: then each unknown is weighed by what the surplus
  *         would gain if it alone went from its adverse to its favourable
  *         end, and marked when it alone could settle the state.

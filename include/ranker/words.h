@@ -36,6 +36,8 @@ const char *sl_words_state(enum sl_state state);
 /* The words of an inventory column, "the impeller eye's ..."; the column
  * itself when it is none that a balance is made from. */
 const char *sl_words_column(const char *column);
+/* A default's field in words; the field itself where there are none. */
+const char *sl_words_default(const char *field);
 /* How far a published value can be trusted, from its mark. */
 const char *sl_words_trust(char trust);
 /* The rule: "NPSHA at least 1.30 x NPSHR, and at least NPSHR + 1.5 m". */

@@ -56,6 +56,13 @@ enum sl_status sl_store_add_column(struct sl_store *store, long long vintage,
 enum sl_status sl_store_add_file(struct sl_store *store, long long vintage,
                                  const struct sl_file_sum *sum,
                                  struct sl_error *error);
+/* Calls `each` with every curve and suction pipe that nothing kept refers
+ * to, by file and line; texts live for the call. */
+enum sl_status sl_store_each_unused(
+    struct sl_store *store, long long vintage,
+    enum sl_status (*each)(void *context, const char *file, long line,
+                           const char *id, struct sl_error *error),
+    void *context, struct sl_error *error);
 enum sl_status sl_store_read_files(struct sl_store *store, long long vintage,
                                    struct sl_file_sum sums[SL_KIND_COUNT],
                                    struct sl_error *error);

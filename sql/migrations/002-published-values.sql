@@ -264,6 +264,12 @@ VALUES
      'Engineering: 3 to 27 °C across the US, 30 to 35 °C in hot ' ||
      'countries',
      'M'),
+    ('water_temp_summer', 'industrial', 303.15, NULL, 283.15, 'temperature',
+     'proposal; a process may heat its water to any temperature',
+     'P'),
+    ('water_temp_normal', 'industrial', 298.15, NULL, 278.15, 'temperature',
+     'proposal; a process may heat its water to any temperature',
+     'P'),
     ('water_temp_normal', '', 287.15, 297.15, 277.15, 'temperature',
      'proposal, no outside authority',
      'P'),

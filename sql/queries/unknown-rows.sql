@@ -16,5 +16,6 @@ ORDER BY
     u.settles DESC,
     CASE WHEN r.likely IN ('short', 'thin') THEN 1 ELSE 2 END,
     s.people_served DESC NULLS LAST,
-    u.swing DESC NULLS FIRST,
+    (u.adverse IS NULL) DESC,
+    u.swing DESC NULLS LAST,
     s.station_id, p.pump_id, u.unknown;

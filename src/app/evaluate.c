@@ -5,26 +5,22 @@
 #include "app/terminal.h"
 #include "evaluator/station.h"
 
-/* The rule the lists are ranked on: the first of the table. */
-static const struct sl_margin_rule *ranking_rule(const struct sl_run *run)
-{
-    return run->tables.rule_count ? &run->tables.rules[0] : NULL;
-}
-
 static enum sl_status evaluate_one(struct sl_run *run,
+                                   const struct sl_margin_rule *rule,
                                    const struct sl_dossier *dossier,
                                    struct sl_arena *arena,
                                    struct sl_error *error)
 {
     struct sl_station_result result;
 
-    sl_evaluate_station(dossier, &run->tables, ranking_rule(run), arena,
-                        &result);
+    sl_evaluate_station(dossier, &run->tables, rule, arena, &result);
     return sl_store_add_result(run->store, run->evaluation.evaluation, &result,
                                error);
 }
 
-static enum sl_status evaluate_all(struct sl_run *run, struct sl_error *error)
+static enum sl_status evaluate_all(struct sl_run *run,
+                                   const struct sl_margin_rule *rule,
+                                   struct sl_error *error)
 {
     long long all = sl_store_count_stations(run->store, run->vintage.vintage);
     struct sl_arena arena = {0};
@@ -40,7 +36,7 @@ static enum sl_status evaluate_all(struct sl_run *run, struct sl_error *error)
                                        &found, error);
         if (status || !found)
             break;
-        status = evaluate_one(run, &dossier, &arena, error);
+        status = evaluate_one(run, rule, &dossier, &arena, error);
         sl_text_clear(&after);
         sl_text_add_string(&after, dossier.record.station_id);
         sl_progress("evaluating", done + 1, all);
@@ -56,14 +52,12 @@ static enum sl_status evaluate_all(struct sl_run *run, struct sl_error *error)
 
 enum sl_status sl_run_evaluate(struct sl_run *run, struct sl_error *error)
 {
-    const struct sl_margin_rule *rule = ranking_rule(run);
-    enum sl_status status;
+    const struct sl_margin_rule *rule;
+    enum sl_status status = sl_run_find_rule(run, &rule, error);
     bool found = false;
 
-    if (!rule)
-        return sl_error_set(error, SL_STORE,
-                            "the store has no margin rule; restore the table "
-                            "margin_rules");
+    if (status)
+        return status;
     run->evaluation = (struct sl_evaluation){.vintage = run->vintage.vintage,
                                              .version = SL_VERSION,
                                              .rule = rule->rule};
@@ -72,5 +66,5 @@ enum sl_status sl_run_evaluate(struct sl_run *run, struct sl_error *error)
     if (status || found)
         return status;
     status = sl_store_add_evaluation(run->store, &run->evaluation, error);
-    return status ? status : evaluate_all(run, error);
+    return status ? status : evaluate_all(run, rule, error);
 }

@@ -6,12 +6,12 @@
 #include "base/text.h"
 #include "evaluator/station.h"
 
-static void print_pump(struct sl_run *run,
+static void print_pump(struct sl_run *run, const struct sl_margin_rule *rule,
                        const struct sl_station_result *result, size_t pump)
 {
     struct sl_sheet sheet = {.stream = stdout,
                              .units = run->options->units,
-                             .rule = &run->tables.rules[0],
+                             .rule = rule,
                              .vocabularies = &run->tables.vocabularies,
                              .dossier = result->dossier};
 
@@ -25,6 +25,7 @@ static void print_pump(struct sl_run *run,
 enum sl_status sl_command_explain(struct sl_run *run, struct sl_error *error)
 {
     const char *wanted = run->options->subject;
+    const struct sl_margin_rule *rule;
     struct sl_dossier dossier;
     struct sl_station_result result;
     bool found = false;
@@ -33,6 +34,8 @@ enum sl_status sl_command_explain(struct sl_run *run, struct sl_error *error)
 
     if (!status)
         status = sl_run_find_newest(run, false, error);
+    if (!status)
+        status = sl_run_find_rule(run, &rule, error);
     if (!status)
         status =
             sl_store_dossier_of_pump(run->store, run->vintage.vintage, wanted,
@@ -45,10 +48,9 @@ enum sl_status sl_command_explain(struct sl_run *run, struct sl_error *error)
                             "pumps.csv for the ids, findings.csv for "
                             "rejected records",
                             wanted, run->vintage.vintage);
-    sl_evaluate_station(&dossier, &run->tables, &run->tables.rules[0],
-                        &run->arena, &result);
+    sl_evaluate_station(&dossier, &run->tables, rule, &run->arena, &result);
     for (size_t i = 0; i < dossier.pump_count; i++)
         if (sl_same(dossier.pumps[i].record.pump_id, wanted))
-            print_pump(run, &result, i);
+            print_pump(run, rule, &result, i);
     return SL_OK;
 }

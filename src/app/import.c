@@ -8,6 +8,7 @@
 #include "app/run.h"
 #include "app/terminal.h"
 #include "importer/inventory.h"
+#include "model/fields.h"
 
 /* Findings shown on the terminal; the rest are counted, and all of them are
  * in the store and in findings.csv. */
@@ -129,6 +130,28 @@ static enum sl_status keep_column(void *context,
                                use, error);
 }
 
+/* A key with a slip in it makes two: one that is missing somewhere, and one
+ * that nothing refers to. */
+static enum sl_status note_unused(void *context, const char *file, long line,
+                                  const char *id, struct sl_error *error)
+{
+    bool curve = sl_same(file, sl_record_kind(SL_KIND_CURVE)->file);
+    struct sl_finding finding = {
+        .code = "nothing-refers",
+        .severity = SL_NOTE,
+        .file = file,
+        .line = line,
+        .column = curve ? "curve_id" : "pipe_id",
+        .record_id = id,
+        .value = id,
+        .reason = curve ? "no pump that was kept runs on this curve"
+                        : "no pump and no pipe that was kept draws from it",
+        .remedy = "if one does, make the two keys the same",
+    };
+
+    return keep_finding(context, &finding, error);
+}
+
 static bool progress(void *context, long long done, long long all)
 {
     (void)context;
@@ -193,6 +216,9 @@ static enum sl_status read_records(struct sl_run *run,
     if (!status)
         status = sl_inventory_read(inventory, &run->tables.vocabularies, &sink,
                                    error);
+    if (!status)
+        status = sl_store_each_unused(run->store, run->vintage.vintage,
+                                      note_unused, &intake, error);
     if (!status)
         status = keep_sums(run, inventory, error);
     sl_progress_end();

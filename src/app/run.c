@@ -35,6 +35,18 @@ enum sl_status sl_run_find_newest(struct sl_run *run, bool evaluated,
                         "yet; run summerlow evaluate first");
 }
 
+enum sl_status sl_run_find_rule(const struct sl_run *run,
+                                const struct sl_margin_rule **rule,
+                                struct sl_error *error)
+{
+    if (run->tables.rule_count == 0)
+        return sl_error_set(error, SL_STORE,
+                            "the store has no margin rule; restore the table "
+                            "margin_rules");
+    *rule = &run->tables.rules[0];
+    return SL_OK;
+}
+
 void sl_run_close(struct sl_run *run)
 {
     sl_store_close(run->store);

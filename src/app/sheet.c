@@ -167,7 +167,8 @@ static void pipes(const struct sl_sheet *sheet,
  * loss standing in, which is a head. */
 static enum sl_quantity quantity_of(const struct sl_input *input)
 {
-    if (input->id == SL_IN_SUCTION_BORE && input->provenance == SL_RECORDED)
+    if (input->id == SL_IN_SUCTION_BORE && input->provenance != SL_ASSUMED &&
+        input->provenance != SL_UNKNOWN)
         return SL_BORE;
     return sl_input_quantity(input->id);
 }

@@ -274,11 +274,6 @@ static void npshr(struct sl_plan *plan)
     if (sl_curve_usable(&plan->npshr)) {
         input = sl_plan_set(plan, SL_IN_NPSHR, SL_RECORDED, sl_no_figure(),
                             "the maker's curve, at this flow");
-        if (plan->pump->curve->rejected_points) {
-            input->provenance = SL_UNKNOWN;
-            input->rule = "a point of its curve was rejected (see "
-                          "findings.csv); the curve without it bounds nothing";
-        }
         if (plan->speed_ratio != 1) {
             input->rule = "the maker's curve at this flow, brought to its "
                           "highest speed";
@@ -301,6 +296,18 @@ static void npshr(struct sl_plan *plan)
     }
 }
 
+static void miss_rejected_points(struct sl_plan *plan)
+{
+    struct sl_input *input = &plan->inputs[SL_IN_NPSHR];
+
+    if (!plan->pump->curve || !plan->pump->curve->rejected_points)
+        return;
+    input->provenance = SL_UNKNOWN;
+    input->value.adverse = input->value.favourable = NAN;
+    input->rule = "a point of its curve was rejected (see findings.csv); the "
+                  "curve without it bounds nothing";
+}
+
 void sl_plan_delivery(struct sl_plan *plan)
 {
     machine(plan);
@@ -308,4 +315,5 @@ void sl_plan_delivery(struct sl_plan *plan)
     discharge_loss(plan);
     flow(plan);
     npshr(plan);
+    miss_rejected_points(plan);
 }

@@ -21,7 +21,10 @@ static enum sl_state drawn(const struct sl_case cases[SL_CORNER_COUNT])
 
     if (best == SL_SHORT || best == SL_THIN)
         return best;
-    if (sl_state_of(&cases[SL_ADVERSE]) == SL_CLEAR)
+    /* The least flow may lie before the curve's first point: without a likely
+     * NPSHR there is none that the adverse end could bound. */
+    if (sl_state_of(&cases[SL_ADVERSE]) == SL_CLEAR &&
+        !isnan(cases[SL_TYPICAL].surplus))
         return SL_CLEAR;
     return SL_UNPROVEN;
 }
@@ -38,6 +41,14 @@ static bool open_input(const struct sl_pump_result *result,
     if (input->provenance == SL_DERIVED)
         return !(input->value.adverse == input->value.favourable);
     return true;
+}
+
+/* No honest figure at its adverse end.  By its pipe the main's loss has one
+ * at any flow: where the pump has none, it is the flow that lacks. */
+static bool lacks_bound(const struct sl_input *input)
+{
+    return isnan(input->value.adverse) && (input->id != SL_IN_DISCHARGE_LOSS ||
+                                           input->provenance == SL_UNKNOWN);
 }
 
 /* The case with one input at an end of its own. */
@@ -67,8 +78,7 @@ static bool another_is_unbounded(const struct sl_pump_result *result,
     for (int i = 0; i < SL_INPUT_COUNT; i++) {
         const struct sl_input *input = &result->inputs[i];
 
-        if (i != (int)id && open_input(result, input) &&
-            isnan(input->value.adverse))
+        if (i != (int)id && open_input(result, input) && lacks_bound(input))
             return true;
     }
     return false;
@@ -100,8 +110,8 @@ static bool matters_more(const struct sl_input *a, const struct sl_input *b)
     if (a->settles != b->settles)
         return a->settles;
     /* Not by the swing: that is NaN too where another input has no figure. */
-    a_unbounded = isnan(a->value.adverse);
-    b_unbounded = isnan(b->value.adverse);
+    a_unbounded = lacks_bound(a);
+    b_unbounded = lacks_bound(b);
     if (a_unbounded != b_unbounded)
         return a_unbounded;
     return a->swing > b->swing;
@@ -126,7 +136,7 @@ static void weigh_unknowns(const struct sl_plan *plan,
 static enum sl_provenance how_known(const struct sl_pump_result *result,
                                     const struct sl_input *input)
 {
-    if (open_input(result, input) && isnan(input->value.adverse))
+    if (open_input(result, input) && lacks_bound(input))
         return SL_UNKNOWN;
     return input->provenance;
 }
@@ -187,7 +197,7 @@ static void reason_unproven(const struct sl_pump_result *result,
     else if (result->off_curve)
         sl_text_add_string(text, "running alone it leaves the published end "
                                  "of its curve");
-    else if (leading && isnan(leading->value.adverse) && leading->rule[0])
+    else if (leading && lacks_bound(leading) && leading->rule[0])
         sl_text_addf(text, "%s: %s", sl_input_words(leading->id),
                      leading->rule);
     else if (notes[SL_ADVERSE].off_curve)

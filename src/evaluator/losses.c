@@ -17,7 +17,6 @@ double sl_interval_at(const struct sl_interval *interval, enum sl_corner end)
     }
 }
 
-/* The value of an input at its end; 0 when it plays no part. */
 double sl_setting_value(const struct sl_setting *setting, enum sl_input_id id)
 {
     const struct sl_input *input = &setting->plan->inputs[id];
@@ -119,7 +118,6 @@ double sl_discharge_loss_at(const struct sl_setting *setting, double flow)
            sl_minor_head(sl_interval_at(&delivery->minor_k, end), velocity);
 }
 
-/* V²/2g where the balance starts at a gauge on a pipe, and only there. */
 double sl_gauge_velocity_head(const struct sl_setting *setting, double flow)
 {
     const struct sl_plan *plan = setting->plan;

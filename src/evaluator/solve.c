@@ -223,12 +223,25 @@ void sl_solve_case(const struct sl_plan *plan, const struct sl_ends *ends,
     }
 }
 
+/* A curve that lacks a point, or of which the speed it was tested at is not
+ * known, tells where the pump may run, not where it runs at most. */
+static bool curve_bounds_flow(const struct sl_plan *plan)
+{
+    const struct sl_input *speed = &plan->inputs[SL_IN_SPEED];
+
+    if (plan->pump->curve && plan->pump->curve->rejected_points)
+        return false;
+    return !(speed->applies && isnan(speed->value.adverse));
+}
+
 double sl_solve_most_flow(const struct sl_plan *plan)
 {
     struct sl_ends ends = sl_ends_all(SL_FAVOURABLE);
     struct sl_case solved;
     struct sl_case_notes notes;
 
+    if (!curve_bounds_flow(plan))
+        return NAN;
     ends.of[SL_IN_DISCHARGE_LEVEL] = SL_ADVERSE;
     ends.of[SL_IN_DISCHARGE_LOSS] = SL_ADVERSE;
     ends.of[SL_IN_FLOW] = SL_ADVERSE;

@@ -68,10 +68,11 @@ static const struct sl_number *lower(const struct sl_number *a,
     return b->known && b->value < a->value ? b : a;
 }
 
-/* Sources that no control can keep from falling to their record low. */
+/* Sources that no control can keep from falling to their record low; a
+ * station whose service is not recorded may be one. */
 static bool natural_source(const struct sl_station *station)
 {
-    return station->service == SL_RAW_WATER ||
+    return station->service == 0 || station->service == SL_RAW_WATER ||
            station->service == SL_IRRIGATION || station->service == SL_SEAWATER;
 }
 

@@ -52,6 +52,8 @@ static double others_flow(const struct sl_plan *plans, size_t pump,
     if (beside && dossier->rejected_pumps)
         return NAN; /* it may draw through this pipe, nobody knows how much */
     for (size_t i = 0; i < dossier->pump_count; i++) {
+        if (i != pump && beside && plans[i].unmeasured == SL_IN_SUCTION_PIPING)
+            return NAN; /* so may one whose suction is not recorded */
         if (i == pump || !draws_through(&dossier->pumps[i], pipe))
             continue;
         if (isnan(most_flow[i]) && beside)
@@ -66,30 +68,40 @@ static double others_flow(const struct sl_plan *plans, size_t pump,
     return sum;
 }
 
+static const char *together_rule(const struct sl_dossier *dossier, bool bounded)
+{
+    if (dossier->rejected_pumps)
+        return "a pump of the station was rejected (see findings.csv); what "
+               "it takes from shared pipes is not known";
+    if (!bounded)
+        return "the most that a pump beside it takes from the pipes they "
+               "share is not known";
+    if (dossier->record.pumps_running_max.known)
+        return "others that may run beside it, at their largest flow, in the "
+               "pipes they share";
+    return "pumps_running_max is not recorded: all others, at their largest "
+           "flow, in the pipes they share";
+}
+
 static void share_pipes(struct sl_plan *plans, size_t pump,
                         const double *most_flow)
 {
     struct sl_plan *plan = &plans[pump];
     bool known = plan->dossier->record.pumps_running_max.known;
-    bool shared = false;
+    bool shared = false, bounded = true;
 
     for (size_t i = 0; i < plan->path_count; i++) {
-        plan->path[i].others =
-            others_flow(plans, pump, most_flow, plan->path[i].pipe);
-        shared = shared || plan->path[i].others != 0;
+        double others = others_flow(plans, pump, most_flow, plan->path[i].pipe);
+
+        plan->path[i].others = others;
+        shared = shared || others != 0;
+        bounded = bounded && !isnan(others);
     }
     if (shared)
         sl_plan_set(plan, SL_IN_RUNNING_TOGETHER,
                     known ? SL_DERIVED : SL_ASSUMED,
                     (struct sl_interval){0, NAN, 0},
-                    plan->dossier->rejected_pumps
-                        ? "a pump of the station was rejected (see "
-                          "findings.csv); what it takes from shared pipes is "
-                          "not known"
-                    : known ? "others that may run beside it, at their largest "
-                              "flow, in the pipes they share"
-                            : "pumps_running_max is not recorded: all others, "
-                              "at their largest flow, in the pipes they share");
+                    together_rule(plan->dossier, bounded));
 }
 
 static void evaluate_condition(const struct sl_dossier *dossier,

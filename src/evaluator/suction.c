@@ -156,11 +156,23 @@ static void measures(struct sl_plan *plan)
                  "not recorded; the default suction loss stands in");
 }
 
+static const char *surface_rule(enum sl_provenance provenance,
+                                const struct sl_interval *worst,
+                                const struct sl_default *row)
+{
+    if (row)
+        return row->source;
+    if (provenance != SL_RECORDED)
+        return "the roughest pipe of the path, by its material and condition";
+    return isnan(worst->typical) ? "C is recorded in its place"
+                                 : "the roughest pipe of the path";
+}
+
 static void surfaces(struct sl_plan *plan)
 {
     enum sl_provenance provenance = SL_RECORDED;
     const struct sl_default *row = NULL;
-    struct sl_interval worst = sl_exactly(0);
+    struct sl_interval worst = sl_no_figure(); /* which fmax passes over */
     struct sl_input *input;
 
     for (size_t i = 0; i < plan->path_count; i++) {
@@ -172,9 +184,7 @@ static void surfaces(struct sl_plan *plan)
         worst.favourable = fmax(worst.favourable, place->roughness.favourable);
     }
     input = sl_plan_set(plan, SL_IN_SUCTION_ROUGHNESS, provenance, worst,
-                        row ? row->source
-                            : "the roughest pipe of the path, by its "
-                              "material and condition");
+                        surface_rule(provenance, &worst, row));
     input->row = row;
     input->kind = SL_KIND_PIPE;
     input->line = plan->pump->suction->record.line;

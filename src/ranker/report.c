@@ -70,7 +70,7 @@ static const struct sl_default_row *used(const void *row)
 
 static void write_field(const struct sl_report *report, const void *row)
 {
-    sl_page_text(report, sl_words_column(used(row)->row.field));
+    sl_page_text(report, sl_words_default(used(row)->row.field));
     sl_markup(report->stream, "<small><code>");
     sl_page_text(report, used(row)->row.field);
     sl_markup(report->stream, "</code></small>");

@@ -102,8 +102,8 @@ static void write_next_steps(const struct sl_report *report)
     if (summary->stations_by_state[SL_UNPROVEN] > 0)
         sl_markup(report->stream,
                   "<li>Plan surveys from <a href=\"#find-out\">Find out "
-                  "first</a>: one fact for each station that the records do "
-                  "not settle.</li>\n");
+                  "first</a>: for each station that the records do not "
+                  "settle, what matters most.</li>\n");
     sl_markup(report->stream,
               "<li>Mend the records under <a href=\"#records\">Records</a> "
               "that were set aside, and audit again.</li>\n"
@@ -208,7 +208,11 @@ static void write_records_read(const struct sl_report *report)
     sl_markup(report->stream, " rejected + ");
     sl_markup_count(report->stream, out_of_scope);
     sl_markup(report->stream, " out of scope (<a href=\"#records\">file by "
-                              "file</a>)</dd>\n");
+                              "file</a>)");
+    if (rejected > 0)
+        sl_markup(report->stream, "; what a rejected record would have said "
+                                  "is in none of the figures");
+    sl_markup(report->stream, "</dd>\n");
     if (report->summary->stations_without_pumps > 0) {
         sl_markup(report->stream, "<dd>");
         sl_page_counted(report, report->summary->stations_without_pumps,

@@ -11,7 +11,7 @@ const char *sl_words_state(enum sl_state state)
                      "value.",
         [SL_THIN] = "The margin rule is not met, even with every unknown at "
                     "its favourable value, though NPSHR itself may be.",
-        [SL_UNPROVEN] = "What is on record does not settle it: one more fact "
+        [SL_UNPROVEN] = "What is on record does not settle it: more facts "
                         "could show it short, thin or clear.",
         [SL_CLEAR] = "The margin rule is met, even with every unknown at its "
                      "adverse value.",
@@ -26,6 +26,32 @@ const char *sl_words_column(const char *column)
         if (sl_same(sl_input_column((enum sl_input_id)id), column))
             return sl_input_words((enum sl_input_id)id);
     return column;
+}
+
+const char *sl_words_default(const char *field)
+{
+    static const struct {
+        const char *field, *words;
+    } known[] = {
+        {"barometer_fall", "fall of a low barometer, part of the air pressure"},
+        {"discharge_minor_k", "K of the discharge's fittings together"},
+        {"discharge_roughness", "roughness of the discharge main"},
+        {"gas_allowance", "allowance for gas in the water"},
+        {"npshr_speed_exponent_down", "exponent of NPSHR, slower"},
+        {"npshr_speed_exponent_up", "exponent of NPSHR, faster"},
+        {"salinity", "salinity"},
+        {"suction_loss", "loss of a suction that is not recorded"},
+        {"suction_minor_k", "K of a suction's fittings together"},
+        {"suction_roughness", "roughness of a suction pipe"},
+        {"water_temp_normal", "usual water temperature"},
+        {"water_temp_summer", "warmest water of the year"},
+        {"wet_pit_inlet_loss", "loss of a wet-pit pump's inlet"},
+    };
+
+    for (size_t i = 0; i < sizeof known / sizeof known[0]; i++)
+        if (sl_same(known[i].field, field))
+            return known[i].words;
+    return field;
 }
 
 const char *sl_words_trust(char trust)

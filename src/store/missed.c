@@ -2,6 +2,7 @@
 
 #include "model/fields.h"
 #include "store/statement.h"
+#include "store/vintage.h"
 
 enum sl_status sl_learn_traits(struct sl_store *store, long long vintage,
                                struct sl_error *error)
@@ -78,4 +79,26 @@ enum sl_status sl_count_rejected_pumps(struct sl_store *store,
     sl_bind_whole(statement, "vintage", vintage);
     sl_bind_text(statement, "id", station_id);
     return read_count(statement, rejected, error);
+}
+
+enum sl_status sl_store_each_unused(
+    struct sl_store *store, long long vintage,
+    enum sl_status (*each)(void *context, const char *file, long line,
+                           const char *id, struct sl_error *error),
+    void *context, struct sl_error *error)
+{
+    struct sl_statement *statement = NULL;
+    bool row = false;
+    enum sl_status status = sl_statement_use_for(
+        store, SL_QUERY_UNUSED_RECORDS, "vintage", vintage, &statement, error);
+
+    while (!status && !(status = sl_statement_step(statement, &row, error)) &&
+           row) {
+        status = each(context, sl_read_text(statement, "file"),
+                      (long)sl_read_whole(statement, "line"),
+                      sl_read_text(statement, "id"), error);
+        if (status)
+            return sl_statement_leave(statement, status);
+    }
+    return status;
 }

@@ -510,6 +510,48 @@ static void a_rejected_curve_point_leaves_npshr_without_a_bound(void **state)
     check_state("nor short", summer(f), SL_UNPROVEN, SL_SHORT);
 }
 
+/* Nor does the rated point, or the speed, stand in for what is missed. */
+static void a_rejected_curve_point_is_told_whatever_npshr_rests_on(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_input *npshr;
+
+    f->curve.rejected_points = 1;
+    f->pumps[0].record.max_speed = known(1500);
+    npshr = &summer(f)->inputs[SL_IN_NPSHR];
+    assert_non_null(strstr(npshr->rule, "was rejected"));
+    f->pumps[0].record.rated_flow = known(0.0523);
+    f->pumps[0].record.rated_npshr = known(2.61);
+    for (int i = 0; i < POINTS; i++)
+        forget(&f->points[i].npshr);
+    npshr = &summer(f)->inputs[SL_IN_NPSHR];
+    check_provenance("rated", npshr, SL_UNKNOWN);
+    check_nan("favourable", npshr->value.favourable);
+    assert_true(npshr->settles);
+    assert_non_null(strstr(npshr->rule, "was rejected"));
+}
+
+/* Two ways in which a neighbour's curve tells no largest flow of it. */
+static void neighbour_whose_curve_bounds_nothing_has_no_most_flow(void **state)
+{
+    struct fixture *f = *state;
+    struct sl_curve holed = f->curve;
+
+    share_a_header(f);
+    f->pumps[0].record.datum_elevation = known(294.0);
+    check_state("all known", summer(f), SL_CLEAR, SL_CLEAR);
+    holed.rejected_points = 1;
+    f->pumps[1].curve = &holed;
+    check_state("a point rejected", summer(f), SL_UNPROVEN, SL_CLEAR);
+    f->pumps[1].curve = &f->curve;
+    forget(&f->pumps[1].record.rated_speed);
+    f->pumps[1].record.max_speed = known(1790);
+    check_state("speed of the test unknown", summer(f), SL_UNPROVEN, SL_CLEAR);
+    assert_non_null(
+        strstr(f->result.conditions[CONDITION_SUMMER].pumps[0].reason,
+               "the most that a pump beside it takes"));
+}
+
 static void a_rejected_pump_keeps_its_station_from_clear(void **state)
 {
     struct fixture *f = *state;
@@ -522,6 +564,36 @@ static void a_rejected_pump_keeps_its_station_from_clear(void **state)
     /* Beside it, it could draw through the same pipe. */
     f->dossier.record.pumps_running_max = known(2);
     check_state("beside a rejected one", summer(f), SL_UNPROVEN, SL_CLEAR);
+}
+
+/* A pump beside it whose suction is not recorded may draw through the same
+ * pipe. */
+static void a_neighbour_without_suction_records_has_no_bound(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    share_a_header(f);
+    f->dossier.record.pumps_running_max = known(2);
+    check_state("both recorded", summer(f), SL_CLEAR, SL_CLEAR);
+    f->pumps[1].suction = NULL;
+    pump = judge_a(f, CONDITION_SUMMER);
+    check_state("the other is not", pump, SL_UNPROVEN, SL_CLEAR);
+    f->dossier.record.pumps_running_max = known(1);
+    pump = judge_a(f, CONDITION_SUMMER);
+    check_state("never beside it", pump, SL_CLEAR, SL_CLEAR);
+}
+
+/* A service that is not recorded may be that of a river. */
+static void unknown_service_takes_the_lower_level_too(void **state)
+{
+    struct fixture *f = *state;
+
+    f->dossier.record.service = 0;
+    f->dossier.record.cut_out_level = known(298.35);
+    f->dossier.record.record_low_level = known(297.1);
+    check_close("level", summer(f)->inputs[SL_IN_SOURCE_LEVEL].value.typical,
+                297.1, 0, 0);
 }
 
 int main(void)
@@ -552,7 +624,11 @@ int main(void)
         TEST(most_flow_bounds_the_flow_of_every_corner),
         TEST(a_rejected_fitting_leaves_the_losses_without_a_bound),
         TEST(a_rejected_curve_point_leaves_npshr_without_a_bound),
+        TEST(a_rejected_curve_point_is_told_whatever_npshr_rests_on),
+        TEST(neighbour_whose_curve_bounds_nothing_has_no_most_flow),
         TEST(a_rejected_pump_keeps_its_station_from_clear),
+        TEST(a_neighbour_without_suction_records_has_no_bound),
+        TEST(unknown_service_takes_the_lower_level_too),
     };
 
     return cmocka_run_group_tests(tests, NULL, NULL);

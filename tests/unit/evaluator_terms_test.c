@@ -312,6 +312,8 @@ static void pipe_known_by_its_c_uses_it(void **state)
     check_provenance("c", &pump->inputs[SL_IN_SUCTION_ROUGHNESS], SL_RECORDED);
     check_nan("no factor", pump->losses[0].factor);
     check_nan("no roughness", pump->losses[0].roughness);
+    check_nan("nor a likely one",
+              pump->inputs[SL_IN_SUCTION_ROUGHNESS].value.typical);
 }
 
 static void wall_recorded_is_preferred_to_c(void **state)

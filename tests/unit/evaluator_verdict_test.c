@@ -204,7 +204,8 @@ static void two_unknowns_without_bound_are_both_named(void **state)
         forget(&f->points[i].npshr);
     pump = summer(f);
     assert_string_equal(pump->reason, "the elevation of the impeller eye and "
-                                      "NPSHR are not known");
+                                      "NPSHR at the flow it runs at are not "
+                                      "known");
     assert_false(pump->inputs[SL_IN_DATUM].settles);
     assert_false(pump->inputs[SL_IN_NPSHR].settles);
     assert_ptr_equal(pump->leading_unknown, &pump->inputs[SL_IN_DATUM]);
@@ -238,6 +239,47 @@ static void curve_left_at_the_adverse_end_is_the_reason(void **state)
     assert_non_null(strstr(pump->reason, "at the adverse end"));
     assert_ptr_equal(pump->leading_unknown,
                      &pump->inputs[SL_IN_DISCHARGE_LOSS]);
+}
+
+/* The main's pipe known, its roughness and fittings not. */
+static void forget_the_mains_loss(struct fixture *f)
+{
+    forget(&f->dossier.record.discharge_loss_flow);
+    f->dossier.record.discharge_length = known(600);
+    f->dossier.record.discharge_bore = known(0.12);
+}
+
+/* Its likely flow lies before the curve's first point, its largest does
+ * not: that one is clear, and its NPSHR is not known all the same. */
+static void pump_whose_likely_npshr_is_unknown_is_not_clear(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    forget_the_mains_loss(f);
+    f->dossier.record.discharge_low = known(338);
+    pump = summer(f);
+    assert_true(pump->off_curve);
+    assert_true(pump->cases[SL_ADVERSE].surplus > 0);
+    check_state("off the curve", pump, SL_UNPROVEN, SL_UNPROVEN);
+    assert_ptr_equal(pump->leading_unknown, &pump->inputs[SL_IN_NPSHR]);
+}
+
+/* Without a flow the main's loss has no figure; it is not what lacks. */
+static void pump_that_stands_leads_with_its_flow(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump;
+
+    forget_the_mains_loss(f);
+    f->points[0].flow = known(0);
+    f->dossier.record.discharge_low = known(345);
+    pump = summer(f);
+    assert_true(pump->stands);
+    check_nan("loss", pump->inputs[SL_IN_DISCHARGE_LOSS].value.adverse);
+    assert_ptr_equal(pump->leading_unknown, &pump->inputs[SL_IN_FLOW]);
+    assert_true(pump->leading_unknown->settles);
+    assert_int_equal(pump->counts[SL_UNKNOWN], 1);
 }
 
 /* --- conditions and stations ---------------------------------------------- */
@@ -384,6 +426,8 @@ int main(void)
         TEST(two_unknowns_without_bound_are_both_named),
         TEST(level_that_stands_in_is_the_reason),
         TEST(curve_left_at_the_adverse_end_is_the_reason),
+        TEST(pump_whose_likely_npshr_is_unknown_is_not_clear),
+        TEST(pump_that_stands_leads_with_its_flow),
         TEST(each_condition_takes_its_own_figures),
         TEST(station_without_pumps_has_no_worst),
         TEST(worst_goes_by_state_then_likely_then_surplus),

@@ -404,6 +404,8 @@ static void doubt(struct sl_pump_result *result, enum sl_input_id id,
 {
     result->inputs[id].provenance = provenance;
     result->inputs[id].open = true;
+    if (provenance == SL_UNKNOWN)
+        result->inputs[id].value = (struct sl_interval){NAN, NAN, NAN};
     result->inputs[id].swing = swing;
     result->inputs[id].settles = settles;
     result->state = SL_UNPROVEN;
@@ -433,7 +435,7 @@ static void what_settles_is_found_out_first(void **state)
     doubt(&c.results[1][0], SL_IN_NPSHR, SL_UNKNOWN, NAN, false);
     file(&e, &c);
     assert_unknowns(&e, "1 A-0 summer low service;2 B-0 summer low length;"
-                        "3 B-0 summer low bore;4 C-0 summer low rated_npshr;"
+                        "3 B-0 summer low bore;4 C-0 summer low npshr;"
                         "5 A-0 summer low datum_elevation;"
                         "6 A-0 summer low water_temp_summer;");
 }
