@@ -65,7 +65,7 @@ static const struct sl_field station_fields[] = {
            "the lowest on record stands in; without that no pump is clear"),
     NUMBER(sl_station, record_low_level, SL_LENGTH, ELEVATIONS, false,
            "lowest source level ever recorded; audited for raw water, "
-           "irrigation and seawater, where no control can hold it",
+           "irrigation, seawater and where the service is not recorded",
            "the cut-out is used"),
     NUMBER(sl_station, normal_level, SL_LENGTH, ELEVATIONS, false,
            "usual source level", "the level that is audited as lowest is used"),

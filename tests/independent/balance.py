@@ -6,7 +6,7 @@ from physics import (Curve, Water, altitude_of, darcy, hazen_williams,
                      operating_flow, small_bore, standard_air, velocity_head)
 
 LOWEST_LAND = -430.0  # m above the sea
-RIVERS = ("raw water", "irrigation", "seawater")
+RIVERS = ("", "raw water", "irrigation", "seawater")
 TERMS = ("atmosphere_m", "barometer_m", "gauge_m", "elevation_m",
          "velocity_m", "friction_m", "minor_m", "vapour_m", "gas_m")
 
