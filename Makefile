@@ -64,6 +64,7 @@ help: ## this list
 	@echo "behaviour sanitizers."
 
 demo: all ## install what is missing, build, audit the sample inventory
+	@rm -rf build/demo
 	@$(OUT)/summerlow audit sample-inventory --out build/demo \
 	    || test $$? -eq 1
 	@echo "Open build/demo/report.html in a browser."
@@ -146,6 +147,7 @@ recompute: all ## work every pump out anew by other libraries, and compare
 	@$(call need,$(NEEDED_TO_RECOMPUTE))
 	@for inventory in $(RECOMPUTED); do \
 	    out=build/recompute/$$(basename $$inventory); \
+	    rm -rf $$out; \
 	    $(OUT)/summerlow audit $$inventory --out $$out >/dev/null 2>&1 \
 	        || test $$? -eq 1 || exit 1; \
 	    /usr/bin/python3 tests/independent/recompute.py $$inventory $$out \

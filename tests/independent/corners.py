@@ -32,7 +32,7 @@ def corner_figures(case, corner, rule):
             if all(figures[name] is not None for figures in found)}
 
 
-def runs_beside_another(inventory, pump):
+def runs_beside_another(inventory, pump, in_its_water):
     """Its adverse end then holds other pumps' flow in the pipes it shares."""
     station = inventory.stations[pump["station_id"]]
     if station.get("pumps_running_max") == "1":
@@ -40,6 +40,12 @@ def runs_beside_another(inventory, pump):
     mine = {p["pipe_id"] for p in inventory.path(pump)}
     if mine and pump["station_id"] in inventory.short_stations:
         return True  # beside a pump that was rejected
+    if mine and any(other is not pump and not inventory.path(other)
+                    and other["station_id"] == pump["station_id"]
+                    and not in_its_water(other)
+                    for other in inventory.pumps.values()
+                    if "station_id" in other):
+        return True  # beside one that may draw through the same pipe
     return any(other is not pump
                and mine & {p["pipe_id"] for p in inventory.path(other)}
                for other in inventory.pumps.values())
@@ -64,7 +70,10 @@ def recompute(inventory, published, row):
     case = Case(inventory, published, pump, row["condition"], "typical")
     rule = published.rules[row["margin_rule"]]
     out = dict(corner_figures(case, "typical", rule))
-    shared = runs_beside_another(inventory, pump)
+    shared = runs_beside_another(
+        inventory, pump,
+        lambda other: Case(inventory, published, other, row["condition"],
+                           "typical").wet())
     for corner in ("adverse", "favourable"):
         figures = corner_figures(case, corner, rule)
         for name in ("npsha", "npshr", "margin", "surplus"):
