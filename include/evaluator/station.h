@@ -5,7 +5,8 @@
  * alone, and with the other pumps it may run with as far as they load the
  * suction pipes it shares: there they are taken at their largest flow, an
  * upper bound on the loss, so that a pump called clear is clear in every
- * running set. */
+ * running set in which NPSHR is published and no larger at less flow.  The
+ * sets themselves are not solved yet. */
 #ifndef SL_EVALUATOR_STATION_H
 #define SL_EVALUATOR_STATION_H
 
