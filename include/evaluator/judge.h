@@ -15,7 +15,4 @@
  * Everything lives in the plan's arena. */
 void sl_judge(const struct sl_plan *plan, struct sl_pump_result *result);
 
-/* A pump whose figures at one corner are given: which state they show. */
-enum sl_state sl_state_of(const struct sl_case *solved);
-
 #endif

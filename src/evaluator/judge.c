@@ -6,7 +6,8 @@
 #include "base/text.h"
 #include "evaluator/solve.h"
 
-enum sl_state sl_state_of(const struct sl_case *solved)
+/* Which state the figures of one corner show. */
+static enum sl_state state_of(const struct sl_case *solved)
 {
     if (isnan(solved->surplus))
         return SL_UNPROVEN;
@@ -17,13 +18,13 @@ enum sl_state sl_state_of(const struct sl_case *solved)
 
 static enum sl_state drawn(const struct sl_case cases[SL_CORNER_COUNT])
 {
-    enum sl_state best = sl_state_of(&cases[SL_FAVOURABLE]);
+    enum sl_state best = state_of(&cases[SL_FAVOURABLE]);
 
     if (best == SL_SHORT || best == SL_THIN)
         return best;
     /* The least flow may lie before the curve's first point: without a likely
      * NPSHR there is none that the adverse end could bound. */
-    if (sl_state_of(&cases[SL_ADVERSE]) == SL_CLEAR &&
+    if (state_of(&cases[SL_ADVERSE]) == SL_CLEAR &&
         !isnan(cases[SL_TYPICAL].surplus))
         return SL_CLEAR;
     return SL_UNPROVEN;
@@ -275,7 +276,7 @@ void sl_judge(const struct sl_plan *plan, struct sl_pump_result *result)
     result->stands = notes[SL_TYPICAL].stands;
     result->state = drawn(result->cases);
     result->likely = result->state == SL_UNPROVEN
-                         ? sl_state_of(&result->cases[SL_TYPICAL])
+                         ? state_of(&result->cases[SL_TYPICAL])
                          : result->state;
     mark_what_the_curve_lacks(result);
     if (plan->flow_basis == SL_FLOW_SOLVED)
