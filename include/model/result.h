@@ -109,7 +109,8 @@ struct sl_input {
     enum sl_kind kind;        /* of the record it was read from */
     long line;                /* its line, 0 when not recorded */
     const char *rule;         /* in words: how derived, or what it rests on */
-    const struct sl_default *row; /* the default used, or NULL */
+    const struct sl_default *row;   /* the default used, or NULL */
+    const struct sl_default *other; /* a second one beside it, or NULL */
     /* How much the margin would move if this alone went from its adverse
      * to its favourable value, m; NaN when an end has no bound; 0 when it
      * is not an unknown. */

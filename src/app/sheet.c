@@ -173,6 +173,14 @@ static enum sl_quantity quantity_of(const struct sl_input *input)
     return sl_input_quantity(input->id);
 }
 
+static void default_used(FILE *stream, const struct sl_default *row)
+{
+    if (row)
+        fprintf(stream, " [default %s%s%s, trust %c]", row->field,
+                row->circumstance[0] ? ", " : "", row->circumstance,
+                row->trust);
+}
+
 /* "2.40 m" or "2.40 m (1.10 to 3.00)", and where it comes from. */
 static void input_line(const struct sl_sheet *sheet,
                        const struct sl_input *input)
@@ -202,10 +210,8 @@ static void input_line(const struct sl_sheet *sheet,
                 input->line);
     if (input->rule && input->rule[0])
         fprintf(stream, "; %s", input->rule);
-    if (input->row)
-        fprintf(stream, " [default %s%s%s, trust %c]", input->row->field,
-                input->row->circumstance[0] ? ", " : "",
-                input->row->circumstance, input->row->trust);
+    default_used(stream, input->row);
+    default_used(stream, input->other);
     putc('\n', stream);
 }
 

@@ -183,7 +183,7 @@ static void discharge_pipe(struct sl_plan *plan)
     else
         input->row = row;
     if (!station->discharge_material)
-        input->row = sl_default_find(plan->tables, "discharge_roughness", "");
+        input->other = sl_default_find(plan->tables, "discharge_roughness", "");
     if (station->discharge_minor_k.known &&
         delivery->roughness.adverse == delivery->roughness.favourable)
         input->provenance = SL_DERIVED;

@@ -30,18 +30,20 @@ static enum sl_state drawn(const struct sl_case cases[SL_CORNER_COUNT])
     return SL_UNPROVEN;
 }
 
-/* Not known exactly, so that finding it out could change the verdict. */
-static bool open_input(const struct sl_pump_result *result,
-                       const struct sl_input *input)
+/* Not known exactly, so that finding it out could change the verdict.  What
+ * is derived and has no figure at all lacks it for want of others. */
+static bool open_input(const struct sl_input *input)
 {
+    const struct sl_interval *value = &input->value;
+
     if (!input->applies || input->provenance == SL_RECORDED)
         return false;
-    if (input->provenance == SL_DERIVED && input->id == SL_IN_FLOW &&
-        result->flow_basis == SL_FLOW_SOLVED)
+    if (input->provenance != SL_DERIVED)
+        return true;
+    if (isnan(value->typical) && isnan(value->adverse) &&
+        isnan(value->favourable))
         return false;
-    if (input->provenance == SL_DERIVED)
-        return !(input->value.adverse == input->value.favourable);
-    return true;
+    return !(value->adverse == value->favourable);
 }
 
 /* No honest figure at its adverse end.  By its pipe the main's loss has one
@@ -79,7 +81,7 @@ static bool another_is_unbounded(const struct sl_pump_result *result,
     for (int i = 0; i < SL_INPUT_COUNT; i++) {
         const struct sl_input *input = &result->inputs[i];
 
-        if (i != (int)id && open_input(result, input) && lacks_bound(input))
+        if (i != (int)id && open_input(input) && lacks_bound(input))
             return true;
     }
     return false;
@@ -124,7 +126,7 @@ static void weigh_unknowns(const struct sl_plan *plan,
     for (int i = 0; i < SL_INPUT_COUNT; i++) {
         struct sl_input *input = &result->inputs[i];
 
-        if (!open_input(result, input))
+        if (!open_input(input))
             continue;
         input->open = true;
         weigh(plan, result, input);
@@ -134,10 +136,9 @@ static void weigh_unknowns(const struct sl_plan *plan,
 }
 
 /* A stand-in without a bound is counted as unknown, whatever it stands on. */
-static enum sl_provenance how_known(const struct sl_pump_result *result,
-                                    const struct sl_input *input)
+static enum sl_provenance how_known(const struct sl_input *input)
 {
-    if (open_input(result, input) && lacks_bound(input))
+    if (open_input(input) && lacks_bound(input))
         return SL_UNKNOWN;
     return input->provenance;
 }
@@ -146,7 +147,7 @@ static void count_inputs(struct sl_pump_result *result)
 {
     for (int i = 0; i < SL_INPUT_COUNT; i++)
         if (result->inputs[i].applies)
-            result->counts[how_known(result, &result->inputs[i])]++;
+            result->counts[how_known(&result->inputs[i])]++;
 }
 
 /* What running off its curve, or standing, makes unknown is told as such;
@@ -258,6 +259,27 @@ static void mark_what_the_curve_lacks(struct sl_pump_result *result)
     }
 }
 
+/* What is known once the flow is solved: the flow, with a larger one on
+ * record as its adverse end, and what a discharge known by its pipe loses. */
+static void show_solved_flow(const struct sl_plan *plan,
+                             struct sl_pump_result *result)
+{
+    const struct sl_number *largest = &plan->pump->record.largest_recorded_flow;
+    struct sl_input *flow = &result->inputs[SL_IN_FLOW];
+    double solved = result->cases[SL_TYPICAL].flow;
+
+    if (isnan(plan->delivery.loss_flow)) /* by its pipe, not measured */
+        result->inputs[SL_IN_DISCHARGE_LOSS].value =
+            sl_solve_discharge_loss(plan, solved);
+    flow->value = sl_exactly(solved);
+    if (!(largest->known && largest->value > solved))
+        return;
+    flow->value.adverse = largest->value;
+    flow->kind = SL_KIND_PUMP;
+    flow->line = plan->pump->record.line;
+    flow->rule = "solved for running alone; a larger flow is on record";
+}
+
 void sl_judge(const struct sl_plan *plan, struct sl_pump_result *result)
 {
     struct sl_case_notes notes[SL_CORNER_COUNT];
@@ -280,8 +302,7 @@ void sl_judge(const struct sl_plan *plan, struct sl_pump_result *result)
                          : result->state;
     mark_what_the_curve_lacks(result);
     if (plan->flow_basis == SL_FLOW_SOLVED)
-        result->inputs[SL_IN_DISCHARGE_LOSS].value =
-            sl_solve_discharge_loss(plan, result->cases[SL_TYPICAL].flow);
+        show_solved_flow(plan, result);
     set_running_together(plan, result);
     count_inputs(result);
     if (result->state == SL_UNPROVEN)

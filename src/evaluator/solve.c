@@ -56,6 +56,18 @@ static struct sl_ends flow_ends(const struct sl_ends *ends)
     return most;
 }
 
+/* At the adverse end no less than the largest flow on record: what the pump
+ * has run at, it may run at again. */
+static double at_least_recorded(const struct sl_setting *setting, double flow)
+{
+    const struct sl_number *largest =
+        &setting->plan->pump->record.largest_recorded_flow;
+
+    if (setting->ends->of[SL_IN_FLOW] != SL_ADVERSE || !largest->known)
+        return flow;
+    return flow < largest->value ? largest->value : flow;
+}
+
 static double flow_of(const struct sl_setting *setting,
                       struct sl_case_notes *notes)
 {
@@ -71,7 +83,7 @@ static double flow_of(const struct sl_setting *setting,
     switch (
         sl_operating_point_find(&plan->head, &system, FLOW_TOLERANCE, &point)) {
     case SL_OPERATING_FOUND:
-        return point.flow;
+        return at_least_recorded(setting, point.flow);
     case SL_OPERATING_PAST_END:
     case SL_OPERATING_BEFORE_START:
         notes->off_curve = true;

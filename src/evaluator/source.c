@@ -328,5 +328,6 @@ void sl_plan_source(struct sl_plan *plan)
             sl_default_find(plan->tables, "salinity", "seawater");
 
         plan->salinity = row ? row->value.typical : NAN;
+        plan->inputs[SL_IN_TEMPERATURE].other = row;
     }
 }

@@ -29,7 +29,6 @@ static int larger_first(const void *a, const void *b)
 static size_t running_max(const struct sl_dossier *dossier)
 {
     const struct sl_number *most = &dossier->record.pumps_running_max;
-
     size_t all = dossier->pump_count + (size_t)dossier->rejected_pumps;
 
     if (!most->known || most->value >= (double)all)

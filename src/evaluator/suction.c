@@ -190,6 +190,17 @@ static void surfaces(struct sl_plan *plan)
     input->line = plan->pump->suction->record.line;
 }
 
+static void miss_rejected_fitting(struct sl_plan *plan)
+{
+    struct sl_input *input = &plan->inputs[SL_IN_SUCTION_MINOR];
+
+    plan->path[plan->path_count - 1].minor_k.adverse = NAN;
+    input->value.adverse = NAN;
+    input->provenance = SL_UNKNOWN;
+    input->rule = "a fitting of the path was rejected (see findings.csv); "
+                  "what it loses is not counted";
+}
+
 /* A path on which no fitting is recorded still has some: the default sum,
  * on the pipe at the pump. A suction lift may hold a foot valve. */
 static void fittings(struct sl_plan *plan)
@@ -199,6 +210,7 @@ static void fittings(struct sl_plan *plan)
     bool lift = plan->inputs[SL_IN_SOURCE_LEVEL].applies &&
                 !(plan->inputs[SL_IN_SOURCE_LEVEL].value.typical >=
                   plan->inputs[SL_IN_DATUM].value.typical);
+    struct sl_interval *at_pump = &plan->path[plan->path_count - 1].minor_k;
     size_t recorded = 0;
     bool rejected = false;
 
@@ -212,23 +224,15 @@ static void fittings(struct sl_plan *plan)
         sum.adverse += place->minor_k.adverse;
         sum.favourable += place->minor_k.favourable;
     }
-    if (rejected) {
-        sum.adverse = NAN;
-        plan->path[plan->path_count - 1].minor_k.adverse = NAN;
-        sl_plan_set(plan, SL_IN_SUCTION_MINOR, SL_UNKNOWN, sum,
-                    "a fitting of the path was rejected (see findings.csv); "
-                    "what it loses is not counted");
-        return;
-    }
-    if (recorded) {
+    if (recorded)
         sl_plan_set(plan, SL_IN_SUCTION_MINOR, provenance, sum,
                     "the sum of K over the path's fittings");
-        return;
-    }
-    sl_plan_default(plan, SL_IN_SUCTION_MINOR, "suction_minor_k",
-                    lift ? "suction lift" : "");
-    plan->path[plan->path_count - 1].minor_k =
-        plan->inputs[SL_IN_SUCTION_MINOR].value;
+    else
+        *at_pump = sl_plan_default(plan, SL_IN_SUCTION_MINOR, "suction_minor_k",
+                                   lift ? "suction lift" : "")
+                       ->value;
+    if (rejected)
+        miss_rejected_fitting(plan);
 }
 
 /* What the pumps that may run beside this one can add to the flow in the

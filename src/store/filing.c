@@ -63,6 +63,16 @@ static enum sl_status learn_pump_keys(const struct sl_filing *filing)
     return status;
 }
 
+/* Which pump under which condition a row is about. */
+static void bind_place(const struct sl_filing *filing, const char *condition,
+                       long long key, struct sl_statement *statement)
+{
+    sl_bind_whole(statement, "evaluation", filing->evaluation);
+    sl_bind_whole(statement, "station", filing->result->dossier->station);
+    sl_bind_whole(statement, "pump", key);
+    sl_bind_text(statement, "condition", condition);
+}
+
 static void bind_inputs(struct sl_statement *statement,
                         const struct sl_pump_result *pump)
 {
@@ -93,10 +103,7 @@ static enum sl_status add_pump(const struct sl_filing *filing,
 
     if (status)
         return status;
-    sl_bind_whole(statement, "evaluation", filing->evaluation);
-    sl_bind_whole(statement, "station", filing->result->dossier->station);
-    sl_bind_whole(statement, "pump", key);
-    sl_bind_text(statement, "condition", condition);
+    bind_place(filing, condition, key, statement);
     sl_bind_text(statement, "state", sl_state_name(pump->state));
     sl_bind_text(statement, "likely", sl_state_name(pump->likely));
     sl_bind_text(statement, "reason", pump->reason ? pump->reason : "");
@@ -107,9 +114,12 @@ static enum sl_status add_pump(const struct sl_filing *filing,
     sl_bind_whole(statement, "stands", pump->stands);
     sl_bind_cases(statement, pump->cases);
     bind_inputs(statement, pump);
-    for (int i = 0; i < SL_INPUT_COUNT; i++)
+    for (int i = 0; i < SL_INPUT_COUNT; i++) {
         if (pump->inputs[i].row)
             count_use(filing->store, pump->inputs[i].row);
+        if (pump->inputs[i].other)
+            count_use(filing->store, pump->inputs[i].other);
+    }
     return sl_statement_run(statement, filing->error);
 }
 
@@ -130,10 +140,7 @@ static enum sl_status add_unknown(const struct sl_filing *filing,
 
     if (status)
         return status;
-    sl_bind_whole(statement, "evaluation", filing->evaluation);
-    sl_bind_whole(statement, "station", filing->result->dossier->station);
-    sl_bind_whole(statement, "pump", key);
-    sl_bind_text(statement, "condition", condition);
+    bind_place(filing, condition, key, statement);
     sl_bind_text(statement, "input", sl_input_column(input->id));
     sl_bind_text(statement, "provenance",
                  sl_provenance_name(input->provenance));

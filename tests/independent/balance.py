@@ -334,8 +334,12 @@ class Case:
         """What it may run out to is not known but where it is solved."""
         basis = self.basis()
         if basis == "solved":
-            return operating_flow(self.head_curve(),
-                                  lambda q: self.system_head(q, water))
+            solved = operating_flow(self.head_curve(),
+                                    lambda q: self.system_head(q, water))
+            if self.corner == "adverse" and self.head_curve().holds(solved):
+                solved = max(solved,
+                             self.pump.get("largest_recorded_flow", 0))
+            return solved
         if basis == "recorded":
             return self.bounded(self.pump["largest_recorded_flow"],
                                 "typical", "favourable")

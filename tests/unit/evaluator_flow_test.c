@@ -495,6 +495,23 @@ static void a_rejected_fitting_leaves_the_losses_without_a_bound(void **state)
     assert_non_null(strstr(pump->reason, "was rejected"));
 }
 
+/* Nor is a lone fitting that was rejected taken for none: a likely sum stands
+ * in. */
+static void a_lone_rejected_fitting_is_not_nought(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_input *input;
+
+    f->pipes[0].fitting_count = 0;
+    f->pipes[0].rejected_fittings = 1;
+    input = &summer(f)->inputs[SL_IN_SUCTION_MINOR];
+    check_provenance("losses", input, SL_UNKNOWN);
+    assert_true(input->value.typical > 0.1);
+    check_nan("no bound", input->value.adverse);
+    assert_ptr_equal(input->row,
+                     sl_default_find(&f->tables, "suction_minor_k", ""));
+}
+
 static void a_rejected_curve_point_leaves_npshr_without_a_bound(void **state)
 {
     struct fixture *f = *state;
@@ -596,6 +613,32 @@ static void unknown_service_takes_the_lower_level_too(void **state)
                 297.1, 0, 0);
 }
 
+/* What it has run at it may run at again: a larger flow on record is the
+ * adverse end of a solved one. */
+static void a_larger_flow_on_record_is_the_adverse_end(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *pump = summer(f);
+    double solved = pump->cases[SL_TYPICAL].flow;
+    struct sl_curve_view curve = npshr_curve();
+
+    f->pumps[0].record.largest_recorded_flow = known(0.93 * solved);
+    pump = summer(f);
+    check_close("a smaller one", pump->cases[SL_ADVERSE].flow, solved, 0, 0);
+    f->pumps[0].record.largest_recorded_flow = known(1.07 * solved);
+    pump = summer(f);
+    check_close("typical", pump->cases[SL_TYPICAL].flow, solved, 0, 0);
+    check_close("adverse", pump->cases[SL_ADVERSE].flow, 1.07 * solved, 0, 0);
+    check_close("NPSHR there", pump->cases[SL_ADVERSE].npshr,
+                sl_curve_at(&curve, 1.07 * solved), 1e-14, 0);
+    check_state("still clear", pump, SL_CLEAR, SL_CLEAR);
+    /* Past the published curve it bounds nothing. */
+    f->pumps[0].record.largest_recorded_flow = known(2 * solved);
+    pump = summer(f);
+    check_state("off the curve", pump, SL_UNPROVEN, SL_CLEAR);
+    assert_ptr_equal(pump->leading_unknown, &pump->inputs[SL_IN_FLOW]);
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
@@ -623,12 +666,14 @@ int main(void)
         TEST(adverse_suction_does_not_lessen_the_flow),
         TEST(most_flow_bounds_the_flow_of_every_corner),
         TEST(a_rejected_fitting_leaves_the_losses_without_a_bound),
+        TEST(a_lone_rejected_fitting_is_not_nought),
         TEST(a_rejected_curve_point_leaves_npshr_without_a_bound),
         TEST(a_rejected_curve_point_is_told_whatever_npshr_rests_on),
         TEST(neighbour_whose_curve_bounds_nothing_has_no_most_flow),
         TEST(a_rejected_pump_keeps_its_station_from_clear),
         TEST(a_neighbour_without_suction_records_has_no_bound),
         TEST(unknown_service_takes_the_lower_level_too),
+        TEST(a_larger_flow_on_record_is_the_adverse_end),
     };
 
     return cmocka_run_group_tests(tests, NULL, NULL);

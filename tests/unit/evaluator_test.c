@@ -769,6 +769,11 @@ static void a_bare_mains_loss_is_told_at_its_flow(void **state)
                        minor_of(flow, 0.263, 20));
     assert_true(loss->adverse < loss->typical &&
                 loss->typical < loss->favourable);
+    /* Both defaults it rests on are named, and so are counted. */
+    assert_string_equal(pump->inputs[SL_IN_DISCHARGE_LOSS].row->field,
+                        "discharge_minor_k");
+    assert_string_equal(pump->inputs[SL_IN_DISCHARGE_LOSS].other->field,
+                        "discharge_roughness");
 }
 
 int main(void)
