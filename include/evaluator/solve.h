@@ -23,9 +23,9 @@ struct sl_ends sl_ends_all(enum sl_corner corner);
  * cold water on a long smooth pipe loses more by friction.  One of the three
  * without a figure leaves both ends without one.
  *
- * A suction loss at its adverse end counts in NPSHA and not in the flow,
- * which it would lessen: so is the pump's own flow that of running alone,
- * the most it can be, while others load the pipes it shares with them. */
+ * A suction loss counts in NPSHA at the end asked for and in the flow at the
+ * other one, where it has both; and the pump's own flow is that of running
+ * alone, the most it can be, while others load the pipes it shares. */
 void sl_solve_case(const struct sl_plan *plan, const struct sl_ends *ends,
                    struct sl_case *solved, struct sl_case_notes *notes);
 

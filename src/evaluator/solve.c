@@ -39,21 +39,33 @@ static double system_head(void *context, double flow)
            suction.minor;
 }
 
+static const enum sl_input_id suction_losses[] = {
+    SL_IN_SUCTION_PIPING, SL_IN_SUCTION_LENGTH, SL_IN_SUCTION_BORE,
+    SL_IN_SUCTION_ROUGHNESS, SL_IN_SUCTION_MINOR};
+
+#define SUCTION_LOSSES (sizeof suction_losses / sizeof *suction_losses)
+
 /* The ends at which the flow is sought.  Loss on the suction side lessens
  * NPSHA, but the flow too and with it NPSHR, which tells where the head curve
- * is flat; so what is adverse in the balance is left out of the flow, and the
- * two together bound every case between. */
-static struct sl_ends flow_ends(const struct sl_ends *ends)
+ * is flat; so a loss counts at one end in the balance and at the other in the
+ * flow, where it has both, and the two together bound every case between.
+ * Other pumps never count in the flow: it is that of running alone. */
+static struct sl_ends flow_ends(const struct sl_plan *plan,
+                                const struct sl_ends *ends)
 {
-    static const enum sl_input_id losses[] = {
-        SL_IN_SUCTION_PIPING,    SL_IN_SUCTION_LENGTH, SL_IN_SUCTION_BORE,
-        SL_IN_SUCTION_ROUGHNESS, SL_IN_SUCTION_MINOR,  SL_IN_RUNNING_TOGETHER};
-    struct sl_ends most = *ends;
+    struct sl_ends sought = *ends;
 
-    for (size_t i = 0; i < sizeof losses / sizeof *losses; i++)
-        if (most.of[losses[i]] == SL_ADVERSE)
-            most.of[losses[i]] = SL_FAVOURABLE;
-    return most;
+    for (size_t i = 0; i < SUCTION_LOSSES; i++) {
+        enum sl_input_id id = suction_losses[i];
+
+        if (ends->of[id] == SL_ADVERSE)
+            sought.of[id] = SL_FAVOURABLE;
+        else if (ends->of[id] == SL_FAVOURABLE &&
+                 !isnan(plan->inputs[id].value.adverse))
+            sought.of[id] = SL_ADVERSE;
+    }
+    sought.of[SL_IN_RUNNING_TOGETHER] = SL_FAVOURABLE;
+    return sought;
 }
 
 /* At the adverse end no less than the largest flow on record: what the pump
@@ -72,7 +84,7 @@ static double flow_of(const struct sl_setting *setting,
                       struct sl_case_notes *notes)
 {
     const struct sl_plan *plan = setting->plan;
-    struct sl_ends ends = flow_ends(setting->ends);
+    struct sl_ends ends = flow_ends(plan, setting->ends);
     struct sl_setting seeking = *setting;
     struct sl_system system = {system_head, &seeking};
     struct sl_operating_point point;
@@ -254,6 +266,8 @@ double sl_solve_most_flow(const struct sl_plan *plan)
 
     if (!curve_bounds_flow(plan))
         return NAN;
+    for (size_t i = 0; i < SUCTION_LOSSES; i++)
+        ends.of[suction_losses[i]] = SL_ADVERSE; /* least in the flow */
     ends.of[SL_IN_DISCHARGE_LEVEL] = SL_ADVERSE;
     ends.of[SL_IN_DISCHARGE_LOSS] = SL_ADVERSE;
     ends.of[SL_IN_FLOW] = SL_ADVERSE;

@@ -14,6 +14,8 @@ TERMS = ("atmosphere_m", "barometer_m", "gauge_m", "elevation_m",
 class Case:
     """One pump under one condition at one corner."""
 
+    lenient = False
+
     def __init__(self, inventory, published, pump, condition, corner,
                  temperature_corner=None):
         self.published, self.inventory = published, inventory
@@ -212,8 +214,20 @@ class Case:
         whole = [p for p in self.pipes if "length" in p and "bore" in p]
         friction = sum(self.pipe_friction(p, flow, water) for p in whole)
         if len(whole) < len(self.pipes) or not self.pipes:
-            friction += self.default("suction_loss")
-        return friction, self.pipe_minor(flow)
+            friction += self.where_bounded(lambda case: case.default(
+                "suction_loss"))
+        return friction, self.where_bounded(lambda case: case.pipe_minor(
+            flow))
+
+    def where_bounded(self, figure):
+        """A lenient case takes what has no adverse end at its favourable
+        one."""
+        try:
+            return figure(self)
+        except Unbounded:
+            if not self.lenient:
+                raise
+            return figure(self.at("favourable"))
 
     def pipe_minor(self, flow):
         """Where no fitting is recorded, a sum on the narrowest bore."""
@@ -300,10 +314,15 @@ class Case:
                             % ("up" if ratio >= 1 else "down"))
 
     def system_head(self, flow, water):
-        """At the adverse end the suction's losses are those of its
-        favourable end: more loss would lessen the flow, and NPSHR with
-        it (F12)."""
-        suction = self.at("favourable") if self.corner == "adverse" else self
+        """The suction's losses count at the other end than in the
+        balance, where they have both: more loss would lessen the flow, and
+        NPSHR with it (F12)."""
+        suction = self
+        if self.corner == "adverse":
+            suction = self.at("favourable")
+        elif self.corner == "favourable":
+            suction = self.at("adverse")
+            suction.lenient = True
         return (self.discharge_level() - self.surface()
                 - water.head(self.gauge()) - self.velocity(flow)
                 + self.discharge_loss(flow, water)

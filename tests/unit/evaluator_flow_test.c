@@ -431,21 +431,53 @@ static void shared_loss_is_known_without_the_datum(void **state)
     assert_true(a->leading_unknown->settles);
 }
 
-/* Suction losses at their adverse end are not let lessen the flow. */
-static void adverse_suction_does_not_lessen_the_flow(void **state)
+/* A loss of the suction counts at one end in the balance and at the other in
+ * the flow: the flow at either corner is that of a record of the other. */
+static void suction_loss_counts_at_the_other_end_in_the_flow(void **state)
 {
     struct fixture *f = *state;
+    double adverse, favourable;
     const struct sl_case *cases;
 
     forget(&f->pipes[0].record.roughness);
     f->pipes[0].fitting_count = 0;
     cases = summer(f)->cases;
-    check_close("flow", cases[SL_ADVERSE].flow, cases[SL_FAVOURABLE].flow, 0,
-                0);
-    assert_true(cases[SL_TYPICAL].flow < cases[SL_FAVOURABLE].flow);
+    adverse = cases[SL_ADVERSE].flow;
+    favourable = cases[SL_FAVOURABLE].flow;
     check_close("K", cases[SL_ADVERSE].terms.minor,
-                -minor_of(cases[SL_ADVERSE].flow, suction_bore, 2.13), 1e-12,
+                -minor_of(adverse, suction_bore, 2.13), 1e-12, 0);
+    check_close("least K", cases[SL_FAVOURABLE].terms.minor,
+                -minor_of(favourable, suction_bore, 0.23), 1e-12, 0);
+    assert_true(favourable < cases[SL_TYPICAL].flow &&
+                cases[SL_TYPICAL].flow < adverse);
+
+    f->pipes[0].fitting_count = 1;
+    f->fittings[0].k = known(0.23);
+    f->pipes[0].record.roughness = known(0.000003);
+    check_close("smooth", summer(f)->cases[SL_TYPICAL].flow, adverse, 1e-12, 0);
+    f->fittings[0].k = known(2.13);
+    f->pipes[0].record.roughness = known(0.006);
+    check_close("rough", summer(f)->cases[SL_TYPICAL].flow, favourable, 1e-12,
                 0);
+}
+
+/* On a flat head curve a rough suction lessens NPSHR by more than it costs: a
+ * wall that is not recorded must not prove short what a rough one is not. */
+static void flat_curve_is_not_short_for_want_of_its_wall(void **state)
+{
+    const double part = 0.082;
+    struct fixture *f = *state;
+    struct sl_station *station = &f->dossier.record;
+
+    for (int i = 0; i < POINTS; i++)
+        f->points[i].head = known(3 + part * curve_head[i]);
+    station->discharge_loss_head.value *= part;
+    station->discharge_low = known(298.35 + 3.848);
+    f->pumps[0].record.datum_elevation = known(302.356);
+    f->pipes[0].record.roughness = known(0.006);
+    check_state("rough", summer(f), SL_THIN, SL_THIN);
+    forget(&f->pipes[0].record.roughness);
+    assert_int_not_equal(summer(f)->state, SL_SHORT);
 }
 
 /* More loss in the suction, or a smoother discharge: the bound holds. */
@@ -663,7 +695,8 @@ int main(void)
         TEST(one_source_serves_all_pumps),
         TEST(one_main_serves_all_pumps),
         TEST(shared_loss_is_known_without_the_datum),
-        TEST(adverse_suction_does_not_lessen_the_flow),
+        TEST(suction_loss_counts_at_the_other_end_in_the_flow),
+        TEST(flat_curve_is_not_short_for_want_of_its_wall),
         TEST(most_flow_bounds_the_flow_of_every_corner),
         TEST(a_rejected_fitting_leaves_the_losses_without_a_bound),
         TEST(a_lone_rejected_fitting_is_not_nought),
