@@ -32,6 +32,17 @@ double sl_reynolds(double velocity, double bore, double kinematic_viscosity);
  * sl_darcy_head). */
 double sl_friction_factor(double reynolds, double relative_roughness);
 
+/* Roughness of a wall that has grown rougher with age, formula F10:
+ * eps(t) = eps0 + a t.
+ * Colebrook and White 1937, Journal of the Institution of Civil Engineers
+ * 7, 99 [place from memory, check the source].
+ * in   new_roughness  [m], >= 0, as laid
+ *      rate  [m a year], >= 0: data, by the water and the wall
+ *      years  [years], >= 0, since it was laid
+ * out  [m].  A straight line for ever: beside the bore it may come out
+ *      rougher than sl_friction_factor takes. */
+double sl_aged_roughness(double new_roughness, double rate, double years);
+
 /* Loss of head, Darcy-Weisbach, formula F7: h = f (L/D) V²/2g.
  * in   factor  [-], Darcy, >= 0;  length  [m], >= 0;  bore  [m], > 0
  *      velocity  [m/s], >= 0

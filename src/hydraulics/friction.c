@@ -75,6 +75,14 @@ double sl_friction_factor(double reynolds, double relative_roughness)
     return fmax(64.0 / reynolds, colebrook(reynolds, relative_roughness));
 }
 
+double sl_aged_roughness(double new_roughness, double rate, double years)
+{
+    if (!not_negative(new_roughness) || !not_negative(rate) ||
+        !not_negative(years))
+        return NAN;
+    return new_roughness + rate * years; /* F10 */
+}
+
 double sl_darcy_head(double factor, double length, double bore, double velocity)
 {
     if (!not_negative(length) || !positive(bore) || !not_negative(velocity))
