@@ -64,6 +64,12 @@ static double affinity_power_ratio(struct inputs *in)
            sl_affinity_head(1.0, speed_ratio(in));
 }
 
+/* In the unit it is given in. */
+static double affinity_power(struct inputs *in)
+{
+    return number(in, "power") * affinity_power_ratio(in);
+}
+
 static double affinity_npshr(struct inputs *in)
 {
     return sl_affinity_npshr(number(in, "npshr"), speed_ratio(in),

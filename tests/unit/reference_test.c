@@ -16,6 +16,7 @@
 #include <csv.h>
 
 #include "check.h"
+#include "reference_suction.h"
 #include "reference_systems.h"
 
 static const struct {
@@ -25,6 +26,7 @@ static const struct {
     {"affinity_flow", affinity_flow},
     {"affinity_head", affinity_head},
     {"affinity_npshr", affinity_npshr},
+    {"affinity_power", affinity_power},
     {"affinity_power_ratio", affinity_power_ratio},
     {"atmosphere_head", atmosphere_head},
     {"bore_area", bore_area},
@@ -36,13 +38,16 @@ static const struct {
     {"duty_flow", duty_flow},
     {"duty_head", duty_head},
     {"enlarged_pressure", enlarged_pressure},
+    {"estimated_npshr", estimated_npshr},
     {"friction_factor", factor},
     {"gpm_from_cfs", gpm_from_cfs},
     {"hazen_over_darcy", hazen_over_darcy},
     {"hazen_williams_loss", hazen_williams_loss},
+    {"lift_by_specific_speeds", lift_by_specific_speeds},
     {"lift_with_its_pipe", lift_with_its_pipe},
     {"looped_gain", looped_gain},
     {"lowest_level", lowest_level},
+    {"minimum_submergence", minimum_submergence},
     {"minor_loss", minor_loss},
     {"minor_pressure", minor_pressure},
     {"npsha_by_gauge_at_eye", npsha_by_gauge_at_eye},
@@ -50,10 +55,13 @@ static const struct {
     {"npsha_from_surface", npsha_from_surface},
     {"npsha_of_water", npsha_of_water},
     {"pipe_and_minor_loss", pipe_and_minor_loss},
+    {"pipe_velocity", pipe_velocity},
+    {"pure_specific_speed", pure_specific_speed},
     {"required_npsha", required_npsha},
     {"reservoir_flow", reservoir_flow},
     {"seawater_density", seawater_density},
     {"seawater_vapour_pressure", seawater_vapour_pressure},
+    {"specific_speed", specific_speed},
     {"specific_weight", specific_weight},
     {"speed_for_share", speed_for_share},
     {"standard_atmosphere", standard_atmosphere},
@@ -62,7 +70,10 @@ static const struct {
     {"suction_pressure", suction_pressure},
     {"supply_pressure", supply_pressure},
     {"system_head", system_head},
+    {"thoma_number", thoma_number},
     {"throttle_k", throttle_k},
+    {"us_factor", us_factor},
+    {"us_specific_speed", us_specific_speed},
     {"vapour_pressure", vapour_pressure},
     {"volume_to_lowest_level", volume_to_lowest_level},
     {"water_density", water_density},
