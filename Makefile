@@ -49,8 +49,8 @@ NEEDED_TO_TEST := $(NEEDED_TO_BUILD) libcmocka-dev sqlite3
 
 .DELETE_ON_ERROR:
 .SUFFIXES:
-.PHONY: all help demo test check unit cli recompute clean install uninstall tidy \
-        sample needed-to-build needed-to-test
+.PHONY: all help demo test check unit cli recompute compare clean install \
+        uninstall tidy sample needed-to-build needed-to-test
 
 all: needed-to-build ## build the program (the default)
 	@$(MAKE) --no-print-directory $(OUT)/summerlow
@@ -153,6 +153,21 @@ recompute: all ## work every pump out anew by other libraries, and compare
 	    /usr/bin/python3 tests/independent/recompute.py $$inventory $$out \
 	        || exit 1; \
 	done
+
+# The hydraulics alone against such libraries, over whole ranges.
+NEEDED_TO_COMPARE := $(NEEDED_TO_RECOMPUTE) python3-gsw
+HYDRAULICS := build/compare/hydraulics.so
+
+compare: needed-to-build ## hold the hydraulics to reference libraries
+	@$(call need,$(NEEDED_TO_COMPARE))
+	@$(MAKE) --no-print-directory $(HYDRAULICS)
+	@/usr/bin/python3 tests/reference/compare.py $(HYDRAULICS)
+
+$(HYDRAULICS): $(wildcard src/hydraulics/*.c include/*/*.h)
+	@mkdir -p $(@D)
+	@echo "ld $@"
+	@$(CC) -std=c17 $(WARNINGS) -O2 -fPIC -shared $(CPPFLAGS) -o $@ \
+	    $(filter %.c,$^) -lm
 
 # --- the rest --------------------------------------------------------------
 

@@ -6,7 +6,7 @@
  * US Standard Atmosphere 1976, equation 33a = ISO 2533:1975, lowest layer.
  * in   altitude  -1000 to 11000 m over mean sea level.  The formula asks
  *                for geopotential height; an ordinary elevation is used as
- *                if it were one (0.01 % of the pressure at 3000 m).
+ *                if it were one (0.02 % of the pressure at 3000 m).
  * out  [Pa], absolute: what a barometer on the spot shows in standard air,
  *      not the sea-level value that weather services give
  * Outside the range, and for NaN or infinity: NaN. */
