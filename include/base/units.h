@@ -20,7 +20,8 @@ enum sl_quantity {
     SL_TEMPERATURE, /* K */
     SL_SPEED,       /* rev/min, kept as the trade's unit */
     SL_POWER,       /* W */
-    SL_VELOCITY     /* m/s */
+    SL_VELOCITY,    /* m/s */
+    SL_TEMPERATURE_DIFFERENCE /* K: how much warmer, not how warm */
 };
 
 enum sl_unit_system { SL_SI, SL_US };

@@ -24,6 +24,8 @@ enum sl_kind {
     SL_KIND_PIPE,
     SL_KIND_FITTING,
     SL_KIND_PUMP,
+    SL_KIND_CONDITION,
+    SL_KIND_RULE,
     SL_KIND_COUNT
 };
 
@@ -91,6 +93,7 @@ struct sl_pump {
     struct sl_number largest_recorded_flow;
     struct sl_number motor_power;
     struct sl_number year_installed;
+    struct sl_number straight_run;
 };
 
 /* One point of a maker's curve. */
@@ -127,6 +130,32 @@ struct sl_fitting {
     struct sl_number k;
 };
 
+/* A case to audit of the owner's own; what is not recorded takes the adverse
+ * choice when it is read (model/tables.h). */
+struct sl_owner_condition {
+    long line;
+    const char *condition;
+    int level_basis;
+    struct sl_number level_addition;
+    int discharge_basis;
+    int pressure_basis;
+    int temperature_basis;
+    struct sl_number temperature_addition;
+    int barometer;
+    int suction_friction;
+    int discharge_friction;
+};
+
+/* A margin rule of the owner's own, of a single tier. */
+struct sl_owner_rule {
+    long line;
+    const char *rule;
+    struct sl_number ratio;
+    struct sl_number floor;
+    const char *edition;
+    const char *source;
+};
+
 /* Room for a record of any kind. */
 union sl_record {
     struct sl_station station;
@@ -134,6 +163,8 @@ union sl_record {
     struct sl_pipe pipe;
     struct sl_fitting fitting;
     struct sl_pump pump;
+    struct sl_owner_condition condition;
+    struct sl_owner_rule rule;
 };
 
 #endif

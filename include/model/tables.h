@@ -45,26 +45,80 @@ struct sl_default {
     char trust;
 };
 
-/* Rule met when NPSHA >= max(ratio * NPSHR, NPSHR + floor). */
-struct sl_margin_rule {
-    const char *rule;
+/* How the surface of a wall grows rougher (F10). */
+struct sl_ageing {
+    const char *material;
+    int condition;           /* SL_GOOD to SL_POOR; 0: not recorded */
+    struct sl_interval rate; /* m a year: typical, fastest, slowest */
+    const char *source;
+    char trust;
+};
+
+/* What a margin rule looks at to choose its tier. */
+enum sl_rule_measure {
+    SL_MEASURE_NONE,
+    SL_MEASURE_SUCTION_ENERGY,         /* over the start of high (F15) */
+    SL_MEASURE_SUCTION_SPECIFIC_SPEED, /* US customary (F14) */
+    SL_MEASURE_SUCTION_LIFT            /* m, of the surface under the eye */
+};
+
+#define SL_RULE_TIERS 3
+
+/* Asked for where the measure is more than `over`; the first tier always. */
+struct sl_margin_tier {
+    double over;
     double ratio;
     double floor; /* m */
+};
+
+/* Met when NPSHA >= max(ratio * NPSHR, NPSHR + floor) by the tier that
+ * applies and, where there is a lift limit, when the suction lift with its
+ * losses and NPSHR together stay within it. */
+struct sl_margin_rule {
+    const char *rule;
+    int make_up; /* the only one it is about; 0: all */
+    enum sl_rule_measure measure;
+    struct sl_margin_tier tiers[SL_RULE_TIERS];
+    size_t tier_count;
+    double lift_limit; /* m; NaN: none */
     const char *edition;
     const char *source;
     char trust;
 };
 
-enum sl_level_basis { SL_LEVEL_NORMAL, SL_LEVEL_LOW };
+/* A limit that a companion check holds a figure to. */
+struct sl_check_limit {
+    const char *check;        /* "suction velocity" */
+    const char *circumstance; /* a service or make-up; "" for all others */
+    double lowest, highest;   /* SI; NaN: no limit on that side */
+    enum sl_quantity quantity;
+    const char *source;
+    char trust;
+};
+
+/* A discharge level or a pressure is normal or low; a source level any. */
+enum sl_level_basis {
+    SL_LEVEL_NORMAL,
+    SL_LEVEL_LOW, /* the lowest the audit knows of */
+    SL_LEVEL_CUT_OUT,
+    SL_LEVEL_RECORD_LOW
+};
+
+/* Walls as laid, or grown rougher with their years. */
+enum sl_friction_state { SL_FRICTION_NEW, SL_FRICTION_AGED };
 
 /* A case to audit. */
 struct sl_condition {
     const char *condition; /* "summer low" */
     enum sl_level_basis level;
+    double level_addition; /* m, to that level */
     enum sl_level_basis discharge;
     enum sl_level_basis pressure;
-    int summer_temperature; /* else the normal one */
-    int storm_barometer;    /* take the barometer allowance */
+    int summer_temperature;      /* else the normal one */
+    double temperature_addition; /* K, to that temperature */
+    int storm_barometer;         /* take the barometer allowance */
+    enum sl_friction_state suction_friction;
+    enum sl_friction_state discharge_friction;
 };
 
 struct sl_tables {
@@ -78,6 +132,11 @@ struct sl_tables {
     size_t rule_count;
     struct sl_condition *conditions;
     size_t condition_count;
+    struct sl_ageing *ageing;
+    size_t ageing_count;
+    struct sl_check_limit *limits;
+    size_t limit_count;
+    int year; /* of the audit: pipes are as old as that makes them */
     struct sl_vocabularies vocabularies;
 };
 

@@ -45,6 +45,6 @@ void sl_words_rule(const struct sl_margin_rule *rule, enum sl_unit_system units,
                    struct sl_text *text);
 /* A case to audit: "source at its low level, summer water, ...". */
 void sl_words_condition(const struct sl_condition *condition,
-                        struct sl_text *text);
+                        enum sl_unit_system units, struct sl_text *text);
 
 #endif

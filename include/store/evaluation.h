@@ -18,10 +18,11 @@ struct sl_evaluation {
     long long vintage;
     const char *version; /* of the program */
     const char *rule;    /* the margin rule ranked on */
+    int year;            /* of the audit */
 };
 
-/* The evaluation of this vintage by this version and rule, or, with version
- * NULL, the newest of the vintage; a rule of NULL is any.  Texts it sets
+/* The newest evaluation of this vintage by this version and rule, of this
+ * year; a version or rule of NULL and a year of 0 are any.  Texts it sets
  * live as long as the store is open. */
 enum sl_status sl_store_find_evaluation(struct sl_store *store,
                                         struct sl_evaluation *evaluation,

@@ -144,5 +144,8 @@ const char *sl_read_text(struct sl_statement *statement, const char *name);
 /* NULL is NULL; else a copy in the arena. */
 const char *sl_read_copy(struct sl_statement *statement, const char *name,
                          struct sl_arena *arena);
+/* The same; NULL is "". */
+const char *sl_read_filled(struct sl_statement *statement, const char *name,
+                           struct sl_arena *arena);
 
 #endif

@@ -33,8 +33,13 @@ enum sl_status sl_store_commit(struct sl_store *store, struct sl_error *error);
 void sl_store_rollback(struct sl_store *store);
 
 /* The published tables, into the arena; also hands the store the
- * vocabularies it writes words with, so `tables` must outlive the store. */
-enum sl_status sl_store_read_tables(struct sl_store *store,
+ * vocabularies it writes words with, so `tables` must outlive the store.
+ *
+ * The conditions are the vintage's own where it has any, else the published
+ * ones; its margin rules come behind the published ones, but one that has
+ * the name of a published one takes its place.  Vintage 0 is none: all as
+ * published.  `tables->year` is left as it is. */
+enum sl_status sl_store_read_tables(struct sl_store *store, long long vintage,
                                     struct sl_arena *arena,
                                     struct sl_tables *tables,
                                     struct sl_error *error);

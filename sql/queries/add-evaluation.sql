@@ -1,6 +1,6 @@
 -- Begin an evaluation; the store numbers it.
 INSERT INTO evaluations (
-    vintage, version, rule
+    vintage, version, rule, year
 ) VALUES (
-    :vintage, :version, :rule
+    :vintage, :version, :rule, :year
 );

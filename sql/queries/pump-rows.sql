@@ -17,5 +17,7 @@ FROM pump_results AS r
 JOIN stations AS s ON s.station = r.station
 JOIN pumps AS p ON p.pump = r.pump
 LEFT JOIN conditions AS c ON c.condition = r.condition
+LEFT JOIN owner_conditions AS o
+    ON o.vintage = s.vintage AND o.condition = r.condition
 WHERE r.evaluation = :evaluation AND r.station = :station
-ORDER BY p.pump_id, c.place NULLS LAST, r.condition;
+ORDER BY p.pump_id, coalesce(o.line, c.place) NULLS LAST, r.condition;

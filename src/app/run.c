@@ -7,7 +7,8 @@ enum sl_status sl_run_open(struct sl_run *run, const char *path,
 
     if (status)
         return status;
-    return sl_store_read_tables(run->store, &run->arena, &run->tables, error);
+    return sl_store_read_tables(run->store, 0, &run->arena, &run->tables,
+                                error);
 }
 
 enum sl_status sl_run_find_newest(struct sl_run *run, bool evaluated,

@@ -43,6 +43,9 @@ static const struct sl_unit units[] = {
     {"w", "W", SL_POWER, 1, 0},
     {"m_s", "m/s", SL_VELOCITY, 1, 0},
     {"ft_s", "ft/s", SL_VELOCITY, FOOT, 0},
+    {"k", "K", SL_TEMPERATURE_DIFFERENCE, 1, 0},
+    {"delta_f", "°F", SL_TEMPERATURE_DIFFERENCE, 5.0 / 9, 0},
+    {"delta_c", "°C", SL_TEMPERATURE_DIFFERENCE, 1, 0},
 };
 
 #define UNIT_COUNT (sizeof units / sizeof units[0])
@@ -88,6 +91,8 @@ const char *sl_unit_choices(enum sl_quantity quantity)
         return "kw, hp, w";
     case SL_VELOCITY:
         return "m_s, ft_s";
+    case SL_TEMPERATURE_DIFFERENCE:
+        return "k, delta_f, delta_c";
     }
     return "";
 }

@@ -130,12 +130,13 @@ static void refuse_twice(const struct sl_columns *columns,
         }
 }
 
-static bool is_key(const struct sl_field *field)
+static bool is_key(const struct sl_record_kind *kind,
+                   const struct sl_field *field)
 {
     size_t length = strlen(field->name);
 
     return field->type == SL_FIELD_TEXT &&
-           (strcmp(field->name, "draws_from") == 0 ||
+           (field == kind->fields || strcmp(field->name, "draws_from") == 0 ||
             (length > 3 && strcmp(field->name + length - 3, "_id") == 0));
 }
 
@@ -156,7 +157,7 @@ static void understand(struct sl_columns *columns, struct sl_column *column,
         column->field = NULL;
     if (!column->field)
         return;
-    column->is_key = is_key(column->field);
+    column->is_key = is_key(columns->kind, column->field);
     column->use = column->field->name;
     if (column->is_grade) {
         size_t room = strlen(column->use) + GRADE_LENGTH + 1;

@@ -18,6 +18,8 @@ _Static_assert(offsetof(struct sl_curve_point, line) == 0, "curves");
 _Static_assert(offsetof(struct sl_pipe, line) == 0, "pipes");
 _Static_assert(offsetof(struct sl_fitting, line) == 0, "fittings");
 _Static_assert(offsetof(struct sl_pump, line) == 0, "pumps");
+_Static_assert(offsetof(struct sl_owner_condition, line) == 0, "conditions");
+_Static_assert(offsetof(struct sl_owner_rule, line) == 0, "margin rules");
 
 struct pass {
     const struct sl_file_pass *as;

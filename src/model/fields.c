@@ -98,7 +98,7 @@ static const struct sl_field station_fields[] = {
     WORD(sl_station, discharge_material, SL_WORDS_MATERIAL, false,
          "material of the discharge main", "the widest roughness interval"),
     WHOLE(sl_station, discharge_year, YEARS, "year the discharge main was laid",
-          "nothing yet"),
+          "its age is taken from none to 100 years"),
     NUMBER(sl_station, discharge_minor_k, SL_PURE, RANGE(0, 1e5), false,
            "sum of K of the discharge's fittings, on its bore",
            "a default with its interval"),
@@ -144,21 +144,29 @@ static const struct sl_field pump_fields[] = {
     NUMBER(sl_pump, max_speed, SL_SPEED, RANGE(10, 20000), false,
            "highest speed the drive allows", "the rated speed is used"),
     NUMBER(sl_pump, bep_flow, SL_FLOW, RANGE(1e-6, 200), false,
-           "flow at best efficiency", "nothing yet"),
-    WHOLE(sl_pump, stages, RANGE(1, 500), "number of stages", "nothing yet"),
+           "flow at best efficiency",
+           "its operating region, suction specific speed and suction energy "
+           "cannot be told"),
+    WHOLE(sl_pump, stages, RANGE(1, 500), "number of stages",
+          "its specific speed, which sets the operating region, cannot be "
+          "told"),
     WORD(sl_pump, double_suction, SL_WORDS_YES_NO, false, "two impeller eyes",
-         "nothing yet"),
+         "suction specific speed and energy cannot be told"),
     NUMBER(sl_pump, suction_nozzle_bore, SL_BORE, RANGE(0.005, 15), false,
-           "bore of the suction flange", "nothing yet"),
+           "bore of the suction flange",
+           "without the eye's diameter too, suction energy cannot be told"),
     NUMBER(sl_pump, eye_diameter, SL_BORE, RANGE(0.005, 15), false,
-           "diameter of the impeller eye", "nothing yet"),
+           "diameter of the impeller eye",
+           "estimated from the bore of the suction flange; without that too, "
+           "suction energy cannot be told"),
     NUMBER(sl_pump, inlet_elevation, SL_LENGTH, ELEVATIONS, false,
            "lip of the bell or opening; bounds an impeller eye that is not "
            "recorded",
-           "nothing, where the eye is recorded"),
+           "its submergence cannot be told"),
     NUMBER(sl_pump, inlet_diameter, SL_BORE, RANGE(0.005, 15), false,
            "diameter of the bell or opening",
-           "a default inlet loss, with its interval"),
+           "a default inlet loss, with its interval; its submergence cannot "
+           "be told"),
     TEXT(sl_pump, suction_pipe_id, false, "the suction pipe at its flange",
          "a dry-pit pump's suction losses have no bound"),
     NUMBER(sl_pump, largest_recorded_flow, SL_FLOW, RANGE(1e-6, 200), false,
@@ -167,6 +175,9 @@ static const struct sl_field pump_fields[] = {
            "power of the motor", "nothing yet"),
     WHOLE(sl_pump, year_installed, YEARS, "year this machine was put in",
           "nothing yet"),
+    NUMBER(sl_pump, straight_run, SL_LENGTH, RANGE(0, 10000), false,
+           "straight pipe before its suction flange",
+           "whether the flow comes to it even cannot be told"),
 };
 
 static const struct sl_field point_fields[] = {
@@ -201,9 +212,11 @@ static const struct sl_field pipe_fields[] = {
     TEXT(sl_pipe, lining, false, "its lining", "nothing yet"),
     WORD(sl_pipe, condition, SL_WORDS_CONDITION, false, "good, fair or poor",
          "roughness from good to poor"),
-    WHOLE(sl_pipe, year_installed, YEARS, "year it was laid", "nothing yet"),
+    WHOLE(sl_pipe, year_installed, YEARS, "year it was laid",
+          "its age is taken from none to 100 years"),
     NUMBER(sl_pipe, roughness, SL_BORE, RANGE(0, 0.1), false,
-           "absolute roughness", "taken from the material's row"),
+           "absolute roughness",
+           "taken from the material, its condition and its age"),
     NUMBER(sl_pipe, hazen_williams_c, SL_PURE, RANGE(20, 200), false,
            "Hazen-Williams C; used where the roughness is not recorded",
            "friction by Darcy and Colebrook"),
@@ -217,6 +230,46 @@ static const struct sl_field fitting_fields[] = {
     WHOLE(sl_fitting, count, RANGE(1, 1000), "how many", "one"),
     NUMBER(sl_fitting, k, SL_PURE, RANGE(0, 1000), false,
            "K of V²/2g in the pipe's bore", "the K table's interval"),
+};
+
+static const struct sl_field condition_fields[] = {
+    TEXT(sl_owner_condition, condition, true, "its name",
+         "the record is rejected"),
+    WORD(sl_owner_condition, level_basis, SL_WORDS_LEVEL_BASIS, true,
+         "source level; lowest: the lowest the audit knows of",
+         "the record is rejected"),
+    NUMBER(sl_owner_condition, level_addition, SL_LENGTH, RANGE(-50, 50), false,
+           "added to that level; less than 0 is lower", "none"),
+    WORD(sl_owner_condition, discharge_basis, SL_WORDS_LOW_BASIS, false,
+         "discharge level", "low: less head, so more flow"),
+    WORD(sl_owner_condition, pressure_basis, SL_WORDS_LOW_BASIS, false,
+         "gauge pressure of a tank or main", "low"),
+    WORD(sl_owner_condition, temperature_basis, SL_WORDS_TEMPERATURE_BASIS,
+         true, "water temperature", "the record is rejected"),
+    NUMBER(sl_owner_condition, temperature_addition, SL_TEMPERATURE_DIFFERENCE,
+           RANGE(-30, 30), false,
+           "added to that temperature, a difference: a warmer decade", "none"),
+    WORD(sl_owner_condition, barometer, SL_WORDS_BAROMETER, false,
+         "air pressure: the standard one, or its fall in a storm", "storm low"),
+    WORD(sl_owner_condition, suction_friction, SL_WORDS_FRICTION, false,
+         "walls of the suction pipes: as laid, or rougher by their years",
+         "aged: the most loss"),
+    WORD(sl_owner_condition, discharge_friction, SL_WORDS_FRICTION, false,
+         "likewise of the discharge main", "new: the least loss, so more flow"),
+};
+
+static const struct sl_field rule_fields[] = {
+    TEXT(sl_owner_rule, rule, true, "its name", "the record is rejected"),
+    NUMBER(sl_owner_rule, ratio, SL_PURE, RANGE(1, 10), true,
+           "NPSHA is to be at least this many times NPSHR; 1 asks nothing",
+           "the record is rejected"),
+    NUMBER(sl_owner_rule, floor, SL_LENGTH, RANGE(0, 50), true,
+           "and at least this much over NPSHR; 0 asks nothing",
+           "the record is rejected"),
+    TEXT(sl_owner_rule, edition, false, "edition of the standard it is from",
+         "none is shown"),
+    TEXT(sl_owner_rule, source, false, "where it comes from",
+         "shown as the owner's own"),
 };
 
 /* clang-format off */
@@ -235,6 +288,11 @@ static const struct sl_record_kind kinds[SL_KIND_COUNT] = {
     [SL_KIND_FITTING] = KIND("suction fitting", "suction_fittings.csv",
                              "suction_fittings", fitting_fields, sl_fitting),
     [SL_KIND_PUMP] = KIND("pump", "pumps.csv", "pumps", pump_fields, sl_pump),
+    [SL_KIND_CONDITION] =
+        KIND("condition", "conditions.csv", "owner_conditions",
+             condition_fields, sl_owner_condition),
+    [SL_KIND_RULE] = KIND("margin rule", "margin_rules.csv",
+                          "owner_margin_rules", rule_fields, sl_owner_rule),
 };
 
 const struct sl_record_kind *sl_record_kind(enum sl_kind kind)

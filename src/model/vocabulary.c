@@ -15,6 +15,16 @@ static const char *const make_ups[] = {
     "submersible", "self-priming",
 };
 static const char *const conditions[] = {"good", "fair", "poor"};
+static const char *const level_bases[] = {
+    "normal",
+    "lowest",
+    "cut-out",
+    "record low",
+};
+static const char *const low_bases[] = {"normal", "low"};
+static const char *const temperature_bases[] = {"normal", "summer"};
+static const char *const barometers[] = {"standard", "storm low"};
+static const char *const frictions[] = {"new", "aged"};
 
 #define FIXED(list)                                                            \
     {                                                                          \
@@ -30,6 +40,11 @@ struct sl_vocabularies sl_fixed_vocabularies(void)
         [SL_WORDS_SOURCE_KIND] = FIXED(source_kinds),
         [SL_WORDS_MAKE_UP] = FIXED(make_ups),
         [SL_WORDS_CONDITION] = FIXED(conditions),
+        [SL_WORDS_LEVEL_BASIS] = FIXED(level_bases),
+        [SL_WORDS_LOW_BASIS] = FIXED(low_bases),
+        [SL_WORDS_TEMPERATURE_BASIS] = FIXED(temperature_bases),
+        [SL_WORDS_BAROMETER] = FIXED(barometers),
+        [SL_WORDS_FRICTION] = FIXED(frictions),
     }};
 }
 

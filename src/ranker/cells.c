@@ -107,8 +107,15 @@ static void write_quantity(FILE *stream, enum sl_quantity quantity,
                            double value)
 {
     static const int decimals[] = {
-        [SL_LENGTH] = 3,      [SL_BORE] = 3,  [SL_FLOW] = 2,  [SL_PRESSURE] = 2,
-        [SL_TEMPERATURE] = 1, [SL_SPEED] = 1, [SL_POWER] = 2, [SL_VELOCITY] = 3,
+        [SL_LENGTH] = 3,
+        [SL_BORE] = 3,
+        [SL_FLOW] = 2,
+        [SL_PRESSURE] = 2,
+        [SL_TEMPERATURE] = 1,
+        [SL_SPEED] = 1,
+        [SL_POWER] = 2,
+        [SL_VELOCITY] = 3,
+        [SL_TEMPERATURE_DIFFERENCE] = 1,
     };
 
     if (quantity != SL_PURE)

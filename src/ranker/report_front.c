@@ -120,7 +120,7 @@ static void write_conditions(const struct sl_report *report)
     for (size_t i = 0; i < summary->condition_count; i++) {
         struct sl_text words = {0};
 
-        sl_words_condition(&summary->conditions[i], &words);
+        sl_words_condition(&summary->conditions[i], report->units, &words);
         sl_markup(report->stream, "<dd><b>");
         sl_page_name(report, summary->conditions[i].condition);
         sl_markup(report->stream, "</b>: ");

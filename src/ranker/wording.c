@@ -1,6 +1,8 @@
 /* The fixed words: states, trust, rules, conditions, columns. */
 #include "ranker/words.h"
 
+#include <math.h>
+
 #include "ranker/digits.h"
 
 const char *sl_words_state(enum sl_state state)
@@ -65,6 +67,8 @@ const char *sl_words_trust(char trust)
         return "from memory, check the source";
     case 'N':
         return "common practice, no source";
+    case 'O':
+        return "the owner's own";
     case 'P':
         return "a proposal of summerlow's, no outside authority";
     default:
@@ -72,44 +76,132 @@ const char *sl_words_trust(char trust)
     }
 }
 
-static void add_floor(const struct sl_margin_rule *rule,
-                      enum sl_unit_system units, struct sl_text *text)
+static void add_length(double length, enum sl_unit_system units,
+                       struct sl_text *text)
 {
-    sl_text_add_string(text, "NPSHR + ");
-    sl_digits_add(text, &sl_digits_plain,
-                  sl_shown(SL_LENGTH, units, rule->floor), 1);
+    sl_digits_add(text, &sl_digits_plain, sl_shown(SL_LENGTH, units, length),
+                  1);
     sl_text_addf(text, " %s", sl_unit_shown(SL_LENGTH, units)->label);
+}
+
+static void add_tier(const struct sl_margin_tier *tier,
+                     enum sl_unit_system units, struct sl_text *text)
+{
+    if (tier->ratio > 1)
+        sl_text_addf(text, "%.2f × NPSHR", tier->ratio);
+    if (tier->ratio > 1 && tier->floor > 0)
+        sl_text_add_string(text, ", and at least ");
+    if (tier->floor > 0) {
+        sl_text_add_string(text, "NPSHR + ");
+        add_length(tier->floor, units, text);
+    }
+    if (!(tier->ratio > 1) && !(tier->floor > 0))
+        sl_text_add_string(text, "NPSHR, no margin asked");
+}
+
+/* Where the tier begins, in the rule's measure. */
+static void add_over(const struct sl_margin_rule *rule, double over,
+                     enum sl_unit_system units, struct sl_text *text)
+{
+    switch (rule->measure) {
+    case SL_MEASURE_NONE:
+        break;
+    case SL_MEASURE_SUCTION_ENERGY:
+        sl_text_addf(text,
+                     "where suction energy is over %.2g times the start of "
+                     "high, ",
+                     over);
+        break;
+    case SL_MEASURE_SUCTION_SPECIFIC_SPEED:
+        sl_text_addf(text,
+                     "where suction specific speed is over %.0f in US units, ",
+                     over);
+        break;
+    case SL_MEASURE_SUCTION_LIFT:
+        sl_text_add_string(text, "where there is a suction lift");
+        if (over > 0) {
+            sl_text_add_string(text, " over ");
+            add_length(over, units, text);
+        }
+        sl_text_add_string(text, ", ");
+        break;
+    }
 }
 
 void sl_words_rule(const struct sl_margin_rule *rule, enum sl_unit_system units,
                    struct sl_text *text)
 {
+    const struct sl_vocabularies fixed = sl_fixed_vocabularies();
+
+    if (rule->tier_count == 0) {
+        sl_text_add_string(text, "a rule that the store no longer holds");
+        return;
+    }
+    if (rule->make_up)
+        sl_text_addf(text, "for %s pumps alone: ",
+                     sl_word(&fixed.of[SL_WORDS_MAKE_UP], rule->make_up));
     sl_text_add_string(text, "NPSHA at least ");
-    if (rule->ratio > 1)
-        sl_text_addf(text, "%.2f × NPSHR", rule->ratio);
-    if (rule->ratio > 1 && rule->floor > 0)
-        sl_text_add_string(text, ", and at least ");
-    if (rule->floor > 0)
-        add_floor(rule, units, text);
-    if (!(rule->ratio > 1) && !(rule->floor > 0))
-        sl_text_add_string(text, "NPSHR, no margin asked");
+    for (size_t i = 0; i < rule->tier_count; i++) {
+        if (i)
+            sl_text_add_string(text, "; ");
+        if (i)
+            add_over(rule, rule->tiers[i].over, units, text);
+        add_tier(&rule->tiers[i], units, text);
+    }
+    if (isnan(rule->lift_limit))
+        return;
+    sl_text_add_string(text, "; suction lift with its losses and NPSHR "
+                             "together at most ");
+    add_length(rule->lift_limit, units, text);
 }
 
 static const char *level_word(enum sl_level_basis basis)
 {
-    return basis == SL_LEVEL_LOW ? "lowest" : "normal";
+    switch (basis) {
+    case SL_LEVEL_NORMAL:
+        return "normal";
+    case SL_LEVEL_LOW:
+        return "lowest";
+    case SL_LEVEL_CUT_OUT:
+        return "cut-out";
+    case SL_LEVEL_RECORD_LOW:
+        break;
+    }
+    return "lowest recorded";
+}
+
+static const char *friction_word(enum sl_friction_state state)
+{
+    return state == SL_FRICTION_NEW ? "as laid" : "at their age";
+}
+
+/* " + 0.5 m", " - 1.8 °F"; nothing for none. */
+static void add_addition(enum sl_quantity quantity, double addition,
+                         enum sl_unit_system units, struct sl_text *text)
+{
+    if (addition == 0)
+        return;
+    sl_text_addf(text, " %c %.4g %s", addition < 0 ? '-' : '+',
+                 fabs(sl_shown(quantity, units, addition)),
+                 sl_unit_shown(quantity, units)->label);
 }
 
 void sl_words_condition(const struct sl_condition *condition,
-                        struct sl_text *text)
+                        enum sl_unit_system units, struct sl_text *text)
 {
     sl_text_addf(text, "source at its %s level", level_word(condition->level));
+    add_addition(SL_LENGTH, condition->level_addition, units, text);
     sl_text_addf(text, ", mains at their %s pressure",
                  level_word(condition->pressure));
     sl_text_addf(text, ", discharge at its %s level",
                  level_word(condition->discharge));
     sl_text_addf(text, ", water at its %s temperature",
                  condition->summer_temperature ? "summer" : "normal");
+    add_addition(SL_TEMPERATURE_DIFFERENCE, condition->temperature_addition,
+                 units, text);
     sl_text_addf(text, ", %s barometer",
                  condition->storm_barometer ? "storm" : "standard");
+    sl_text_addf(text, ", suction pipes %s, discharge pipes %s",
+                 friction_word(condition->suction_friction),
+                 friction_word(condition->discharge_friction));
 }

@@ -147,3 +147,11 @@ const char *sl_read_copy(struct sl_statement *statement, const char *name,
     return sl_arena_text(arena, (const char *)text,
                          (size_t)sqlite3_column_bytes(statement->prepared, at));
 }
+
+const char *sl_read_filled(struct sl_statement *statement, const char *name,
+                           struct sl_arena *arena)
+{
+    const char *copy = sl_read_copy(statement, name, arena);
+
+    return copy ? copy : "";
+}

@@ -16,12 +16,15 @@ enum sl_status sl_store_find_evaluation(struct sl_store *store,
     sl_bind_whole(statement, "vintage", evaluation->vintage);
     sl_bind_text(statement, "version", evaluation->version);
     sl_bind_text(statement, "rule", evaluation->rule);
+    if (evaluation->year)
+        sl_bind_whole(statement, "year", evaluation->year);
     status = sl_statement_step(statement, found, error);
     if (status || !*found)
         return status;
     evaluation->evaluation = sl_read_whole(statement, "evaluation");
     evaluation->version = sl_read_copy(statement, "version", &store->arena);
     evaluation->rule = sl_read_copy(statement, "rule", &store->arena);
+    evaluation->year = (int)sl_read_whole(statement, "year");
     return sl_statement_end(statement, error);
 }
 
@@ -38,6 +41,7 @@ enum sl_status sl_store_add_evaluation(struct sl_store *store,
     sl_bind_whole(statement, "vintage", evaluation->vintage);
     sl_bind_text(statement, "version", evaluation->version);
     sl_bind_text(statement, "rule", evaluation->rule);
+    sl_bind_whole(statement, "year", evaluation->year);
     status = sl_statement_run(statement, error);
     if (!status)
         evaluation->evaluation = sqlite3_last_insert_rowid(store->database);

@@ -23,6 +23,8 @@ static const enum sl_query add_queries[SL_KIND_COUNT] = {
     [SL_KIND_PIPE] = SL_QUERY_ADD_PIPE,
     [SL_KIND_FITTING] = SL_QUERY_ADD_FITTING,
     [SL_KIND_PUMP] = SL_QUERY_ADD_PUMP,
+    [SL_KIND_CONDITION] = SL_QUERY_ADD_CONDITION,
+    [SL_KIND_RULE] = SL_QUERY_ADD_MARGIN_RULE,
 };
 
 static enum sl_status bind_word(const struct sl_keeping *keeping,

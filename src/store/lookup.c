@@ -59,6 +59,8 @@ enum sl_status sl_store_look_up(struct sl_store *store, long long vintage,
         [SL_KIND_CURVE] = {SL_QUERY_FIND_CURVE, "point"},
         [SL_KIND_PIPE] = {SL_QUERY_FIND_PIPE, "pipe"},
         [SL_KIND_PUMP] = {SL_QUERY_FIND_PUMP, "pump"},
+        [SL_KIND_CONDITION] = {SL_QUERY_FIND_CONDITION, "owner_condition"},
+        [SL_KIND_RULE] = {SL_QUERY_FIND_MARGIN_RULE, "owner_margin_rule"},
     };
     struct sl_statement *statement = NULL;
     enum sl_status status = SL_OK;

@@ -2,6 +2,7 @@
 #include <string.h>
 
 #include "base/text.h"
+#include "store/rules.h"
 #include "store/statement.h"
 #include "store/store.h"
 
@@ -14,9 +15,7 @@ struct sl_table_reader {
 static const char *copied(const struct sl_table_reader *reader,
                           struct sl_statement *row, const char *name)
 {
-    const char *copy = sl_read_copy(row, name, reader->arena);
-
-    return copy ? copy : "";
+    return sl_read_filled(row, name, reader->arena);
 }
 
 static struct sl_interval interval_of(struct sl_statement *row)
@@ -82,37 +81,33 @@ static void read_default(const struct sl_table_reader *reader,
     value->trust = trust_of(row);
 }
 
-static void read_rule(const struct sl_table_reader *reader,
-                      struct sl_statement *row, void *item)
+static void read_ageing(const struct sl_table_reader *reader,
+                        struct sl_statement *row, void *item)
 {
-    struct sl_margin_rule *rule = item;
+    struct sl_ageing *ageing = item;
+    const char *condition = sl_read_text(row, "condition");
+    const struct sl_vocabularies fixed = sl_fixed_vocabularies();
 
-    rule->rule = copied(reader, row, "rule");
-    rule->ratio = sl_read_number(row, "ratio");
-    rule->floor = sl_read_number(row, "floor");
-    rule->edition = copied(reader, row, "edition");
-    rule->source = copied(reader, row, "source");
-    rule->trust = trust_of(row);
+    ageing->material = copied(reader, row, "material");
+    ageing->condition = sl_word_find(&fixed.of[SL_WORDS_CONDITION], condition,
+                                     strlen(condition));
+    ageing->rate = interval_of(row);
+    ageing->source = copied(reader, row, "source");
+    ageing->trust = trust_of(row);
 }
 
-static enum sl_level_basis basis_of(struct sl_statement *row, const char *name)
+static void read_limit(const struct sl_table_reader *reader,
+                       struct sl_statement *row, void *item)
 {
-    return sl_same(sl_read_text(row, name), "low") ? SL_LEVEL_LOW
-                                                   : SL_LEVEL_NORMAL;
-}
+    struct sl_check_limit *limit = item;
 
-static void read_condition(const struct sl_table_reader *reader,
-                           struct sl_statement *row, void *item)
-{
-    struct sl_condition *condition = item;
-
-    condition->condition = copied(reader, row, "condition");
-    condition->level = basis_of(row, "level");
-    condition->discharge = basis_of(row, "discharge");
-    condition->pressure = basis_of(row, "pressure");
-    condition->summer_temperature =
-        sl_read_whole(row, "summer_temperature") != 0;
-    condition->storm_barometer = sl_read_whole(row, "storm_barometer") != 0;
+    limit->check = copied(reader, row, "check_name");
+    limit->circumstance = copied(reader, row, "circumstance");
+    limit->lowest = sl_read_number(row, "lowest");
+    limit->highest = sl_read_number(row, "highest");
+    limit->quantity = sl_quantity_named(sl_read_text(row, "quantity"));
+    limit->source = copied(reader, row, "source");
+    limit->trust = trust_of(row);
 }
 
 static enum sl_status read_table(const struct sl_table_reader *reader,
@@ -164,41 +159,57 @@ static void set_vocabularies(struct sl_tables *tables, struct sl_arena *arena)
         (struct sl_words){materials, tables->roughness_count};
 }
 
-enum sl_status sl_store_read_tables(struct sl_store *store,
+static enum sl_status read_published(const struct sl_table_reader *reader,
+                                     struct sl_tables *tables)
+{
+    void *fittings = NULL, *roughness = NULL, *defaults = NULL;
+    void *ageing = NULL, *limits = NULL;
+    enum sl_status status =
+        read_table(reader, SL_QUERY_READ_FITTINGS, read_fitting,
+                   sizeof *tables->fittings, &fittings, &tables->fitting_count);
+
+    if (!status)
+        status = read_table(reader, SL_QUERY_READ_ROUGHNESS, read_roughness,
+                            sizeof *tables->roughness, &roughness,
+                            &tables->roughness_count);
+    if (!status)
+        status = read_table(reader, SL_QUERY_READ_DEFAULTS, read_default,
+                            sizeof *tables->defaults, &defaults,
+                            &tables->default_count);
+    if (!status)
+        status =
+            read_table(reader, SL_QUERY_READ_AGEING, read_ageing,
+                       sizeof *tables->ageing, &ageing, &tables->ageing_count);
+    if (!status)
+        status =
+            read_table(reader, SL_QUERY_READ_CHECK_LIMITS, read_limit,
+                       sizeof *tables->limits, &limits, &tables->limit_count);
+    tables->fittings = fittings;
+    tables->roughness = roughness;
+    tables->defaults = defaults;
+    tables->ageing = ageing;
+    tables->limits = limits;
+    return status;
+}
+
+enum sl_status sl_store_read_tables(struct sl_store *store, long long vintage,
                                     struct sl_arena *arena,
                                     struct sl_tables *tables,
                                     struct sl_error *error)
 {
     struct sl_table_reader reader = {store, arena, error};
-    void *fittings = NULL, *roughness = NULL, *defaults = NULL;
-    void *rules = NULL, *conditions = NULL;
-    enum sl_status status =
-        read_table(&reader, SL_QUERY_READ_FITTINGS, read_fitting,
-                   sizeof *tables->fittings, &fittings, &tables->fitting_count);
+    struct sl_tables read = {.year = tables->year};
+    enum sl_status status = read_published(&reader, &read);
 
     if (!status)
-        status = read_table(&reader, SL_QUERY_READ_ROUGHNESS, read_roughness,
-                            sizeof *tables->roughness, &roughness,
-                            &tables->roughness_count);
+        status = sl_read_conditions(store, vintage, arena, &read, error);
     if (!status)
-        status = read_table(&reader, SL_QUERY_READ_DEFAULTS, read_default,
-                            sizeof *tables->defaults, &defaults,
-                            &tables->default_count);
-    if (!status)
-        status = read_table(&reader, SL_QUERY_READ_MARGIN_RULES, read_rule,
-                            sizeof *tables->rules, &rules, &tables->rule_count);
-    if (!status)
-        status = read_table(&reader, SL_QUERY_READ_CONDITIONS, read_condition,
-                            sizeof *tables->conditions, &conditions,
-                            &tables->condition_count);
+        status = sl_read_rules(store, vintage, NULL, arena, &read.rules,
+                               &read.rule_count, error);
     if (status)
         return status;
-    tables->fittings = fittings;
-    tables->roughness = roughness;
-    tables->defaults = defaults;
-    tables->rules = rules;
-    tables->conditions = conditions;
-    set_vocabularies(tables, arena);
+    set_vocabularies(&read, arena);
+    *tables = read;
     store->vocabularies = &tables->vocabularies;
     return SL_OK;
 }

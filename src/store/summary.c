@@ -1,23 +1,17 @@
 /* The evaluation as a whole. */
+#include <math.h>
+
 #include "base/text.h"
 #include "store/evaluation.h"
+#include "store/rules.h"
 #include "store/statement.h"
 #include "store/vintage.h"
-
-static const char *copied(struct sl_statement *row, const char *name,
-                          struct sl_arena *arena)
-{
-    const char *copy = sl_read_copy(row, name, arena);
-
-    return copy ? copy : "";
-}
 
 static enum sl_status read_head(struct sl_store *store, struct sl_arena *arena,
                                 struct sl_summary *summary,
                                 struct sl_error *error)
 {
     struct sl_statement *statement = NULL;
-    struct sl_margin_rule *rule = &summary->rule;
     bool row = false;
     enum sl_status status =
         sl_statement_use(store, SL_QUERY_READ_EVALUATION, &statement, error);
@@ -32,15 +26,31 @@ static enum sl_status read_head(struct sl_store *store, struct sl_arena *arena,
         return sl_error_set(error, SL_BUG, "there is no evaluation %lld",
                             summary->evaluation);
     summary->vintage = sl_read_whole(statement, "vintage");
-    summary->label = copied(statement, "label", arena);
-    summary->inventory_sha256 = copied(statement, "inventory_sha256", arena);
-    rule->rule = copied(statement, "rule", arena);
-    rule->ratio = sl_read_number(statement, "ratio");
-    rule->floor = sl_read_number(statement, "floor");
-    rule->edition = copied(statement, "edition", arena);
-    rule->source = copied(statement, "source", arena);
-    rule->trust = sl_read_text(statement, "trust")[0];
+    summary->label = sl_read_filled(statement, "label", arena);
+    summary->inventory_sha256 =
+        sl_read_filled(statement, "inventory_sha256", arena);
+    summary->rule = (struct sl_margin_rule){
+        .rule = sl_read_filled(statement, "rule", arena),
+        .lift_limit = NAN,
+        .edition = "",
+        .source = ""};
     return sl_statement_end(statement, error);
+}
+
+/* A rule that was taken out of the table is known by its name alone. */
+static enum sl_status read_rule(struct sl_store *store, struct sl_arena *arena,
+                                struct sl_summary *summary,
+                                struct sl_error *error)
+{
+    struct sl_margin_rule *rules = NULL;
+    size_t count = 0;
+    enum sl_status status =
+        sl_read_rules(store, summary->vintage, summary->rule.rule, arena,
+                      &rules, &count, error);
+
+    if (!status && count)
+        summary->rule = rules[0];
+    return status;
 }
 
 static void add_counts(struct sl_statement *row, struct sl_summary *summary)
@@ -90,6 +100,8 @@ enum sl_status sl_store_read_summary(struct sl_store *store,
     };
     enum sl_status status = read_head(store, arena, &read, error);
 
+    if (!status)
+        status = read_rule(store, arena, &read, error);
     if (!status)
         status = read_counts(store, &read, error);
     if (!status)

@@ -93,6 +93,10 @@ static void units_agree_with_nist_sp_811(void **state)
         {SL_TEMPERATURE, "f", 50, 283.15, 1e-15, "degree Fahrenheit"},
         {SL_TEMPERATURE, "c", 25, 298.15, 1e-15, "degree Celsius"},
         {SL_POWER, "hp", 1, 745.6999, 1e-7, "horsepower (550 ft lbf/s)"},
+        {SL_TEMPERATURE_DIFFERENCE, "delta_f", 9, 5, 1e-15,
+         "degree Fahrenheit, temperature interval"},
+        {SL_TEMPERATURE_DIFFERENCE, "delta_c", 2.5, 2.5, 0,
+         "degree Celsius, temperature interval"},
         {SL_VELOCITY, "ft_s", 1, 0.3048, 0, "foot per second, exact"},
     };
 
@@ -120,7 +124,7 @@ static void a_unit_of_another_quantity_is_no_unit(void **state)
 static void each_quantity_names_each_of_its_units(void **state)
 {
     (void)state;
-    for (int q = SL_LENGTH; q <= SL_VELOCITY; q++) {
+    for (int q = SL_LENGTH; q <= SL_TEMPERATURE_DIFFERENCE; q++) {
         char choices[128];
         char *rest = NULL;
         int count = 0;

@@ -135,8 +135,9 @@ static inline struct sl_station_row unknown_station(void)
 static inline struct sl_summary summary_of(const struct sl_condition *condition)
 {
     static const char *const files[SL_KIND_COUNT] = {
-        "stations.csv", "curves.csv", "suction_pipes.csv",
-        "suction_fittings.csv", "pumps.csv"};
+        "stations.csv",         "curves.csv", "suction_pipes.csv",
+        "suction_fittings.csv", "pumps.csv",  "conditions.csv",
+        "margin_rules.csv"};
     struct sl_summary summary = {
         .label = "2026",
         .inventory_sha256 = "3f9a1c07be52d8844f60aa1be7c35d9210c4e6f8a7b3d592e1"
@@ -147,7 +148,11 @@ static inline struct sl_summary summary_of(const struct sl_condition *condition)
         .stations_by_state = {2, 3, 4, 6},
         .pumps_by_state = {5, 7, 9, 24},
         .stations_without_pumps = 1,
-        .rule = {.rule = "fixed head", .floor = 1.5, .trust = 'N'},
+        .rule = {.rule = "fixed head",
+                 .tiers = {{NAN, 1, 1.5}},
+                 .tier_count = 1,
+                 .lift_limit = NAN,
+                 .trust = 'N'},
         .conditions = condition,
         .condition_count = condition ? 1 : 0,
     };

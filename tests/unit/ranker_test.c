@@ -404,7 +404,8 @@ static void test_case_in_words(void **state)
 static void check_rule(double ratio, double floor, enum sl_unit_system units,
                        const char *want)
 {
-    struct sl_margin_rule rule = {.ratio = ratio, .floor = floor};
+    struct sl_margin_rule rule = {
+        .tiers = {{NAN, ratio, floor}}, .tier_count = 1, .lift_limit = NAN};
     struct sl_text text = {0};
 
     sl_words_rule(&rule, units, &text);
@@ -421,9 +422,104 @@ static void test_rule_in_words(void **state)
     check_rule(1.35, 1.5, SL_SI,
                "NPSHA at least 1.35 × NPSHR, and at least NPSHR + 1.5 m");
     check_rule(1, 0, SL_SI, "NPSHA at least NPSHR, no margin asked");
+    check_string("trust", sl_words_trust('O'), "the owner's own");
     check_string("trust", sl_words_trust('N'), "common practice, no source");
     check_string("trust", sl_words_trust('M'), "from memory, check the source");
     check_string("trust", sl_words_trust('?'), "trust not stated");
+}
+
+static void check_whole_rule(const struct sl_margin_rule *rule,
+                             enum sl_unit_system units, const char *want)
+{
+    struct sl_text text = {0};
+
+    sl_words_rule(rule, units, &text);
+    check_string("rule", sl_text_string(&text), want);
+    sl_text_release(&text);
+}
+
+static void test_rule_with_tiers_in_words(void **state)
+{
+    struct sl_margin_rule rule = {
+        .measure = SL_MEASURE_SUCTION_ENERGY,
+        .tiers = {{NAN, 1.1, 0.6}, {1, 1.3, 1.5}, {1.5, 2, 1.5}},
+        .tier_count = 3,
+        .lift_limit = NAN};
+
+    (void)state;
+    check_whole_rule(
+        &rule, SL_SI,
+        "NPSHA at least 1.10 × NPSHR, and at least NPSHR + 0.6 m; where "
+        "suction energy is over 1 times the start of high, 1.30 × NPSHR, and "
+        "at least NPSHR + 1.5 m; where suction energy is over 1.5 times the "
+        "start of high, 2.00 × NPSHR, and at least NPSHR + 1.5 m");
+    rule.measure = SL_MEASURE_SUCTION_SPECIFIC_SPEED;
+    rule.tiers[1] = (struct sl_margin_tier){7500, 1.2, 0};
+    rule.tier_count = 2;
+    check_whole_rule(
+        &rule, SL_SI,
+        "NPSHA at least 1.10 × NPSHR, and at least NPSHR + 0.6 m; where "
+        "suction specific speed is over 7500 in US units, 1.20 × NPSHR");
+    rule.measure = SL_MEASURE_SUCTION_LIFT;
+    rule.tiers[0] = (struct sl_margin_tier){NAN, 1, 0};
+    rule.tiers[1] = (struct sl_margin_tier){0, 1, 1.83};
+    check_whole_rule(&rule, SL_US,
+                     "NPSHA at least NPSHR, no margin asked; where there is "
+                     "a suction lift, NPSHR + 6.0 ft");
+    rule.tiers[1].over = 3.048;
+    check_whole_rule(&rule, SL_US,
+                     "NPSHA at least NPSHR, no margin asked; where there is "
+                     "a suction lift over 10.0 ft, NPSHR + 6.0 ft");
+    rule.tier_count = 1;
+    rule.make_up = SL_SELF_PRIMING;
+    rule.lift_limit = 6.7;
+    check_whole_rule(&rule, SL_SI,
+                     "for self-priming pumps alone: NPSHA at least NPSHR, no "
+                     "margin asked; suction lift with its losses and NPSHR "
+                     "together at most 6.7 m");
+    rule.tier_count = 0;
+    check_whole_rule(&rule, SL_SI, "a rule that the store no longer holds");
+}
+
+static void check_condition(const struct sl_condition *condition,
+                            enum sl_unit_system units, const char *want)
+{
+    struct sl_text text = {0};
+
+    sl_words_condition(condition, units, &text);
+    check_string("condition", sl_text_string(&text), want);
+    sl_text_release(&text);
+}
+
+static void test_condition_in_words(void **state)
+{
+    struct sl_condition condition = {
+        .level = SL_LEVEL_RECORD_LOW,
+        .level_addition = -0.4572,
+        .discharge = SL_LEVEL_NORMAL,
+        .pressure = SL_LEVEL_LOW,
+        .summer_temperature = 1,
+        .temperature_addition = 2.5,
+        .suction_friction = SL_FRICTION_AGED,
+        .discharge_friction = SL_FRICTION_NEW,
+    };
+
+    (void)state;
+    check_condition(&condition, SL_US,
+                    "source at its lowest recorded level - 1.5 ft, mains at "
+                    "their lowest pressure, discharge at its normal level, "
+                    "water at its summer temperature + 4.5 °F, standard "
+                    "barometer, suction pipes at their age, discharge pipes "
+                    "as laid");
+    condition.level = SL_LEVEL_CUT_OUT;
+    condition.level_addition = 0;
+    condition.storm_barometer = 1;
+    condition.suction_friction = SL_FRICTION_NEW;
+    check_condition(&condition, SL_SI,
+                    "source at its cut-out level, mains at their lowest "
+                    "pressure, discharge at its normal level, water at its "
+                    "summer temperature + 2.5 K, storm barometer, suction "
+                    "pipes as laid, discharge pipes as laid");
 }
 
 static void test_every_state_says_what_it_means(void **state)
@@ -644,7 +740,15 @@ static void test_ranked_stations_golden(void **state)
 /* --- the page ------------------------------------------------------------ */
 
 static const struct sl_condition summer_low = {
-    "summer low", SL_LEVEL_LOW, SL_LEVEL_LOW, SL_LEVEL_LOW, 1, 1};
+    .condition = "summer low",
+    .level = SL_LEVEL_LOW,
+    .discharge = SL_LEVEL_LOW,
+    .pressure = SL_LEVEL_LOW,
+    .summer_temperature = 1,
+    .storm_barometer = 1,
+    .suction_friction = SL_FRICTION_AGED,
+    .discharge_friction = SL_FRICTION_NEW,
+};
 
 /* A page of these stations, and of hostile rows when there are any. */
 static void write_page(struct capture *capture,
@@ -810,8 +914,8 @@ static void test_a_page_tells_the_audit(void **state)
         strstr(page, "<b>2</b> stations <span class=\"state short"));
     assert_non_null(
         strstr(page, "<b>6</b> stations <span class=\"state clear"));
-    assert_non_null(strstr(page, "6\u202F210 read = 6\u202F165 kept + 30 "
-                                 "rejected + 15 out of scope"));
+    assert_non_null(strstr(page, "8\u202F701 read = 8\u202F638 kept + 42 "
+                                 "rejected + 21 out of scope"));
     assert_non_null(strstr(page, ">3f9a1c07be52</code>"));
     assert_int_equal(occurrences(page, "3f9a1c07be52d8844f60aa1be7c35d9210c4e6"
                                        "f8a7b3d592e1f06c8d4b7a9350"),
@@ -889,6 +993,8 @@ int main(void)
         cmocka_unit_test(test_confidence),
         cmocka_unit_test(test_case_in_words),
         cmocka_unit_test(test_rule_in_words),
+        cmocka_unit_test(test_rule_with_tiers_in_words),
+        cmocka_unit_test(test_condition_in_words),
         cmocka_unit_test(test_every_state_says_what_it_means),
         cmocka_unit_test(test_text_cells),
         cmocka_unit_test(test_number_cells),

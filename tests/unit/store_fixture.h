@@ -59,7 +59,8 @@ static inline int fixture_vintage(void **state)
         return -1;
     f = *state;
     must(f, sl_store_open(f->path, SL_STORE_CREATE, &f->store, &f->error));
-    must(f, sl_store_read_tables(f->store, &f->arena, &f->tables, &f->error));
+    must(f,
+         sl_store_read_tables(f->store, 0, &f->arena, &f->tables, &f->error));
     must(f, sl_store_begin(f->store, &f->error));
     must(f, sl_store_add_vintage(f->store, &vintage, &f->error));
     f->vintage = vintage.vintage;

@@ -22,7 +22,8 @@ struct evaluated {
 
 static struct evaluated begin(struct fixture *f)
 {
-    struct sl_evaluation evaluation = {0, f->vintage, "0.1", "fixed head"};
+    struct sl_evaluation evaluation = {0, f->vintage, "0.1", "fixed head",
+                                       2026};
 
     must(f, sl_store_add_evaluation(f->store, &evaluation, &f->error));
     return (struct evaluated){f, evaluation.evaluation};
@@ -184,8 +185,8 @@ static void evaluations_do_not_mix(void **state)
 {
     struct fixture *f = *state;
     struct evaluated e = begin(f);
-    struct sl_evaluation other = {0, f->vintage, "0.2", "fixed head"};
-    struct sl_evaluation got = {0, f->vintage, NULL, NULL};
+    struct sl_evaluation other = {0, f->vintage, "0.2", "fixed head", 2026};
+    struct sl_evaluation got = {0, f->vintage, NULL, NULL, 0};
     bool found = false;
 
     file_one(&e, "A", SL_SHORT, SL_SHORT, -1, -1, 5);
@@ -198,6 +199,12 @@ static void evaluations_do_not_mix(void **state)
     assert_string_equal(got.version, "0.2");
     assert_string_equal(got.rule, "fixed head");
     got.version = "0.1";
+    must(f, sl_store_find_evaluation(f->store, &got, &found, &f->error));
+    assert_int_equal(got.evaluation, e.evaluation);
+    got.year = 2027;
+    must(f, sl_store_find_evaluation(f->store, &got, &found, &f->error));
+    assert_false(found);
+    got.year = 2026;
     must(f, sl_store_find_evaluation(f->store, &got, &found, &f->error));
     assert_int_equal(got.evaluation, e.evaluation);
     got.rule = "another";
@@ -503,6 +510,17 @@ static void an_unknown_says_what_it_rests_on(void **state)
     sl_text_release(&text);
 }
 
+static const struct sl_default *
+default_of(const struct fixture *f, const char *field, const char *circumstance)
+{
+    for (size_t i = 0; i < f->tables.default_count; i++)
+        if (sl_same(f->tables.defaults[i].field, field) &&
+            sl_same(f->tables.defaults[i].circumstance, circumstance))
+            return &f->tables.defaults[i];
+    fail_msg("no default for %s, \"%s\"", field, circumstance);
+    return NULL;
+}
+
 static enum sl_status count_uses(void *context,
                                  const struct sl_default_row *row,
                                  struct sl_error *error)
@@ -539,7 +557,8 @@ static void every_use_of_a_default_is_counted(void **state)
         for (int c = 0; c < 2; c++)
             for (int p = 0; p < 2; p++)
                 made.results[c][p].inputs[SL_IN_BAROMETER].row = barometer;
-        made.results[1][0].inputs[SL_IN_GAS].row = &f->tables.defaults[4];
+        made.results[1][0].inputs[SL_IN_GAS].row =
+            default_of(f, "gas_allowance", "wastewater");
         file(&e, &made);
         if (i == 0)
             assert_uses(&e, "barometer_fall/ 4;gas_allowance/wastewater 1;");
@@ -558,7 +577,8 @@ static void uses_are_rolled_back_too(void **state)
     must(f, sl_store_commit(f->store, &f->error));
     must(f, sl_store_begin(f->store, &f->error));
     make(&e, &made, "A", 10, 1);
-    made.results[1][0].inputs[SL_IN_GAS].row = &f->tables.defaults[4];
+    made.results[1][0].inputs[SL_IN_GAS].row =
+        default_of(f, "gas_allowance", "wastewater");
     file(&e, &made);
     sl_store_rollback(f->store);
     must(f, sl_store_begin(f->store, &f->error));
@@ -604,7 +624,7 @@ static void the_summary_adds_up(void **state)
     assert_int_equal(summary.pumps_by_state[SL_CLEAR], 3);
     assert_int_equal(summary.stations_without_pumps, 1);
     assert_string_equal(summary.rule.rule, "fixed head");
-    assert_true(summary.rule.floor == 1.5);
+    assert_true(summary.rule.tiers[0].floor == 1.5);
     assert_int_equal(summary.sums[SL_KIND_PUMP].kept, 11);
     assert_int_equal(
         sl_store_read_summary(f->store, 99, &f->arena, &summary, &f->error),

@@ -52,7 +52,7 @@ static void fresh_store_is_marked_ours(void **state)
 
     open_and_close(f, SL_STORE_CREATE);
     assert_int_equal(file_says(f, "PRAGMA application_id"), 0x736C7731);
-    assert_int_equal(file_says(f, "PRAGMA user_version"), 3);
+    assert_int_equal(file_says(f, "PRAGMA user_version"), 7);
     assert_int_equal(file_says(f, "SELECT count(*) FROM fitting_k"), 26);
     assert_int_equal(file_says(f, "SELECT count(*) FROM roughness"), 17);
     assert_int_equal(file_says(f, "SELECT count(*) FROM sqlite_schema "
@@ -94,9 +94,9 @@ static void newer_store_is_refused(void **state)
     struct fixture *f = *state;
 
     open_and_close(f, SL_STORE_CREATE);
-    file_does(f, "PRAGMA user_version = 4");
+    file_does(f, "PRAGMA user_version = 8");
     assert_refused_untouched(f, SL_STORE_CREATE,
-                             "is of version 4, this program knows 3; use the "
+                             "is of version 8, this program knows 7; use the "
                              "newer program");
     assert_refused_untouched(f, SL_STORE_READ, "use the newer program");
 }
@@ -116,8 +116,8 @@ static void older_store_is_not_read(void **state)
     struct fixture *f = *state;
 
     open_and_close(f, SL_STORE_CREATE);
-    file_does(f, "PRAGMA user_version = 2");
-    assert_refused_untouched(f, SL_STORE_READ, "is of version 2");
+    file_does(f, "PRAGMA user_version = 6");
+    assert_refused_untouched(f, SL_STORE_READ, "is of version 6");
 }
 
 static void other_database_is_refused(void **state)
@@ -262,7 +262,7 @@ static void every_table_is_strict(void **state)
     assert_int_equal(file_says(f, "SELECT count(*) FROM pragma_table_list "
                                   "WHERE schema = 'main' AND type = 'table' "
                                   "AND name NOT LIKE 'sqlite_%'"),
-                     21);
+                     26);
     assert_int_equal(file_says(f, "SELECT count(*) FROM pragma_table_list "
                                   "WHERE schema = 'main' AND type = 'table' "
                                   "AND name NOT LIKE 'sqlite_%' "
@@ -270,7 +270,8 @@ static void every_table_is_strict(void **state)
                      0);
 }
 
-/* The rest of the schema text after the definition of a column begins. */
+/* The rest of the schema text after the definition of a column begins; one
+ * that was added to its table later stands behind a comma. */
 static const char *definition_of(const char *sql, const char *column)
 {
     char start[80] = "";
@@ -278,14 +279,25 @@ static const char *definition_of(const char *sql, const char *column)
 
     snprintf(start, sizeof start, "\n    %s ", column);
     at = strstr(sql, start);
+    if (!at) {
+        snprintf(start, sizeof start, ", %s ", column);
+        at = strstr(sql, start);
+    }
     return at ? at + 1 : NULL;
 }
 
-/* A "--" before the next line that defines something else. */
+/* A "--" before the next line that defines something else; the one on the
+ * line of a column added later belongs to the column before, its own stands
+ * between it and the next comma. */
 static bool is_commented(const char *definition)
 {
     const char *end = definition;
 
+    if (definition[1] != ' ') {
+        const char *inner = strstr(definition, "/*");
+
+        return inner && inner < strchr(definition, ',');
+    }
     do {
         end = strchr(end, '\n');
         if (!end)
@@ -337,7 +349,7 @@ static void every_table_and_column_has_a_comment(void **state)
     for (; sqlite3_step(asked) == SQLITE_ROW; tables++)
         assert_commented(database, (const char *)sqlite3_column_text(asked, 0),
                          (const char *)sqlite3_column_text(asked, 1));
-    assert_int_equal(tables, 21);
+    assert_int_equal(tables, 26);
     sqlite3_finalize(asked);
     sqlite3_close(database);
 }
@@ -462,7 +474,6 @@ static void published_tables_are_read(void **state)
     assert_int_equal(t->fitting_count, 26);
     assert_int_equal(t->roughness_count, 17);
     assert_int_equal(t->condition_count, 2);
-    assert_int_equal(t->rule_count, 1);
     assert_int_equal(elbow, 6);
     assert_true(t->fittings[elbow - 1].k.typical == 0.18);
     assert_true(t->fittings[elbow - 1].k.adverse == 0.33);
@@ -475,8 +486,125 @@ static void published_tables_are_read(void **state)
     assert_int_equal(t->conditions[0].pressure, SL_LEVEL_NORMAL);
     assert_true(t->conditions[1].storm_barometer);
     assert_false(t->conditions[0].summer_temperature);
-    assert_true(t->rules[0].floor == 1.5);
-    assert_int_equal(t->rules[0].trust, 'N');
+    assert_int_equal(t->conditions[0].suction_friction, SL_FRICTION_AGED);
+    assert_int_equal(t->conditions[0].discharge_friction, SL_FRICTION_AGED);
+    assert_int_equal(t->conditions[1].suction_friction, SL_FRICTION_AGED);
+    assert_int_equal(t->conditions[1].discharge_friction, SL_FRICTION_NEW);
+    assert_true(t->conditions[1].level_addition == 0);
+    assert_true(t->conditions[1].temperature_addition == 0);
+}
+
+static void assert_tier(const struct sl_margin_rule *rule, size_t tier,
+                        double over, double ratio, double floor)
+{
+    assert_true(tier < rule->tier_count);
+    check_close(rule->rule, rule->tiers[tier].over, over, 0, 0);
+    check_close(rule->rule, rule->tiers[tier].ratio, ratio, 0, 0);
+    check_close(rule->rule, rule->tiers[tier].floor, floor, 0, 0);
+}
+
+/* In the order shown: the first is ranked on. */
+static void published_rules_are_read_by_tier(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_margin_rule *r = f->tables.rules;
+
+    assert_int_equal(f->tables.rule_count, 6);
+    assert_string_equal(r[0].rule, "fixed head");
+    assert_int_equal(r[0].tier_count, 1);
+    assert_true(isnan(r[0].tiers[0].over));
+    assert_true(r[0].tiers[0].ratio == 1 && r[0].tiers[0].floor == 1.5);
+    assert_int_equal(r[0].trust, 'N');
+    assert_int_equal(r[0].measure, SL_MEASURE_NONE);
+    assert_true(isnan(r[0].lift_limit));
+    assert_string_equal(r[1].rule, "ANSI/HI 9.6.1-1998");
+    assert_int_equal(r[1].measure, SL_MEASURE_SUCTION_ENERGY);
+    assert_int_equal(r[1].tier_count, 3);
+    assert_true(isnan(r[1].tiers[0].over));
+    assert_true(r[1].tiers[0].ratio == 1.1 && r[1].tiers[0].floor == 0.6);
+    assert_tier(&r[1], 1, 1, 1.3, 1.5);
+    assert_tier(&r[1], 2, 1.5, 2, 1.5);
+    assert_int_equal(r[2].measure, SL_MEASURE_SUCTION_SPECIFIC_SPEED);
+    assert_tier(&r[2], 1, 7500, 1.2, 1);
+    assert_int_equal(r[3].measure, SL_MEASURE_SUCTION_LIFT);
+    assert_true(r[3].tiers[0].floor == 0);
+    assert_tier(&r[3], 1, 0, 1, 1.83);
+    assert_int_equal(r[3].make_up, 0);
+    assert_int_equal(r[4].make_up, SL_SELF_PRIMING);
+    assert_true(r[4].lift_limit == 6.7);
+    assert_int_equal(r[5].tier_count, 1);
+    assert_true(r[5].tiers[0].ratio == 1.1 && r[5].tiers[0].floor == 0.5);
+}
+
+static const struct sl_ageing *rate_of(const struct sl_tables *t,
+                                       const char *material, int condition)
+{
+    for (size_t i = 0; i < t->ageing_count; i++)
+        if (strcmp(t->ageing[i].material, material) == 0 &&
+            t->ageing[i].condition == condition)
+            return &t->ageing[i];
+    return NULL;
+}
+
+/* Every material has a rate where its condition is not recorded, and the
+ * fastest end is no slower than the slowest. */
+static void every_material_has_a_rate_of_ageing(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_tables *t = &f->tables;
+    const struct sl_ageing *poor = rate_of(t, "uncoated cast iron", SL_POOR);
+
+    for (size_t i = 0; i < t->roughness_count; i++)
+        if (!rate_of(t, t->roughness[i].material, 0))
+            fail_msg("%s has no rate", t->roughness[i].material);
+    for (size_t i = 0; i < t->ageing_count; i++) {
+        assert_true(t->ageing[i].rate.favourable <= t->ageing[i].rate.typical);
+        assert_true(t->ageing[i].rate.typical <= t->ageing[i].rate.adverse);
+        assert_true(strchr("MP", t->ageing[i].trust) != NULL);
+    }
+    assert_int_equal(t->ageing_count, 26);
+    assert_non_null(poor);
+    check_close("poor cast iron", poor->rate.typical, 0.25e-3, 0, 0);
+    check_close("poor cast iron at worst", poor->rate.adverse, 0.76e-3, 0, 0);
+    assert_int_equal(poor->trust, 'M');
+    assert_true(rate_of(t, "GRP", 0)->rate.adverse == 0);
+    assert_true(rate_of(t, "galvanised iron", 0)->rate.adverse == 0.025e-3);
+}
+
+static const struct sl_check_limit *
+limit_of(const struct sl_tables *t, const char *check, const char *circumstance)
+{
+    for (size_t i = 0; i < t->limit_count; i++)
+        if (strcmp(t->limits[i].check, check) == 0 &&
+            strcmp(t->limits[i].circumstance, circumstance) == 0)
+            return &t->limits[i];
+    fail_msg("no limit of %s, \"%s\"", check, circumstance);
+    return NULL;
+}
+
+static void limits_of_the_checks_are_read(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_tables *t = &f->tables;
+    const struct sl_check_limit *sewage =
+        limit_of(t, "suction velocity", "wastewater");
+    const struct sl_check_limit *any = limit_of(t, "suction velocity", "");
+
+    assert_int_equal(t->limit_count, 14);
+    assert_true(sewage->lowest == 0.9 && sewage->highest == 2.1);
+    assert_int_equal(sewage->quantity, SL_VELOCITY);
+    assert_int_equal(sewage->trust, 'S');
+    assert_true(isnan(any->lowest) && any->highest == 2.4);
+    assert_int_equal(any->trust, 'M');
+    check_close("booster",
+                limit_of(t, "suction pressure of a booster", "")->lowest,
+                35 * 6894.757293168362, 1e-5, 0);
+    assert_true(limit_of(t, "suction energy", "submersible")->highest == 100e6);
+    for (size_t i = 0; i < t->limit_count; i++) {
+        assert_false(isnan(t->limits[i].lowest) && isnan(t->limits[i].highest));
+        assert_false(t->limits[i].lowest > t->limits[i].highest);
+        assert_true(strlen(t->limits[i].source) > 10);
+    }
 }
 
 /* Common practice, no source: a rounded entrance has K 0.25. */
@@ -596,6 +724,9 @@ int main(void)
         IN_FOLDER(a_reading_store_cannot_be_written),
         IN_VINTAGE(the_same_content_twice_is_our_bug),
         IN_VINTAGE(published_tables_are_read),
+        IN_VINTAGE(published_rules_are_read_by_tier),
+        IN_VINTAGE(every_material_has_a_rate_of_ageing),
+        IN_VINTAGE(limits_of_the_checks_are_read),
         IN_VINTAGE(a_rounded_entrance_has_a_k_of_a_quarter),
         IN_VINTAGE(published_intervals_hold_together),
         IN_FOLDER(the_schema_is_documented),
