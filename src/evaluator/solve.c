@@ -201,8 +201,8 @@ static void solve_at(const struct sl_plan *plan, const struct sl_ends *ends,
     solved->flow = flow_of(&setting, notes);
     balance(&setting, solved->flow, &solved->terms);
     solved->npshr = npshr_at(&setting, solved->flow, notes);
-    solved->required =
-        sl_required_npsha(solved->npshr, plan->rule->ratio, plan->rule->floor);
+    solved->required = sl_required_npsha(
+        solved->npshr, plan->rule->tiers[0].ratio, plan->rule->tiers[0].floor);
     solved->margin = solved->terms.npsha - solved->npshr;
     solved->surplus = solved->terms.npsha - solved->required;
 }

@@ -76,10 +76,13 @@ static struct sl_default defaults[] = {
 };
 
 static struct sl_condition conditions[] = {
-    [CONDITION_NORMAL] = {"normal", SL_LEVEL_NORMAL, SL_LEVEL_NORMAL,
-                          SL_LEVEL_NORMAL, 0, 0},
-    [CONDITION_SUMMER] = {"summer low", SL_LEVEL_LOW, SL_LEVEL_LOW,
-                          SL_LEVEL_LOW, 1, 1},
+    [CONDITION_NORMAL] = {.condition = "normal"},
+    [CONDITION_SUMMER] = {.condition = "summer low",
+                          .level = SL_LEVEL_LOW,
+                          .discharge = SL_LEVEL_LOW,
+                          .pressure = SL_LEVEL_LOW,
+                          .summer_temperature = 1,
+                          .storm_barometer = 1},
 };
 
 /* The complete station's figures. */
@@ -171,7 +174,13 @@ static inline void fixture_make(struct fixture *f)
     static const char *const pump_ids[PUMPS] = {"A", "B", "C"};
     static const char *const pipe_ids[PIPES] = {"SA", "SB", "SC", "SD"};
 
-    *f = (struct fixture){.rule = {"fixed head", 1, 1.5, "", "test", 'N'}};
+    *f = (struct fixture){.rule = {.rule = "fixed head",
+                                   .tiers = {{NAN, 1, 1.5}},
+                                   .tier_count = 1,
+                                   .lift_limit = NAN,
+                                   .edition = "",
+                                   .source = "test",
+                                   .trust = 'N'}};
     f->tables = (struct sl_tables){
         .fittings = fitting_k,
         .fitting_count = COUNT(fitting_k),

@@ -101,12 +101,12 @@ static void rule_with_a_ratio_asks_the_greater(void **state)
     struct fixture *f = *state;
     const struct sl_case *typical;
 
-    f->rule.ratio = 1.73;
-    f->rule.floor = 0.61;
+    f->rule.tiers[0].ratio = 1.73;
+    f->rule.tiers[0].floor = 0.61;
     typical = &summer(f)->cases[SL_TYPICAL];
     check_close("ratio rules", typical->required, 1.73 * typical->npshr, 1e-12,
                 0);
-    f->rule.floor = 2.31;
+    f->rule.tiers[0].floor = 2.31;
     typical = &summer(f)->cases[SL_TYPICAL];
     check_close("floor rules", typical->required, typical->npshr + 2.31, 1e-12,
                 0);
@@ -143,7 +143,7 @@ static void state_is_drawn_from_the_corners(void **state)
 
         fixture_make(&f);
         f.dossier.record.service = rows[i].service;
-        f.rule.floor = rows[i].floor;
+        f.rule.tiers[0].floor = rows[i].floor;
         leave_surplus(&f, rows[i].surplus);
         check_state(rows[i].says, summer(&f), rows[i].want, rows[i].likely);
         assert_int_equal(f.result.worst->reason[0] != '\0',
