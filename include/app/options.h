@@ -26,6 +26,8 @@ struct sl_options {
     const char *store;
     const char *out;
     const char *label;
+    const char *rule; /* the margin rule to judge by; NULL: the first */
+    int year;         /* of the audit; 0: that of the import */
     enum sl_unit_system units;
     bool dry_run;
 };

@@ -24,12 +24,16 @@ struct sl_run {
 /* Open the store at `path` and read the published tables. */
 enum sl_status sl_run_open(struct sl_run *run, const char *path,
                            enum sl_store_mode mode, struct sl_error *error);
-/* The newest vintage, and (where `evaluated`) its newest evaluation. */
+/* The tables as they hold for the run's vintage, and the year of the audit:
+ * the one asked for, else that of the import. */
+enum sl_status sl_run_use_vintage(struct sl_run *run, struct sl_error *error);
+/* The newest vintage with its tables, and (where `evaluated`) its newest
+ * evaluation, by the rule and of the year asked for if any. */
 enum sl_status sl_run_find_newest(struct sl_run *run, bool evaluated,
                                   struct sl_error *error);
-/* The rule the lists are ranked on: the first of the table, which must not
- * be empty. */
-enum sl_status sl_run_find_rule(const struct sl_run *run,
+/* The rule of that name, or, with NULL, the first of the table; SL_REFUSED
+ * with the names there are when it is none of them. */
+enum sl_status sl_run_find_rule(const struct sl_run *run, const char *name,
                                 const struct sl_margin_rule **rule,
                                 struct sl_error *error);
 void sl_run_close(struct sl_run *run);

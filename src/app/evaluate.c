@@ -53,14 +53,16 @@ static enum sl_status evaluate_all(struct sl_run *run,
 enum sl_status sl_run_evaluate(struct sl_run *run, struct sl_error *error)
 {
     const struct sl_margin_rule *rule;
-    enum sl_status status = sl_run_find_rule(run, &rule, error);
+    enum sl_status status =
+        sl_run_find_rule(run, run->options->rule, &rule, error);
     bool found = false;
 
     if (status)
         return status;
     run->evaluation = (struct sl_evaluation){.vintage = run->vintage.vintage,
                                              .version = SL_VERSION,
-                                             .rule = rule->rule};
+                                             .rule = rule->rule,
+                                             .year = run->tables.year};
     status =
         sl_store_find_evaluation(run->store, &run->evaluation, &found, error);
     if (status || found)

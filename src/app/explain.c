@@ -22,6 +22,26 @@ static void print_pump(struct sl_run *run, const struct sl_margin_rule *rule,
          "licensed\nengineer decide.");
 }
 
+/* By the rule and in the year of the newest evaluation, which is what was
+ * ranked, unless the options say otherwise. */
+static enum sl_status choose(struct sl_run *run,
+                             const struct sl_margin_rule **rule,
+                             struct sl_error *error)
+{
+    struct sl_evaluation newest = {.vintage = run->vintage.vintage,
+                                   .rule = run->options->rule,
+                                   .year = run->options->year};
+    bool found = false;
+    enum sl_status status =
+        sl_store_find_evaluation(run->store, &newest, &found, error);
+
+    if (status)
+        return status;
+    if (found)
+        run->tables.year = newest.year;
+    return sl_run_find_rule(run, newest.rule, rule, error);
+}
+
 enum sl_status sl_command_explain(struct sl_run *run, struct sl_error *error)
 {
     const char *wanted = run->options->subject;
@@ -35,7 +55,7 @@ enum sl_status sl_command_explain(struct sl_run *run, struct sl_error *error)
     if (!status)
         status = sl_run_find_newest(run, false, error);
     if (!status)
-        status = sl_run_find_rule(run, &rule, error);
+        status = choose(run, &rule, error);
     if (!status)
         status =
             sl_store_dossier_of_pump(run->store, run->vintage.vintage, wanted,

@@ -41,6 +41,10 @@ static const char audit[] =
     "  --units si|us  units of the results (default si)\n"
     "  --store FILE   keep the store here instead of DIR/summerlow.db\n"
     "  --label TEXT   name of this vintage (default: the folder's name)\n"
+    "  --rule NAME    the margin rule to judge by (default: the first,\n"
+    "                 fixed head)\n"
+    "  --year YYYY    the year pipes are aged to (default: that of the "
+    "import)\n"
     "\n"
     "Examples:\n"
     "  summerlow audit sample-inventory --out build/demo\n"
@@ -63,12 +67,21 @@ static const char import[] =
     "  summerlow import export-2026 --store audit.db --label 2026\n" EXIT_CODES;
 
 static const char evaluate[] =
-    "Usage: summerlow evaluate --store FILE\n"
+    "Usage: summerlow evaluate --store FILE [options]\n"
     "\n"
-    "Works out the margins of every pump of the newest vintage.\n"
+    "Works out the margins of every pump of the newest vintage, under the\n"
+    "inventory's own conditions where it has any, else the shipped ones.\n"
     "\n"
-    "Example:\n"
-    "  summerlow evaluate --store audit.db\n" EXIT_CODES;
+    "Options:\n"
+    "  --rule NAME    the margin rule to judge by (default: the first,\n"
+    "                 fixed head)\n"
+    "  --year YYYY    the year pipes are aged to (default: that of the "
+    "import)\n"
+    "\n"
+    "Examples:\n"
+    "  summerlow evaluate --store audit.db\n"
+    "  summerlow evaluate --store audit.db --rule 'ANSI/HI 9.6.1-1998'\n"
+    "  summerlow evaluate --store audit.db --year 2045\n" EXIT_CODES;
 
 static const char rank[] =
     "Usage: summerlow rank --store FILE --out DIR [options]\n"
@@ -79,6 +92,8 @@ static const char rank[] =
     "Options:\n"
     "  --out DIR      where the results go; made if missing\n"
     "  --units si|us  units of the results (default si)\n"
+    "  --rule NAME    the newest evaluation by this margin rule\n"
+    "  --year YYYY    the newest evaluation of this year\n"
     "\n"
     "Example:\n"
     "  summerlow rank --store audit.db --out results --units us\n" EXIT_CODES;
@@ -91,6 +106,9 @@ static const char explain[] =
     "\n"
     "Options:\n"
     "  --units si|us  units of the sheet (default si)\n"
+    "  --rule NAME    the margin rule to judge by (default: that of the\n"
+    "                 newest evaluation)\n"
+    "  --year YYYY    the year pipes are aged to (default: likewise)\n"
     "\n"
     "Example:\n"
     "  summerlow explain EB-014-P1 --store "

@@ -152,6 +152,27 @@ static enum sl_status note_unused(void *context, const char *file, long line,
     return keep_finding(context, &finding, error);
 }
 
+/* An owner who wrote conditions is told when none of them is audited. */
+static enum sl_status note_shipped_conditions(struct intake *intake,
+                                              const struct sl_file_sum *sum,
+                                              struct sl_error *error)
+{
+    struct sl_finding finding = {
+        .code = "shipped-conditions",
+        .severity = SL_NOTE,
+        .file = sum->file,
+        .column = "",
+        .record_id = "",
+        .value = "",
+        .reason = "no condition of it is kept; the shipped ones are audited",
+        .remedy = "mend it, or take the file out",
+    };
+
+    return sum->present && sum->kept == 0
+               ? keep_finding(intake, &finding, error)
+               : SL_OK;
+}
+
 static bool progress(void *context, long long done, long long all)
 {
     (void)context;
@@ -219,6 +240,9 @@ static enum sl_status read_records(struct sl_run *run,
     if (!status)
         status = sl_store_each_unused(run->store, run->vintage.vintage,
                                       note_unused, &intake, error);
+    if (!status)
+        status = note_shipped_conditions(
+            &intake, sl_inventory_sum(inventory, SL_KIND_CONDITION), error);
     if (!status)
         status = keep_sums(run, inventory, error);
     sl_progress_end();

@@ -4,15 +4,32 @@
 #include "app/options.h"
 
 #include <getopt.h>
+#include <math.h>
 #include <string.h>
 
+#include "base/number.h"
 #include "base/text.h"
 
 /* Options without a short form, above any character. */
-enum { OPT_STORE = 256, OPT_OUT, OPT_LABEL, OPT_UNITS, OPT_DRY_RUN };
+enum {
+    OPT_STORE = 256,
+    OPT_OUT,
+    OPT_LABEL,
+    OPT_UNITS,
+    OPT_RULE,
+    OPT_YEAR,
+    OPT_DRY_RUN
+};
 
 #define ON(command) (1U << (command))
 #define ON_ANY (~0U)
+#define ON_JUDGING                                                             \
+    (ON(SL_COMMAND_AUDIT) | ON(SL_COMMAND_EVALUATE) | ON(SL_COMMAND_RANK) |    \
+     ON(SL_COMMAND_EXPLAIN))
+
+/* As of the inventory's own years. */
+#define FIRST_YEAR 1800
+#define LAST_YEAR 2200
 
 static const struct {
     const char *name;
@@ -29,6 +46,8 @@ static const struct {
      ON(SL_COMMAND_AUDIT) | ON(SL_COMMAND_IMPORT)},
     {"units", required_argument, OPT_UNITS,
      ON(SL_COMMAND_AUDIT) | ON(SL_COMMAND_RANK) | ON(SL_COMMAND_EXPLAIN)},
+    {"rule", required_argument, OPT_RULE, ON_JUDGING},
+    {"year", required_argument, OPT_YEAR, ON_JUDGING},
     {"dry-run", no_argument, OPT_DRY_RUN, ON(SL_COMMAND_IMPORT)},
 };
 
@@ -64,6 +83,21 @@ static enum sl_status units_of(const char *word, struct sl_options *options,
     return SL_OK;
 }
 
+static enum sl_status year_of(const char *word, struct sl_options *options,
+                              struct sl_error *error)
+{
+    double year = 0;
+
+    if (sl_number_parse(word, strlen(word), &year) != SL_NUMBER_OK ||
+        year != floor(year) || year < FIRST_YEAR || year > LAST_YEAR)
+        return sl_error_set(error, SL_USAGE,
+                            "\"%s\" is no year from %d to %d; use --year "
+                            "2026, say",
+                            word, FIRST_YEAR, LAST_YEAR);
+    options->year = (int)year;
+    return SL_OK;
+}
+
 static enum sl_status take(int code, const char *value,
                            struct sl_options *options, struct sl_error *error)
 {
@@ -85,6 +119,11 @@ static enum sl_status take(int code, const char *value,
         return SL_OK;
     case OPT_UNITS:
         return units_of(value, options, error);
+    case OPT_RULE:
+        options->rule = value;
+        return SL_OK;
+    case OPT_YEAR:
+        return year_of(value, options, error);
     case OPT_DRY_RUN:
         options->dry_run = true;
         return SL_OK;

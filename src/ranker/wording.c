@@ -181,7 +181,7 @@ static void add_addition(enum sl_quantity quantity, double addition,
 {
     if (addition == 0)
         return;
-    sl_text_addf(text, " %c %.4g %s", addition < 0 ? '-' : '+',
+    sl_text_addf(text, " %c %.3g %s", addition < 0 ? '-' : '+',
                  fabs(sl_shown(quantity, units, addition)),
                  sl_unit_shown(quantity, units)->label);
 }

@@ -190,6 +190,27 @@ static void what_is_out_of_service_is_out_of_scope(void **state)
     check_case("scope", &listener);
 }
 
+static void an_owners_conditions_and_rules_are_taken(void **state)
+{
+    struct listener listener = {0};
+
+    (void)state;
+    check_case("own", &listener);
+}
+
+static void an_owners_slips_are_told_by_line(void **state)
+{
+    static const struct script script[] = {
+        {SL_KIND_CONDITION, 9, {SL_ANSWER_DUPLICATE, "condition", NULL, 8}},
+        {SL_KIND_RULE, 9, {SL_ANSWER_DUPLICATE, "rule", NULL, 8}},
+    };
+    struct listener listener = {.script = script,
+                                .script_count = COUNT(script)};
+
+    (void)state;
+    check_case("own-dirty", &listener);
+}
+
 static void the_sinks_answers_decide_fates(void **state)
 {
     static const struct script script[] = {
@@ -670,6 +691,8 @@ int main(int argc, char **argv)
         cmocka_unit_test(bytes_that_are_no_text_are_told_by_place),
         cmocka_unit_test(columns_are_understood_by_unit_and_grade),
         cmocka_unit_test(what_is_out_of_service_is_out_of_scope),
+        cmocka_unit_test(an_owners_conditions_and_rules_are_taken),
+        cmocka_unit_test(an_owners_slips_are_told_by_line),
         cmocka_unit_test(the_sinks_answers_decide_fates),
         cmocka_unit_test(what_is_no_inventory_is_refused),
         cmocka_unit_test(a_header_of_too_many_columns_is_refused),
