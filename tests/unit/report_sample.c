@@ -6,7 +6,15 @@
 #include "ranker_rows.h"
 
 static const struct sl_condition summer_low = {
-    "summer low", SL_LEVEL_LOW, SL_LEVEL_LOW, SL_LEVEL_LOW, 1, 1};
+    .condition = "summer low",
+    .level = SL_LEVEL_LOW,
+    .discharge = SL_LEVEL_LOW,
+    .pressure = SL_LEVEL_LOW,
+    .summer_temperature = 1,
+    .storm_barometer = 1,
+    .suction_friction = SL_FRICTION_AGED,
+    .discharge_friction = SL_FRICTION_NEW,
+};
 
 #define MOST_ROWS 16
 static struct sl_station_row rows[MOST_ROWS];
