@@ -35,4 +35,10 @@ double sl_curve_carried_on(const struct sl_curve_view *curve, double x);
  * sl_curve_carried_on: not finite x, or a curve that is not usable. */
 double sl_curve_slope_at(const struct sl_curve_view *curve, double x);
 
+/* sl_curve_carried_on and sl_curve_slope_at at once, to the same digits, for
+ * searches that need both often.  The curve must be usable, which is not
+ * looked into again; NaN where x is not finite. */
+double sl_curve_carried_on_and_slope(const struct sl_curve_view *curve,
+                                     double x, double *slope);
+
 #endif

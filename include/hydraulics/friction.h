@@ -6,6 +6,9 @@
 #ifndef SL_HYDRAULICS_FRICTION_H
 #define SL_HYDRAULICS_FRICTION_H
 
+/* Re from which flow is no longer laminar (F8). */
+#define SL_LAMINAR_BELOW 2300.0
+
 /* Mean velocity, formula F23: V = 4 Q / (pi D²).
  * in   flow  [m³/s], >= 0;  bore  [m], > 0
  * out  [m/s] */
@@ -19,8 +22,8 @@ double sl_reynolds(double velocity, double bore, double kinematic_viscosity);
 
 /* Darcy friction factor, formula F8.
  * Laminar: Hagen-Poiseuille.  Turbulent: Colebrook 1939, Journal of the
- * Institution of Civil Engineers 11, 133, solved by Newton's method until
- * it stands still.
+ * Institution of Civil Engineers 11, 133, solved by Halley's method to
+ * the last digits of a double.
  * in   reynolds  [-]      0 < Re <= 1e9
  *      relative_roughness  [-], roughness over bore, 0 to 0.1.  Colebrook's
  *              data end at 0.05; up to 0.1 the equation is carried on, and
@@ -60,5 +63,24 @@ double sl_darcy_head(double factor, double length, double bore,
  * out  [m] */
 double sl_hazen_williams_head(double flow, double c, double length,
                               double bore);
+
+/* A loss and how it grows with flow. */
+struct sl_loss {
+    double head;  /* [m] */
+    double slope; /* d head / d flow [s/m²] */
+};
+
+/* Darcy-Weisbach at a flow, F23, F8 and F7 in one, and its exact slope.
+ * in   flow  [m³/s], >= 0;  length  [m], >= 0;  bore  [m], > 0
+ *      roughness  [m], >= 0;  kinematic_viscosity  [m²/s], > 0
+ * out  the head is that of sl_friction_factor and sl_darcy_head.  At flow 0
+ *      the head is 0 and the slope that of laminar flow.  NaN, both, outside
+ *      the range of sl_friction_factor. */
+struct sl_loss sl_darcy_loss(double flow, double length, double bore,
+                             double roughness, double kinematic_viscosity);
+
+/* sl_hazen_williams_head and its slope. */
+struct sl_loss sl_hazen_williams_loss(double flow, double c, double length,
+                                      double bore);
 
 #endif

@@ -155,3 +155,24 @@ double sl_curve_slope_at(const struct sl_curve_view *curve, double x)
     coefficients(&p, &c2, &c3);
     return p.slope_left + p.along * (2.0 * c2 + 3.0 * p.along * c3);
 }
+
+double sl_curve_carried_on_and_slope(const struct sl_curve_view *curve,
+                                     double x, double *slope)
+{
+    size_t last = curve->count - 1, end = x < curve->x[0] ? 0 : last;
+    struct piece p;
+    double c2, c3;
+
+    *slope = NAN;
+    if (!isfinite(x))
+        return NAN;
+    if (x < curve->x[0] || x >= curve->x[last]) {
+        *slope = point_slope(curve, end);
+        return curve->y[end] + *slope * (x - curve->x[end]); /* F20 */
+    }
+    p = piece_at(curve, x);
+    coefficients(&p, &c2, &c3);
+    *slope = p.slope_left + p.along * (2.0 * c2 + 3.0 * p.along * c3);
+    return p.start +
+           p.width * p.along * (p.slope_left + p.along * (c2 + p.along * c3));
+}

@@ -77,6 +77,7 @@ fi
 for symbol in $(nm -u $objects | sed -n 's/^ *U //p' | sort -u); do
     case $symbol in
     sl_* | acos | cbrt | exp | ldexp | log2 | fabs | fmax | fmin | isfinite | log | log10 | \
+        memcpy | memset | \
         pow | sqrt | nan | __stack_chk_fail | __asan_* | __ubsan_* | \
         _GLOBAL_OFFSET_TABLE_) ;;
     *)
