@@ -6,6 +6,8 @@ each row carries; the program and its tests never need them.  Run it again
 only to renew the values, and read the difference.
 """
 import csv
+import itertools
+import math
 import os
 
 import fluids
@@ -15,7 +17,7 @@ import scipy
 from iapws._iapws import _Liquid
 from iapws.iapws97 import _PSat_T
 from scipy.interpolate import PchipInterpolator
-from scipy.optimize import brentq
+from scipy.optimize import brentq, fsolve
 
 FOLDER = os.path.dirname(os.path.abspath(__file__))
 COLUMNS = ["id", "function", "inputs", "value", "unit", "rtol", "atol",
@@ -145,7 +147,122 @@ def duties():
                exact(curve(flow)), "m", "1e-12", "0", source]
 
 
+# Pumps together.  A pipe: from, own, length, bore, roughness, K; a pump: its
+# pipe, how many there are, flows, heads; the delivery: length, bore,
+# roughness, K.
+STRONG = ([0.0, 0.021, 0.047, 0.0835], [41.2, 40.3, 36.9, 25.05])
+MIDDLE = ([0.0, 0.025, 0.04, 0.066], [38.3, 36.1, 32.8, 23.9])
+WEAK = ([0.0, 0.02, 0.031, 0.05], [24.1, 22.5, 20.2, 13.3])
+LATE = ([0.013, 0.03, 0.049, 0.07], [39.7, 38.2, 33.9, 25.1])
+HEADER = [(-1, 0, 23.7, 0.41, 1.3e-4, 0.83), (0, 0, 12.3, 0.31, 2.1e-4, 0.37)]
+BRANCH = (1, 1, 3.17, 0.207, 0.9e-4, 1.31)
+STATIONS = (
+    ("two-unlike", HEADER + [BRANCH, BRANCH], [(2, 1, STRONG), (3, 1, MIDDLE)],
+     24.3, 0, (1234.0, 0.303, 1.7e-4, 3.29), 1.13e-6),
+    ("three-and-two", HEADER + [BRANCH, (0, 1, 7.9, 0.253, 4.1e-4, 2.07)],
+     [(2, 3, MIDDLE), (3, 2, LATE)],
+     21.9, 0, (871.0, 0.517, 0.6e-4, 5.1), 1.31e-6),
+    ("one-stands", HEADER + [BRANCH, BRANCH], [(2, 2, STRONG), (3, 1, WEAK)],
+     19.7, 0, (640.0, 0.351, 2.3e-4, 1.9), 0.9e-6),
+    ("gauge-on-main", HEADER + [BRANCH, BRANCH, (0, 1, 2.3, 0.197, 1e-5, 0.9)],
+     [(2, 1, STRONG), (3, 1, MIDDLE), (4, 2, LATE)],
+     13.1, 1, (2130.0, 0.413, 3.3e-4, 7.7), 1.004e-6),
+)
+GRAVITY = 9.80665
+
+
+def pipe_head(flow, length, bore, roughness, k, viscosity):
+    velocity = 4 * flow / (math.pi * bore ** 2)
+    reynolds = velocity * bore / viscosity
+    if flow <= 0:
+        return 0.0
+    factor = (64 / reynolds if reynolds < 2300 else
+              fluids.friction.Colebrook(reynolds, roughness / bore))
+    return (factor * length / bore + k) * velocity ** 2 / (2 * GRAVITY)
+
+
+def excess_heads(flows, pipes, pumps, curves, static, gauge, delivery,
+                 viscosity):
+    """Each pump's head less what is asked of it."""
+    ways = []
+    for pump in pumps:
+        way = [pump[0]]
+        while pipes[way[-1]][0] >= 0:
+            way.append(pipes[way[-1]][0])
+        ways.append(way)
+    through = [sum((1 if pipe[1] else pump[1]) * flow
+                   for flow, pump, way in zip(flows, pumps, ways) if at in way)
+               for at, pipe in enumerate(pipes)]
+    total = sum(flow * pump[1] for flow, pump in zip(flows, pumps))
+    common = static + pipe_head(total, *delivery, viscosity)
+    result = []
+    for flow, curve, way in zip(flows, curves, ways):
+        asked = common + sum(pipe_head(through[at], *pipes[at][2:], viscosity)
+                             for at in way)
+        if gauge:
+            bore = pipes[way[-1]][3]
+            velocity = 4 * through[way[-1]] / (math.pi * bore ** 2)
+            asked -= velocity ** 2 / (2 * GRAVITY)
+        result.append(float(curve(flow)) - asked)
+    return result
+
+
+def flows_together(pipes, pumps, static, gauge, delivery, viscosity):
+    """Of all sets of pumps that may run, the one whose others cannot open
+    their check valves."""
+    curves = [PchipInterpolator(*pump[2]) for pump in pumps]
+    found = []
+    for runs in itertools.product((True, False), repeat=len(pumps)):
+        at = [i for i, running in enumerate(runs) if running]
+
+        def excess(free):
+            flows = numpy.zeros(len(pumps))
+            flows[at] = free
+            return excess_heads(flows, pipes, pumps, curves, static, gauge,
+                                delivery, viscosity)
+        free = [0.6 * pumps[i][2][0][-1] for i in at]
+        if at:
+            free, _, success, _ = fsolve(
+                lambda free: [excess(free)[i] for i in at], free, xtol=1e-15,
+                full_output=True)
+        left = excess(free)
+        if (all(abs(left[i]) < 1e-12 and flow > 0
+                for i, flow in zip(at, free)) and
+                all(left[i] <= 0 for i in range(len(pumps)) if i not in at)):
+            flows = numpy.zeros(len(pumps))
+            flows[at] = free
+            found.append(flows)
+    assert len(found) == 1, found
+    for flow, pump in zip(found[0], pumps):
+        assert flow == 0 or pump[2][0][0] <= flow <= pump[2][0][-1], flow
+    return found[0]
+
+
+def together():
+    source = ("scipy %s, fsolve on PchipInterpolator, with fluids (Python) %s,"
+              " friction.Colebrook" % (scipy.__version__, fluids.__version__))
+    for name, pipes, pumps, static, gauge, delivery, viscosity in STATIONS:
+        inputs = ";".join(
+            ["pipe_%s=%s" % (column, listed(values)) for column, values in
+             zip(("from", "own", "length", "bore", "roughness", "k"),
+                 zip(*pipes))] +
+            ["pump_pipe=" + listed(pump[0] for pump in pumps),
+             "pump_count=" + listed(pump[1] for pump in pumps),
+             "pump_flow=" + " ".join(listed(pump[2][0]) for pump in pumps),
+             "pump_head=" + " ".join(listed(pump[2][1]) for pump in pumps),
+             "static_head=" + exact(static), "gauge=%d" % gauge] +
+            ["delivery_%s=%s" % (column, exact(value)) for column, value in
+             zip(("length", "bore", "roughness", "k"), delivery)] +
+            ["viscosity=" + exact(viscosity)])
+        flows = flows_together(pipes, pumps, static, gauge, delivery,
+                               viscosity)
+        for number, flow in enumerate(flows):
+            yield ["together-%s-%d" % (name, number), "together_flow",
+                   inputs + ";of_pump=%d" % number, exact(flow), "m3/s",
+                   "1e-12", "0", source]
+
+
 if __name__ == "__main__":
     write("iapws.csv", water())
     write("fluids.csv", list(friction()) + list(air()))
-    write("scipy.csv", list(curves()) + list(duties()))
+    write("scipy.csv", list(curves()) + list(duties()) + list(together()))

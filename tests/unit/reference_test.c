@@ -16,6 +16,7 @@
 #include <csv.h>
 
 #include "check.h"
+#include "reference_stations.h"
 #include "reference_suction.h"
 #include "reference_systems.h"
 
@@ -72,6 +73,7 @@ static const struct {
     {"system_head", system_head},
     {"thoma_number", thoma_number},
     {"throttle_k", throttle_k},
+    {"together_flow", together_flow},
     {"us_factor", us_factor},
     {"us_specific_speed", us_specific_speed},
     {"vapour_pressure", vapour_pressure},
