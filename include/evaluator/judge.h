@@ -2,17 +2,41 @@
 #ifndef SL_EVALUATOR_JUDGE_H
 #define SL_EVALUATOR_JUDGE_H
 
-#include "evaluator/plan.h"
+#include "evaluator/govern.h"
 
-/* Solve the three corners of a plan and draw the state from them:
- * short   NPSHA below NPSHR even with every unknown at its favourable end;
+/* A pump, its class and what was found of that over its running sets. */
+struct sl_judging {
+    const struct sl_layout *layout;
+    const struct sl_tally *tally;
+    size_t class;
+    size_t pump; /* its place in the dossier */
+    struct sl_arena *arena;
+};
+
+/* Draw the state from the corners:
+ * short   NPSHA below NPSHR even with every unknown at its favourable end,
+ *         in the set that governs;
  * thin    likewise the margin rule not met;
- * clear   the rule met with every unknown at its adverse end, and figures
- *         at the typical one;
+ * clear   the rule met with every unknown at its adverse end in every set
+ *         that the controls allow, on the published curve in each;
  * unproven otherwise: then each unknown is weighed by what the surplus
  *         would gain if it alone went from its adverse to its favourable
- *         end, and marked when it alone could settle the state.
- * Everything lives in the plan's arena. */
-void sl_judge(const struct sl_plan *plan, struct sl_pump_result *result);
+ *         end, and marked when it alone could settle the state. */
+void sl_judge(const struct sl_judging *judging, struct sl_pump_result *result);
+
+/* The verdict on another pump of the class: the first one's, under its own
+ * names and lines. */
+void sl_judge_alike(const struct sl_judging *judging,
+                    const struct sl_pump_result *first,
+                    struct sl_pump_result *result);
+
+/* Parts of it: what every margin rule says; the companion checks; how far
+ * level, temperature and flow may go. */
+void sl_judge_rules(const struct sl_judging *judging,
+                    struct sl_pump_result *result);
+void sl_check_companions(const struct sl_judging *judging,
+                         struct sl_pump_result *result);
+void sl_find_limits(const struct sl_judging *judging,
+                    struct sl_pump_result *result);
 
 #endif

@@ -1,8 +1,9 @@
 /* Everything one pump's balance is made from, under one condition.
  *
- * A plan holds each input as an interval with its provenance; a case is the
- * plan solved with each input at one of its ends (evaluator/solve.h).  The
- * parts of a plan are filled by source.c, suction.c and delivery.c. */
+ * A plan holds each input as an interval with its provenance; the pumps of a
+ * station are solved together with each input at one of its ends
+ * (evaluator/joint.h).  The parts of a plan are filled by source.c, levels.c,
+ * suction.c, delivery.c and machine.c. */
 #ifndef SL_EVALUATOR_PLAN_H
 #define SL_EVALUATOR_PLAN_H
 
@@ -16,7 +17,7 @@ struct sl_path_pipe {
     bool hazen_williams;          /* only C is known of its surface */
     struct sl_interval roughness; /* m */
     struct sl_interval minor_k;   /* sum over its fittings */
-    double others;                /* most flow of other pumps in it, m³/s */
+    bool shared;                  /* other pumps draw through it too */
 };
 
 /* The discharge side, when it is known well enough to solve the flow. */
@@ -33,7 +34,7 @@ struct sl_plan {
     const struct sl_dossier_pump *pump;
     const struct sl_condition *condition;
     const struct sl_tables *tables;
-    const struct sl_margin_rule *rule;
+    const struct sl_margin_rule *rule; /* ranked on */
     struct sl_arena *arena;
 
     struct sl_input inputs[SL_INPUT_COUNT];
@@ -56,6 +57,12 @@ struct sl_plan {
     struct sl_curve_view npshr; /* likewise */
     double rated_flow;          /* scaled to that speed; NaN unknown */
     double rated_npshr;         /* likewise */
+    /* NPSHR never falls with the flow, and at no flow does what a rule asks
+     * for rise faster than the head falls: then more loss, or a lower
+     * source, is worse whatever it does to the flow. */
+    bool npshr_rises, head_is_steep;
+    double suction_specific_speed; /* US customary (F14); NaN unknown */
+    double suction_energy; /* over the start of high (F15); NaN unknown */
 };
 
 /* The plan of one pump; everything in it lives in the arena. */
@@ -67,13 +74,25 @@ void sl_plan_make(struct sl_plan *plan, const struct sl_dossier *dossier,
 
 /* The parts, in the order they are filled. */
 void sl_plan_source(struct sl_plan *plan);
+void sl_plan_source_level(struct sl_plan *plan);
 void sl_plan_suction(struct sl_plan *plan);
+void sl_plan_machine(struct sl_plan *plan);
 void sl_plan_delivery(struct sl_plan *plan);
 
+/* Roughness of a wall of that material, as laid or aged to the audit's year;
+ * its rough end is adverse.  Tells whether its age or condition is assumed. */
+struct sl_interval sl_plan_roughness(const struct sl_plan *plan, int material,
+                                     int condition,
+                                     const struct sl_number *year_laid,
+                                     double bore, enum sl_friction_state state,
+                                     bool *assumed);
 /* An exactly known value. */
 struct sl_interval sl_exactly(double value);
 /* No honest figure at any end. */
 struct sl_interval sl_no_figure(void);
+/* The lower of two levels of which either may be unknown. */
+const struct sl_number *sl_lower_level(const struct sl_number *a,
+                                       const struct sl_number *b);
 /* A value recorded, or NaN. */
 double sl_recorded(const struct sl_number *number);
 
@@ -86,6 +105,8 @@ struct sl_input *sl_plan_record(struct sl_plan *plan, enum sl_input_id id,
                                 const struct sl_number *number,
                                 enum sl_kind kind, long line,
                                 const char *unknown_rule);
+/* Add to an input what the condition adds, and say so. */
+void sl_plan_add(struct sl_plan *plan, enum sl_input_id id, double addition);
 /* Set an input of the station of which a lowest and a usual figure may be
  * recorded: the one wanted or, for want of it, the other one, which bounds
  * it from one side.  Lower is adverse. */
@@ -102,5 +123,9 @@ struct sl_input *sl_plan_default(struct sl_plan *plan, enum sl_input_id id,
 const struct sl_default *sl_default_find(const struct sl_tables *tables,
                                          const char *field,
                                          const char *circumstance);
+/* The same among the limits of the companion checks. */
+const struct sl_check_limit *sl_check_limit_find(const struct sl_tables *tables,
+                                                 const char *check,
+                                                 const char *circumstance);
 
 #endif

@@ -49,6 +49,90 @@ struct sl_case {
     double surplus;  /* npsha - required */
 };
 
+/* Where a flow lies on the published curve. */
+enum sl_curve_position {
+    SL_ON_CURVE, /* or no curve is published */
+    SL_BEFORE_START,
+    SL_PAST_END
+};
+const char *sl_curve_position_name(enum sl_curve_position position);
+
+/* One running set, as one of its pumps sees it, at the typical values. */
+struct sl_set_case {
+    const char *words; /* "alone", "with P-2 and P-3"; NULL: no such set */
+    int running;       /* pumps in it, this one counted */
+    struct sl_case figures;
+    enum sl_curve_position position;
+    bool stands;        /* it cannot reach the header's head in this set */
+    bool two_crossings; /* its head meets the system's at a lesser flow too */
+};
+
+/* What a margin rule says of a pump, over all its sets. */
+struct sl_rule_verdict {
+    const struct sl_margin_rule *rule;
+    bool applies;
+    enum sl_state state;
+    double measure; /* what its tier is chosen by, typical; NaN: unknown */
+    double required[SL_CORNER_COUNT]; /* m */
+    double surplus[SL_CORNER_COUNT];  /* m */
+};
+
+/* Companion checks, beside the margin and never mixed into it. */
+enum sl_check_id {
+    SL_CHECK_SUBMERGENCE,
+    SL_CHECK_OPERATING_REGION,
+    SL_CHECK_SUCTION_VELOCITY,
+    SL_CHECK_BELL_VELOCITY,
+    SL_CHECK_SUCTION_LIFT,
+    SL_CHECK_STRAIGHT_RUN,
+    SL_CHECK_BOOSTER_PRESSURE,
+    SL_CHECK_SUCTION_ENERGY,
+    SL_CHECK_OFF_CURVE,
+    SL_CHECK_TWO_CROSSINGS,
+    SL_CHECK_ROUGHNESS,
+    SL_CHECK_COUNT
+};
+const char *sl_check_name(enum sl_check_id id);
+
+enum sl_check_end {
+    SL_CHECK_NOT_MADE,
+    SL_CHECK_UNKNOWN,
+    SL_CHECK_WITHIN,
+    SL_CHECK_BEYOND
+};
+
+struct sl_check {
+    enum sl_check_end end;
+    double value;           /* the worst over the sets tried, typical */
+    double lowest, highest; /* NaN: no limit on that side */
+    enum sl_quantity quantity;
+    const char *source;
+    char trust;
+};
+
+/* How far one thing may go until the rule is just met, all else typical and
+ * the whole station solved anew. */
+enum sl_limit_end {
+    SL_LIMIT_UNKNOWN, /* there is no figure to start from */
+    SL_LIMIT_FOUND,
+    SL_LIMIT_NONE,  /* it is not met anywhere within the range */
+    SL_LIMIT_ALWAYS /* it is met over the whole range */
+};
+const char *sl_limit_end_name(enum sl_limit_end end);
+
+struct sl_limit {
+    enum sl_limit_end end;
+    double value; /* SI; NaN unless found */
+};
+
+enum sl_limit_id {
+    SL_LIMIT_LEVEL,       /* lowest source level, or gauge pressure head of a
+                             main as an elevation, m */
+    SL_LIMIT_TEMPERATURE, /* highest, K */
+    SL_LIMIT_FLOW,        /* largest of this pump, m³/s */
+    SL_LIMIT_COUNT
+};
+
 /* How the flow was found, best first. */
 enum sl_flow_basis {
     SL_FLOW_SOLVED,   /* this pump's curve on the station's system */
@@ -90,7 +174,8 @@ enum sl_input_id {
     SL_IN_FLOW,
     SL_IN_SPEED,
     SL_IN_NPSHR,
-    SL_IN_RUNNING_TOGETHER,
+    SL_IN_RUNNING_TOGETHER, /* most pumps that run at once */
+    SL_IN_RULE_MEASURE,     /* what the rule's tier is chosen by */
     SL_INPUT_COUNT
 };
 /* The column an owner would fill in, e.g. "site_elevation". */
@@ -141,9 +226,25 @@ struct sl_pump_result {
     const char *reason;
     enum sl_flow_basis flow_basis;
     enum sl_source_basis source_basis;
+    /* In some set, at the typical values. */
     bool off_curve; /* the flow lies past an end of the NPSHR curve */
-    bool stands;    /* its curve cannot reach the discharge head */
+    bool stands;    /* its curve cannot reach the header's head: no set runs */
+    struct sl_set_case off_curve_set; /* the first such; words NULL: none */
+    /* Each corner over all running sets: the least surplus of any at the
+     * typical and the adverse one; the governing set's at the favourable. */
     struct sl_case cases[SL_CORNER_COUNT];
+    struct sl_set_case governing; /* of the typical corner */
+    struct sl_set_case one_out;   /* the most that may run, less one */
+    const char *stands_set;       /* the first it stands in; NULL: none */
+    const char *adverse_set;      /* of the adverse corner; NULL: none */
+    size_t sets_tried;
+    bool sets_all;                  /* every set the controls allow */
+    const struct sl_set_case *sets; /* on demand, as tried; else NULL */
+    size_t set_count;
+    struct sl_rule_verdict *rules; /* as in the tables */
+    size_t rule_count;
+    struct sl_check checks[SL_CHECK_COUNT];
+    struct sl_limit limits[SL_LIMIT_COUNT];
     struct sl_input inputs[SL_INPUT_COUNT]; /* `id` equal to the place */
     int counts[SL_ASSUMED + 1]; /* inputs that apply, by provenance */
     /* The unknown that matters most; NULL when all is known. */

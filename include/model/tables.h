@@ -63,6 +63,8 @@ enum sl_rule_measure {
 };
 
 #define SL_RULE_TIERS 3
+/* Most margin rules judged at once. */
+#define SL_RULES_MOST 16
 
 /* Asked for where the measure is more than `over`; the first tier always. */
 struct sl_margin_tier {

@@ -11,9 +11,10 @@ static enum sl_status evaluate_one(struct sl_run *run,
                                    struct sl_arena *arena,
                                    struct sl_error *error)
 {
+    struct sl_settings settings = {.rule = rule};
     struct sl_station_result result;
 
-    sl_evaluate_station(dossier, &run->tables, rule, arena, &result);
+    sl_evaluate_station(dossier, &run->tables, &settings, arena, &result);
     return sl_store_add_result(run->store, run->evaluation.evaluation, &result,
                                error);
 }

@@ -48,6 +48,7 @@ enum sl_status sl_command_explain(struct sl_run *run, struct sl_error *error)
     const struct sl_margin_rule *rule;
     struct sl_dossier dossier;
     struct sl_station_result result;
+    struct sl_settings settings;
     bool found = false;
     enum sl_status status =
         sl_run_open(run, run->options->store, SL_STORE_READ, error);
@@ -68,7 +69,9 @@ enum sl_status sl_command_explain(struct sl_run *run, struct sl_error *error)
                             "pumps.csv for the ids, findings.csv for "
                             "rejected records",
                             wanted, run->vintage.vintage);
-    sl_evaluate_station(&dossier, &run->tables, rule, &run->arena, &result);
+    settings = (struct sl_settings){.rule = rule, .list_sets = true};
+    sl_evaluate_station(&dossier, &run->tables, &settings, &run->arena,
+                        &result);
     for (size_t i = 0; i < dossier.pump_count; i++)
         if (sl_same(dossier.pumps[i].record.pump_id, wanted))
             print_pump(run, rule, &result, i);

@@ -4,7 +4,8 @@
 #include <string.h>
 
 #include "base/text.h"
-#include "evaluator/solve.h"
+#include "hydraulics/friction.h"
+#include "hydraulics/minor_loss.h"
 
 /* Which state the figures of one corner show. */
 static enum sl_state state_of(const struct sl_case *solved)
@@ -16,16 +17,17 @@ static enum sl_state state_of(const struct sl_case *solved)
     return solved->surplus < 0 ? SL_THIN : SL_CLEAR;
 }
 
-static enum sl_state drawn(const struct sl_case cases[SL_CORNER_COUNT])
+static enum sl_state drawn(const struct sl_pump_result *result)
 {
+    const struct sl_case *cases = result->cases;
     enum sl_state best = state_of(&cases[SL_FAVOURABLE]);
 
     if (best == SL_SHORT || best == SL_THIN)
         return best;
-    /* The least flow may lie before the curve's first point: without a likely
-     * NPSHR there is none that the adverse end could bound. */
+    /* Off its curve in any set, there is no NPSHR that the adverse end could
+     * bound. */
     if (state_of(&cases[SL_ADVERSE]) == SL_CLEAR &&
-        !isnan(cases[SL_TYPICAL].surplus))
+        !isnan(cases[SL_TYPICAL].surplus) && !result->off_curve)
         return SL_CLEAR;
     return SL_UNPROVEN;
 }
@@ -54,23 +56,27 @@ static bool lacks_bound(const struct sl_input *input)
                                            input->provenance == SL_UNKNOWN);
 }
 
-/* The case with one input at an end of its own. */
-static struct sl_case case_with(const struct sl_plan *plan, enum sl_corner rest,
-                                enum sl_input_id id, enum sl_corner end)
+/* The surplus with one input at an end of its own, all others at `rest`, in
+ * the set that governs there. */
+static double surplus_with(const struct sl_judging *judging,
+                           enum sl_corner rest, enum sl_input_id id,
+                           enum sl_corner end)
 {
-    struct sl_ends ends = sl_ends_all(rest);
-    struct sl_case solved;
-    struct sl_case_notes notes;
+    const struct sl_tally *tally = judging->tally;
+    const struct sl_tried *tried[] = {&tally->typical, &tally->adverse,
+                                      &tally->favourable};
+    struct sl_bound_case of = {.layout = judging->layout,
+                               .counts = tried[rest]->counts,
+                               .class = judging->class,
+                               .ends = sl_ends_all(rest),
+                               .sense = rest == SL_TYPICAL ? end : rest};
+    struct sl_outcome outcome;
 
-    ends.of[id] = end;
-    sl_solve_case(plan, &ends, &solved, &notes);
-    return solved;
-}
-
-static double surplus_with(const struct sl_plan *plan, enum sl_corner rest,
-                           enum sl_input_id id, enum sl_corner end)
-{
-    return case_with(plan, rest, id, end).surplus;
+    if (!of.counts)
+        of.counts = tally->typical.counts;
+    of.ends.of[id] = end;
+    sl_bound(&of, &outcome);
+    return outcome.figures.surplus;
 }
 
 /* Whether some other open input lacks an honest figure at its adverse end:
@@ -87,20 +93,64 @@ static bool another_is_unbounded(const struct sl_pump_result *result,
     return false;
 }
 
-static void weigh(const struct sl_plan *plan, struct sl_pump_result *result,
-                  struct sl_input *input)
+/* The surplus with no other pump running. */
+static double lone_surplus(const struct sl_judging *judging,
+                           enum sl_corner corner)
+{
+    const struct sl_layout *layout = judging->layout;
+    int *counts =
+        sl_arena_new(judging->arena, layout->class_count, sizeof *counts);
+    struct sl_bound_case of = {.layout = layout,
+                               .counts = counts,
+                               .class = judging->class,
+                               .ends = sl_ends_all(corner),
+                               .sense = corner};
+    struct sl_outcome outcome;
+
+    counts[judging->class] = 1;
+    sl_bound(&of, &outcome);
+    return outcome.figures.surplus;
+}
+
+/* How much one pump at a time would better it, and whether it would do. */
+static void weigh_together(const struct sl_judging *judging,
+                           const struct sl_pump_result *result,
+                           struct sl_input *input)
+{
+    input->settles = !another_is_unbounded(result, input->id) &&
+                     lone_surplus(judging, SL_ADVERSE) >= 0;
+    input->swing = lone_surplus(judging, SL_TYPICAL) -
+                   judging->tally->typical.outcome.figures.surplus;
+}
+
+static bool unbounded(const struct sl_pump_result *result, enum sl_input_id id)
+{
+    const struct sl_input *input = &result->inputs[id];
+
+    return open_input(input) && lacks_bound(input);
+}
+
+static void weigh(const struct sl_judging *judging,
+                  struct sl_pump_result *result, struct sl_input *input)
 {
     enum sl_input_id id = input->id;
-    double worst = surplus_with(plan, SL_TYPICAL, id, SL_ADVERSE);
-    double best = surplus_with(plan, SL_TYPICAL, id, SL_FAVOURABLE);
+    double worst, best;
 
+    if (id == SL_IN_RUNNING_TOGETHER) {
+        weigh_together(judging, result, input);
+        return;
+    }
+    worst = surplus_with(judging, SL_TYPICAL, id, SL_ADVERSE);
+    best = surplus_with(judging, SL_TYPICAL, id, SL_FAVOURABLE);
     input->swing = best - worst;
     if (isnan(input->value.favourable)) {
         input->settles = !another_is_unbounded(result, id);
         return;
     }
-    input->settles = surplus_with(plan, SL_ADVERSE, id, SL_FAVOURABLE) >= 0 ||
-                     surplus_with(plan, SL_FAVOURABLE, id, SL_ADVERSE) < 0;
+    input->settles =
+        surplus_with(judging, SL_FAVOURABLE, id, SL_ADVERSE) < 0 ||
+        (!unbounded(result, SL_IN_RUNNING_TOGETHER) &&
+         surplus_with(judging, SL_ADVERSE, id, SL_FAVOURABLE) >= 0);
 }
 
 /* Settling first, then without bound, then by swing, then by place. */
@@ -120,7 +170,7 @@ static bool matters_more(const struct sl_input *a, const struct sl_input *b)
     return a->swing > b->swing;
 }
 
-static void weigh_unknowns(const struct sl_plan *plan,
+static void weigh_unknowns(const struct sl_judging *judging,
                            struct sl_pump_result *result)
 {
     for (int i = 0; i < SL_INPUT_COUNT; i++) {
@@ -129,7 +179,7 @@ static void weigh_unknowns(const struct sl_plan *plan,
         if (!open_input(input))
             continue;
         input->open = true;
-        weigh(plan, result, input);
+        weigh(judging, result, input);
         if (matters_more(input, result->leading_unknown))
             result->leading_unknown = input;
     }
@@ -184,11 +234,30 @@ static void name_missing(const struct sl_pump_result *result,
         sl_text_addf(text, " %s not known", count == 1 ? "is" : "are");
 }
 
-static void reason_unproven(const struct sl_pump_result *result,
-                            const struct sl_case_notes notes[SL_CORNER_COUNT],
+static const char *curve_end(enum sl_curve_position position)
+{
+    return position == SL_BEFORE_START ? "runs before the first point of its "
+                                         "published curve"
+                                       : "runs past the end of its published "
+                                         "curve";
+}
+
+static void add_off_curve(const struct sl_pump_result *result,
+                          struct sl_text *text)
+{
+    sl_text_addf(text, "%s it %s",
+                 strcmp(result->off_curve_set.words, "alone") == 0
+                     ? "running alone"
+                     : result->off_curve_set.words,
+                 curve_end(result->off_curve_set.position));
+}
+
+static void reason_unproven(const struct sl_judging *judging,
+                            const struct sl_pump_result *result,
                             struct sl_text *text)
 {
     const struct sl_input *leading = result->leading_unknown;
+    const struct sl_outcome *adverse = &judging->tally->adverse.outcome;
 
     name_missing(result, text);
     if (text->length)
@@ -197,14 +266,13 @@ static void reason_unproven(const struct sl_pump_result *result,
         sl_text_add_string(text, "its curve does not reach the discharge "
                                  "level: check curve, speed and levels");
     else if (result->off_curve)
-        sl_text_add_string(text, "running alone it leaves the published end "
-                                 "of its curve");
+        add_off_curve(result, text);
     else if (leading && lacks_bound(leading) && leading->rule[0])
         sl_text_addf(text, "%s: %s", sl_input_words(leading->id),
                      leading->rule);
-    else if (notes[SL_ADVERSE].off_curve)
-        sl_text_add_string(text, "at the adverse end of what is assumed it "
-                                 "leaves the published end of its curve");
+    else if (judging->tally->adverse.counts && adverse->position != SL_ON_CURVE)
+        sl_text_addf(text, "at the adverse end of what is assumed it %s",
+                     curve_end(adverse->position));
     else if (leading)
         sl_text_addf(text, "what is assumed decides, %s most",
                      sl_input_words(leading->id));
@@ -212,32 +280,20 @@ static void reason_unproven(const struct sl_pump_result *result,
         sl_text_add_string(text, "its figures allow no verdict");
 }
 
-static void explain(const struct sl_plan *plan, struct sl_pump_result *result,
-                    const struct sl_case_notes notes[SL_CORNER_COUNT])
+static void explain(const struct sl_judging *judging,
+                    struct sl_pump_result *result)
 {
     struct sl_text text = {0};
 
-    if (result->state == SL_UNPROVEN)
-        reason_unproven(result, notes, &text);
+    if (result->state == SL_UNPROVEN) {
+        reason_unproven(judging, result, &text);
+    } else if (result->off_curve) {
+        sl_text_add_string(&text, "at least: ");
+        add_off_curve(result, &text);
+    }
     result->reason =
-        sl_arena_text(plan->arena, sl_text_string(&text), text.length);
+        sl_arena_text(judging->arena, sl_text_string(&text), text.length);
     sl_text_release(&text);
-}
-
-/* The extra loss that other pumps in a shared pipe may bring: from the
- * losses, which are known where the surplus may not be. */
-static void set_running_together(const struct sl_plan *plan,
-                                 struct sl_pump_result *result)
-{
-    struct sl_input *input = &result->inputs[SL_IN_RUNNING_TOGETHER];
-    const struct sl_terms *alone = &result->cases[SL_TYPICAL].terms;
-    struct sl_case together;
-
-    if (!input->applies)
-        return;
-    together = case_with(plan, SL_TYPICAL, SL_IN_RUNNING_TOGETHER, SL_ADVERSE);
-    input->value.adverse = (alone->friction + alone->minor) -
-                           (together.terms.friction + together.terms.minor);
 }
 
 /* Off its published curve a pump's NPSHR is not known, and where it stands
@@ -250,8 +306,9 @@ static void mark_what_the_curve_lacks(struct sl_pump_result *result)
     if (result->off_curve) {
         npshr->provenance = SL_UNKNOWN;
         npshr->value = sl_no_figure();
-        npshr->rule = "the published curve ends before the flow it runs at "
-                      "alone";
+        npshr->rule = result->off_curve_set.position == SL_BEFORE_START
+                          ? "the published curve begins after a flow it runs at"
+                          : "the published curve ends before a flow it runs at";
     }
     if (result->stands) {
         flow->provenance = SL_UNKNOWN;
@@ -259,56 +316,193 @@ static void mark_what_the_curve_lacks(struct sl_pump_result *result)
     }
 }
 
+/* The loss of the discharge by its pipe at a flow, m. */
+static double discharge_loss(const struct sl_plan *plan,
+                             const struct sl_liquid *liquid, double flow,
+                             enum sl_corner end)
+{
+    const struct sl_delivery *delivery = &plan->delivery;
+    double velocity = sl_pipe_velocity(flow, delivery->bore);
+    double factor = sl_friction_factor(
+        sl_reynolds(velocity, delivery->bore, liquid->viscosity),
+        sl_interval_at(&delivery->roughness, end) / delivery->bore);
+
+    return sl_darcy_head(factor, delivery->length, delivery->bore, velocity) +
+           sl_minor_head(sl_interval_at(&delivery->minor_k, end), velocity);
+}
+
 /* What is known once the flow is solved: the flow, with a larger one on
  * record as its adverse end, and what a discharge known by its pipe loses. */
-static void show_solved_flow(const struct sl_plan *plan,
+static void show_solved_flow(const struct sl_plan *plan, double header_flow,
                              struct sl_pump_result *result)
 {
     const struct sl_number *largest = &plan->pump->record.largest_recorded_flow;
     struct sl_input *flow = &result->inputs[SL_IN_FLOW];
+    struct sl_interval *loss = &result->inputs[SL_IN_DISCHARGE_LOSS].value;
     double solved = result->cases[SL_TYPICAL].flow;
+    struct sl_liquid liquid = sl_liquid_at(
+        plan->salinity, plan->inputs[SL_IN_TEMPERATURE].value.typical);
 
-    if (isnan(plan->delivery.loss_flow)) /* by its pipe, not measured */
-        result->inputs[SL_IN_DISCHARGE_LOSS].value =
-            sl_solve_discharge_loss(plan, solved);
+    if (isnan(plan->delivery.loss_flow)) { /* by its pipe, not measured */
+        loss->typical = discharge_loss(plan, &liquid, header_flow, SL_TYPICAL);
+        loss->adverse = discharge_loss(plan, &liquid, header_flow, SL_ADVERSE);
+        loss->favourable =
+            discharge_loss(plan, &liquid, header_flow, SL_FAVOURABLE);
+    }
     flow->value = sl_exactly(solved);
     if (!(largest->known && largest->value > solved))
         return;
     flow->value.adverse = largest->value;
     flow->kind = SL_KIND_PUMP;
     flow->line = plan->pump->record.line;
-    flow->rule = "solved for running alone; a larger flow is on record";
+    flow->rule = "solved; a larger flow is on record";
 }
 
-void sl_judge(const struct sl_plan *plan, struct sl_pump_result *result)
+static struct sl_set_case set_case(const struct sl_judging *judging,
+                                   const struct sl_tried *tried)
 {
-    struct sl_case_notes notes[SL_CORNER_COUNT];
+    if (!tried->counts)
+        return (struct sl_set_case){.words = NULL};
+    return (struct sl_set_case){.words =
+                                    sl_set_words(judging->layout, tried->counts,
+                                                 judging->pump, judging->arena),
+                                .running = tried->running,
+                                .figures = tried->outcome.figures,
+                                .position = tried->outcome.position,
+                                .stands = tried->outcome.stands,
+                                .two_crossings = tried->outcome.two_crossings};
+}
+
+static void list_sets(const struct sl_judging *judging,
+                      struct sl_pump_result *result)
+{
+    const struct sl_tally *tally = judging->tally;
+    struct sl_set_case *sets =
+        sl_arena_new(judging->arena, tally->list_count, sizeof *sets);
+
+    for (size_t i = 0; i < tally->list_count; i++)
+        sets[i] = set_case(judging, &tally->list[i]);
+    result->sets = sets;
+    result->set_count = tally->list_count;
+}
+
+static void take_sets(const struct sl_judging *judging,
+                      struct sl_pump_result *result)
+{
+    const struct sl_tally *tally = judging->tally;
+
+    result->cases[SL_TYPICAL] = tally->typical.outcome.figures;
+    /* Without an adverse case (it stands wherever all is adverse) none. */
+    result->cases[SL_ADVERSE] =
+        tally->adverse.counts ? tally->adverse.outcome.figures : sl_no_case();
+    result->cases[SL_FAVOURABLE] = tally->favourable.outcome.figures;
+    result->governing = set_case(judging, &tally->typical);
+    result->one_out = set_case(judging, &tally->one_out);
+    result->off_curve_set = set_case(judging, &tally->off_curve);
+    result->adverse_set = set_case(judging, &tally->adverse).words;
+    result->stands_set = set_case(judging, &tally->stands).words;
+    result->sets_tried = tally->sets;
+    result->sets_all = tally->all;
+    result->off_curve = tally->off_curve.counts != NULL;
+    result->stands = !tally->runs && tally->stands.counts;
+    list_sets(judging, result);
+}
+
+/* Flow through the discharge in the governing set. */
+static double header_flow(const struct sl_judging *judging,
+                          struct sl_joint *joint)
+{
+    const struct sl_layout *layout = judging->layout;
+    double sum = 0;
+
+    for (size_t c = 0; c < layout->class_count; c++)
+        if (judging->tally->typical.counts[c])
+            sum += judging->tally->typical.counts[c] * sl_joint_flow(joint, c);
+    return sum;
+}
+
+/* The governing set once more, for what is not kept of every set. */
+static void look_closer(const struct sl_judging *judging,
+                        const struct sl_plan *plan,
+                        struct sl_pump_result *result)
+{
+    struct sl_joint_case typical = {
+        .layout = judging->layout,
+        .counts = judging->tally->typical.counts,
+        .focus = SL_NO_FOCUS,
+        .ends = sl_ends_all(SL_TYPICAL),
+        .liquid = sl_liquid_at(plan->salinity,
+                               plan->inputs[SL_IN_TEMPERATURE].value.typical),
+        .imposed = NAN};
+    struct sl_joint joint;
+
+    sl_joint_solve(&joint, &typical);
+    result->loss_count = plan->path_count;
+    result->losses =
+        sl_arena_new(judging->arena, plan->path_count, sizeof *result->losses);
+    sl_joint_losses(&joint, judging->class, plan, result->losses);
+    if (plan->flow_basis == SL_FLOW_SOLVED)
+        show_solved_flow(plan, header_flow(judging, &joint), result);
+}
+
+void sl_judge(const struct sl_judging *judging, struct sl_pump_result *result)
+{
+    const struct sl_plan *plan = &judging->layout->plans[judging->pump];
 
     *result = (struct sl_pump_result){.pump = plan->pump,
                                       .flow_basis = plan->flow_basis,
-                                      .source_basis = plan->source_basis,
-                                      .loss_count = plan->path_count};
+                                      .source_basis = plan->source_basis};
     memcpy(result->inputs, plan->inputs, sizeof result->inputs);
-    for (int corner = 0; corner < SL_CORNER_COUNT; corner++) {
-        struct sl_ends ends = sl_ends_all((enum sl_corner)corner);
-
-        sl_solve_case(plan, &ends, &result->cases[corner], &notes[corner]);
-    }
-    result->off_curve = notes[SL_TYPICAL].off_curve;
-    result->stands = notes[SL_TYPICAL].stands;
-    result->state = drawn(result->cases);
+    take_sets(judging, result);
+    result->state = drawn(result);
     result->likely = result->state == SL_UNPROVEN
                          ? state_of(&result->cases[SL_TYPICAL])
                          : result->state;
+    look_closer(judging, plan, result);
     mark_what_the_curve_lacks(result);
-    if (plan->flow_basis == SL_FLOW_SOLVED)
-        show_solved_flow(plan, result);
-    set_running_together(plan, result);
     count_inputs(result);
     if (result->state == SL_UNPROVEN)
-        weigh_unknowns(plan, result);
-    explain(plan, result, notes);
+        weigh_unknowns(judging, result);
+    explain(judging, result);
+    sl_judge_rules(judging, result);
+    sl_check_companions(judging, result);
+    sl_find_limits(judging, result);
+}
+
+/* The pipes of an equal pump's own way, which lose as the first one's. */
+static void rename_losses(const struct sl_judging *judging,
+                          const struct sl_plan *plan,
+                          struct sl_pump_result *result)
+{
+    const struct sl_pipe_loss *first = result->losses;
+
     result->losses =
-        sl_arena_new(plan->arena, plan->path_count, sizeof *result->losses);
-    sl_solve_losses(plan, result->cases[SL_TYPICAL].flow, result->losses);
+        sl_arena_new(judging->arena, plan->path_count, sizeof *result->losses);
+    for (size_t i = 0; i < plan->path_count; i++) {
+        result->losses[i] = first[i];
+        result->losses[i].pipe = plan->path[i].pipe;
+    }
+}
+
+void sl_judge_alike(const struct sl_judging *judging,
+                    const struct sl_pump_result *first,
+                    struct sl_pump_result *result)
+{
+    const struct sl_plan *plan = &judging->layout->plans[judging->pump];
+
+    *result = *first;
+    result->pump = plan->pump;
+    for (int i = 0; i < SL_INPUT_COUNT; i++) {
+        struct sl_input *input = &result->inputs[i];
+
+        if (plan->inputs[i].line)
+            input->line = plan->inputs[i].line;
+        else if (input->line) /* a flow of its own, found later */
+            input->line = plan->pump->record.line;
+    }
+    if (first->leading_unknown)
+        result->leading_unknown = &result->inputs[first->leading_unknown->id];
+    take_sets(judging, result);
+    explain(judging, result);
+    rename_losses(judging, plan, result);
 }

@@ -47,6 +47,21 @@ struct sl_input *sl_plan_record(struct sl_plan *plan, enum sl_input_id id,
     return input;
 }
 
+void sl_plan_add(struct sl_plan *plan, enum sl_input_id id, double addition)
+{
+    struct sl_input *input = &plan->inputs[id];
+
+    if (addition == 0 || !input->applies)
+        return;
+    input->value.typical += addition;
+    input->value.adverse += addition;
+    input->value.favourable += addition;
+    if (input->provenance == SL_RECORDED) {
+        input->provenance = SL_DERIVED;
+        input->rule = "as recorded, and what the condition adds";
+    }
+}
+
 struct sl_input *sl_plan_low_or_normal(struct sl_plan *plan,
                                        enum sl_input_id id,
                                        const struct sl_number *low,
@@ -93,6 +108,25 @@ const struct sl_default *sl_default_find(const struct sl_tables *tables,
     return general;
 }
 
+const struct sl_check_limit *sl_check_limit_find(const struct sl_tables *tables,
+                                                 const char *check,
+                                                 const char *circumstance)
+{
+    const struct sl_check_limit *general = NULL;
+
+    for (size_t i = 0; i < tables->limit_count; i++) {
+        const struct sl_check_limit *row = &tables->limits[i];
+
+        if (strcmp(row->check, check) != 0)
+            continue;
+        if (strcmp(row->circumstance, circumstance) == 0)
+            return row;
+        if (row->circumstance[0] == '\0')
+            general = row;
+    }
+    return general;
+}
+
 struct sl_input *sl_plan_default(struct sl_plan *plan, enum sl_input_id id,
                                  const char *field, const char *circumstance)
 {
@@ -130,5 +164,6 @@ void sl_plan_make(struct sl_plan *plan, const struct sl_dossier *dossier,
                                              .rule = "does not apply"};
     sl_plan_source(plan);
     sl_plan_suction(plan);
+    sl_plan_machine(plan);
     sl_plan_delivery(plan);
 }

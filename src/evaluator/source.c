@@ -59,97 +59,6 @@ static void source_kind(struct sl_plan *plan)
     }
 }
 
-/* The lower of two levels of which either may be unknown. */
-static const struct sl_number *lower(const struct sl_number *a,
-                                     const struct sl_number *b)
-{
-    if (!a->known)
-        return b;
-    return b->known && b->value < a->value ? b : a;
-}
-
-/* Sources that no control can keep from falling to their record low; a
- * station whose service is not recorded may be one. */
-static bool natural_source(const struct sl_station *station)
-{
-    return station->service == 0 || station->service == SL_RAW_WATER ||
-           station->service == SL_IRRIGATION || station->service == SL_SEAWATER;
-}
-
-/* The lowest level the audit knows of: what the controls permit; for a
- * natural source also the lowest on record. */
-static const struct sl_number *lowest_level(const struct sl_station *station)
-{
-    if (natural_source(station) || !station->cut_out_level.known)
-        return lower(&station->cut_out_level, &station->record_low_level);
-    return &station->cut_out_level;
-}
-
-static enum sl_source_basis basis_of(const struct sl_station *station,
-                                     const struct sl_number *low)
-{
-    return low == &station->cut_out_level ? SL_SOURCE_CUT_OUT
-                                          : SL_SOURCE_RECORD_LOW;
-}
-
-static void level(struct sl_plan *plan, const struct sl_number *number,
-                  enum sl_source_basis basis, struct sl_interval value,
-                  enum sl_provenance provenance, const char *rule)
-{
-    struct sl_input *input =
-        sl_plan_set(plan, SL_IN_SOURCE_LEVEL, provenance, value, rule);
-
-    plan->source_basis = basis;
-    if (number)
-        input->line = plan->dossier->record.line;
-}
-
-/* A level that is not the lowest is a bound from above: it can prove a pump
- * short, never clear. */
-static void low_level(struct sl_plan *plan)
-{
-    const struct sl_station *station = &plan->dossier->record;
-    const struct sl_number *lowest = lowest_level(station);
-    const struct sl_number *normal = &station->normal_level;
-
-    if (lowest->known &&
-        (station->cut_out_level.known || natural_source(station)))
-        level(plan, lowest, basis_of(station, lowest),
-              sl_exactly(lowest->value), SL_RECORDED, "");
-    else if (lowest->known)
-        level(plan, lowest, SL_SOURCE_RECORD_LOW,
-              (struct sl_interval){lowest->value, NAN, lowest->value},
-              SL_DERIVED,
-              "the lowest on record stands in for the cut-out level, which "
-              "may be lower");
-    else if (normal->known)
-        level(plan, normal, SL_SOURCE_NORMAL,
-              (struct sl_interval){normal->value, NAN, normal->value},
-              SL_DERIVED,
-              "the normal level stands in for the lowest, which is not "
-              "recorded");
-    else
-        level(plan, NULL, SL_SOURCE_UNKNOWN, sl_no_figure(), SL_UNKNOWN,
-              "no source level is recorded");
-}
-
-static void usual_level(struct sl_plan *plan)
-{
-    const struct sl_station *station = &plan->dossier->record;
-    const struct sl_number *low = lowest_level(station);
-
-    if (station->normal_level.known)
-        level(plan, &station->normal_level, SL_SOURCE_NORMAL,
-              sl_exactly(station->normal_level.value), SL_RECORDED, "");
-    else if (low->known)
-        level(plan, low, basis_of(station, low),
-              (struct sl_interval){low->value, low->value, NAN}, SL_DERIVED,
-              "the lowest known level stands in for the normal one");
-    else
-        level(plan, NULL, SL_SOURCE_UNKNOWN, sl_no_figure(), SL_UNKNOWN,
-              "no source level is recorded");
-}
-
 /* Gauge pressure of a tank or main; the other one recorded bounds it. */
 static void pressure(struct sl_plan *plan)
 {
@@ -181,10 +90,7 @@ static void surface(struct sl_plan *plan)
                        station->line, "not recorded");
         return;
     }
-    if (plan->condition->level == SL_LEVEL_LOW)
-        low_level(plan);
-    else
-        usual_level(plan);
+    sl_plan_source_level(plan);
     basis = plan->source_basis;
     if (plan->source_kind == SL_CLOSED)
         pressure(plan);
@@ -199,7 +105,8 @@ static const struct sl_number *level_hint(const struct sl_station *station)
     const struct sl_number *hint = &station->normal_level;
 
     if (!hint->known)
-        hint = lower(&station->cut_out_level, &station->record_low_level);
+        hint =
+            sl_lower_level(&station->cut_out_level, &station->record_low_level);
     return hint->known ? hint : &station->source_pressure_elevation;
 }
 
@@ -271,7 +178,7 @@ static void hold_within(struct sl_interval *value, double low, double high)
             *ends[i] = fmin(fmax(*ends[i], low), high);
 }
 
-static void temperature(struct sl_plan *plan)
+static void recorded_temperature(struct sl_plan *plan)
 {
     const struct sl_station *station = &plan->dossier->record;
     bool summer = plan->condition->summer_temperature;
@@ -293,6 +200,12 @@ static void temperature(struct sl_plan *plan)
         hold_within(&input->value, -INFINITY, station->water_temp_summer.value);
     if (summer && station->water_temp_normal.known)
         hold_within(&input->value, station->water_temp_normal.value, INFINITY);
+}
+
+static void temperature(struct sl_plan *plan)
+{
+    recorded_temperature(plan);
+    sl_plan_add(plan, SL_IN_TEMPERATURE, plan->condition->temperature_addition);
 }
 
 static void gas(struct sl_plan *plan)

@@ -1,131 +1,112 @@
 #include "evaluator/station.h"
 
 #include <math.h>
-#include <stdlib.h>
 
 #include "evaluator/judge.h"
-#include "evaluator/plan.h"
-#include "evaluator/solve.h"
 
-static bool draws_through(const struct sl_dossier_pump *pump,
-                          const struct sl_dossier_pipe *pipe)
-{
-    const struct sl_dossier_pipe *place = pump->suction;
-
-    while (place && place != pipe)
-        place = place->draws_from;
-    return place == pipe;
-}
-
-static int larger_first(const void *a, const void *b)
-{
-    double left = *(const double *)a, right = *(const double *)b;
-
-    return (left < right) - (left > right);
-}
-
-/* How many pumps the controls may run at once: all, where that is not
- * recorded, which can only be worse. */
-static size_t running_max(const struct sl_dossier *dossier)
-{
-    const struct sl_number *most = &dossier->record.pumps_running_max;
-    size_t all = dossier->pump_count + (size_t)dossier->rejected_pumps;
-
-    if (!most->known || most->value >= (double)all)
-        return all;
-    return most->value < 1 ? 1 : (size_t)most->value;
-}
-
-/* The most flow that the other pumps allowed to run beside one pump can
- * bring through a pipe; NaN when one of them has no bound. */
-static double others_flow(const struct sl_plan *plans, size_t pump,
-                          const double *most_flow,
-                          const struct sl_dossier_pipe *pipe)
-{
-    const struct sl_dossier *dossier = plans[pump].dossier;
-    size_t beside = running_max(dossier) - 1, count = 0;
-    double *flows =
-        sl_arena_new(plans[pump].arena, dossier->pump_count, sizeof *flows);
-    double sum = 0;
-
-    if (beside && dossier->rejected_pumps)
-        return NAN; /* it may draw through this pipe, nobody knows how much */
-    for (size_t i = 0; i < dossier->pump_count; i++) {
-        if (i != pump && beside && plans[i].unmeasured == SL_IN_SUCTION_PIPING)
-            return NAN; /* so may one whose suction is not recorded */
-        if (i == pump || !draws_through(&dossier->pumps[i], pipe))
-            continue;
-        if (isnan(most_flow[i]) && beside)
-            return NAN;
-        flows[count++] = most_flow[i];
-    }
-    if (!beside)
-        return 0;
-    qsort(flows, count, sizeof *flows, larger_first);
-    for (size_t i = 0; i < count && i < beside; i++)
-        sum += flows[i];
-    return sum;
-}
-
-static const char *together_rule(const struct sl_dossier *dossier, bool bounded)
+static const char *together_rule(const struct sl_layout *layout,
+                                 const struct sl_dossier *dossier, bool sharing)
 {
     if (dossier->rejected_pumps)
         return "a pump of the station was rejected (see findings.csv); what "
                "it takes from shared pipes is not known";
-    if (!bounded)
-        return "the most that a pump beside it takes from the pipes they "
-               "share is not known";
+    if (layout->neighbour_unknown)
+        return "the suction of a pump beside it is not on record; it may draw "
+               "from the same pipes";
+    if (sharing)
+        return "what a pump beside it draws from the pipes they share is on "
+               "record, not solved";
     if (dossier->record.pumps_running_max.known)
-        return "others that may run beside it, at their largest flow, in the "
-               "pipes they share";
-    return "pumps_running_max is not recorded: all others, at their largest "
-           "flow, in the pipes they share";
+        return "";
+    return "pumps_running_max is not recorded: all of them";
 }
 
-static void share_pipes(struct sl_plan *plans, size_t pump,
-                        const double *most_flow)
+/* Whether a pump may run beside this one that shares its suction and whose
+ * flow is not solved. */
+static bool shares_with_given(const struct sl_layout *layout, size_t class)
 {
-    struct sl_plan *plan = &plans[pump];
-    bool known = plan->dossier->record.pumps_running_max.known;
-    bool shared = false, bounded = true;
+    for (size_t c = 0; c < layout->class_count; c++) {
+        const struct sl_class *other = &layout->classes[c];
 
-    for (size_t i = 0; i < plan->path_count; i++) {
-        double others = others_flow(plans, pump, most_flow, plan->path[i].pipe);
-
-        plan->path[i].others = others;
-        shared = shared || others != 0;
-        bounded = bounded && !isnan(others);
+        if (other->given && other->count > (c == class) &&
+            sl_classes_share(other, &layout->classes[class]))
+            return true;
     }
-    if (shared)
-        sl_plan_set(plan, SL_IN_RUNNING_TOGETHER,
-                    known ? SL_DERIVED : SL_ASSUMED,
-                    (struct sl_interval){0, NAN, 0},
-                    together_rule(plan->dossier, bounded));
+    return false;
+}
+
+/* How many run together is an input like the others. */
+static void set_running_together(const struct sl_layout *layout,
+                                 const struct sl_dossier *dossier, size_t class,
+                                 struct sl_plan *plan)
+{
+    bool known = dossier->record.pumps_running_max.known;
+    bool sharing = layout->at_once > 1 && shares_with_given(layout, class);
+    bool bounded =
+        !sharing && !(layout->neighbour_unknown && plan->path_count > 0);
+    struct sl_interval value = sl_exactly(layout->at_once);
+    struct sl_input *input;
+
+    if (dossier->pump_count + (size_t)dossier->rejected_pumps < 2)
+        return;
+    if (!known)
+        value.favourable = 1;
+    if (!bounded)
+        value.adverse = NAN;
+    input = sl_plan_set(plan, SL_IN_RUNNING_TOGETHER,
+                        !bounded ? SL_UNKNOWN
+                        : known  ? SL_RECORDED
+                                 : SL_ASSUMED,
+                        value, together_rule(layout, dossier, sharing));
+    if (known)
+        input->line = dossier->record.line;
+}
+
+static void judge_class(const struct sl_layout *layout,
+                        const struct sl_tally *tally, size_t class,
+                        struct sl_arena *arena,
+                        struct sl_condition_result *result)
+{
+    const struct sl_class *of = &layout->classes[class];
+    struct sl_pump_result *first = &result->pumps[of->pumps[0]];
+
+    for (int i = 0; i < of->count; i++) {
+        size_t pump = of->pumps[i];
+        struct sl_judging judging = {layout, tally, class, pump, arena};
+
+        if (i == 0)
+            sl_judge(&judging, first);
+        else
+            sl_judge_alike(&judging, first, &result->pumps[pump]);
+    }
 }
 
 static void evaluate_condition(const struct sl_dossier *dossier,
                                const struct sl_condition *condition,
                                const struct sl_tables *tables,
-                               const struct sl_margin_rule *rule,
+                               const struct sl_settings *settings,
                                struct sl_arena *arena,
                                struct sl_condition_result *result)
 {
-    size_t count = dossier->pump_count;
-    struct sl_plan *plans = sl_arena_new(arena, count, sizeof *plans);
-    double *most_flow = sl_arena_new(arena, count, sizeof *most_flow);
+    struct sl_layout layout;
+    struct sl_tally *tallies;
 
     result->condition = condition;
-    result->pump_count = count;
-    result->pumps = sl_arena_new(arena, count, sizeof *result->pumps);
-    for (size_t i = 0; i < count; i++) {
-        sl_plan_make(&plans[i], dossier, &dossier->pumps[i], condition, tables,
-                     rule, arena);
-        most_flow[i] = sl_solve_most_flow(&plans[i]);
-    }
-    for (size_t i = 0; i < count; i++) {
-        share_pipes(plans, i, most_flow);
-        sl_judge(&plans[i], &result->pumps[i]);
-    }
+    result->pump_count = dossier->pump_count;
+    result->pumps =
+        sl_arena_new(arena, dossier->pump_count, sizeof *result->pumps);
+    if (dossier->pump_count == 0)
+        return;
+    sl_layout_make(&layout, dossier, condition, tables, settings->rule,
+                   settings->apart, arena);
+    for (size_t c = 0; c < layout.class_count; c++)
+        for (int i = 0; i < layout.classes[c].count; i++)
+            set_running_together(&layout, dossier, c,
+                                 &layout.plans[layout.classes[c].pumps[i]]);
+    tallies = sl_arena_new(arena, layout.class_count, sizeof *tallies);
+    sl_govern(&layout, settings->list_sets, arena, tallies);
+    for (size_t c = 0; c < layout.class_count; c++)
+        judge_class(&layout, &tallies[c], c, arena, result);
 }
 
 /* Lower is worse; an unknown surplus comes after every known one. */
@@ -150,7 +131,7 @@ static bool is_worse(const struct sl_pump_result *a,
 
 void sl_evaluate_station(const struct sl_dossier *dossier,
                          const struct sl_tables *tables,
-                         const struct sl_margin_rule *rule,
+                         const struct sl_settings *settings,
                          struct sl_arena *arena,
                          struct sl_station_result *result)
 {
@@ -164,8 +145,8 @@ void sl_evaluate_station(const struct sl_dossier *dossier,
     for (size_t c = tables->condition_count; c-- > 0;) {
         struct sl_condition_result *condition = &result->conditions[c];
 
-        evaluate_condition(dossier, &tables->conditions[c], tables, rule, arena,
-                           condition);
+        evaluate_condition(dossier, &tables->conditions[c], tables, settings,
+                           arena, condition);
         for (size_t i = 0; i < condition->pump_count; i++) {
             if (!is_worse(&condition->pumps[i], result->worst))
                 continue;

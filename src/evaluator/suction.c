@@ -5,6 +5,7 @@
 
 #include "base/text.h"
 #include "evaluator/plan.h"
+#include "hydraulics/friction.h"
 #include "hydraulics/minor_loss.h"
 
 static size_t path_length(const struct sl_dossier_pipe *pipe)
@@ -24,10 +25,9 @@ static const struct sl_roughness *material_row(const struct sl_plan *plan,
     return &plan->tables->roughness[material - 1];
 }
 
-/* Roughness from the material's row; where the condition is not recorded,
- * from good to poor. */
-static struct sl_interval by_material(const struct sl_roughness *row,
-                                      int condition)
+/* Roughness as laid, from the material's row; where the condition is not
+ * recorded, from good to poor. */
+static struct sl_interval as_laid(const struct sl_roughness *row, int condition)
 {
     if (condition == SL_GOOD)
         return sl_exactly(row->good);
@@ -38,13 +38,86 @@ static struct sl_interval by_material(const struct sl_roughness *row,
     return (struct sl_interval){row->fair, row->poor, row->good};
 }
 
+/* How fast it grows rougher: the row of its condition, else the one for any. */
+static const struct sl_ageing *ageing_of(const struct sl_plan *plan,
+                                         const char *material, int condition)
+{
+    const struct sl_ageing *general = NULL;
+
+    for (size_t i = 0; i < plan->tables->ageing_count; i++) {
+        const struct sl_ageing *row = &plan->tables->ageing[i];
+
+        if (!sl_same(row->material, material))
+            continue;
+        if (row->condition == condition)
+            return row;
+        if (row->condition == 0)
+            general = row;
+    }
+    return general;
+}
+
+static bool exact(const struct sl_interval *value)
+{
+    return value->adverse == value->favourable;
+}
+
+static struct sl_interval years_since(const struct sl_plan *plan,
+                                      const struct sl_number *year_laid)
+{
+    const struct sl_default *row =
+        sl_default_find(plan->tables, "pipe_age", "");
+
+    if (year_laid->known)
+        return sl_exactly(fmax(0, plan->tables->year - year_laid->value));
+    return row ? row->value : sl_no_figure();
+}
+
+/* No wall is taken for rougher than Colebrook's data reach. */
+#define ROUGHEST_OF_BORE 0.05
+
+static double aged(double laid, double rate, double years, double bore)
+{
+    double roughness = sl_aged_roughness(laid, rate, years);
+
+    if (roughness > ROUGHEST_OF_BORE * bore)
+        return fmax(laid, ROUGHEST_OF_BORE * bore);
+    return roughness;
+}
+
+struct sl_interval sl_plan_roughness(const struct sl_plan *plan, int material,
+                                     int condition,
+                                     const struct sl_number *year_laid,
+                                     double bore, enum sl_friction_state state,
+                                     bool *assumed)
+{
+    const struct sl_roughness *row = material_row(plan, material);
+    const struct sl_ageing *ageing;
+    struct sl_interval laid, years;
+
+    *assumed = true;
+    if (!row)
+        return sl_no_figure();
+    laid = as_laid(row, condition);
+    ageing = ageing_of(plan, row->material, condition);
+    *assumed = !exact(&laid);
+    if (state == SL_FRICTION_NEW || !ageing || ageing->rate.adverse == 0)
+        return laid;
+    years = years_since(plan, year_laid);
+    *assumed = *assumed || !year_laid->known || !exact(&ageing->rate);
+    return (struct sl_interval){
+        aged(laid.typical, ageing->rate.typical, years.typical, bore),
+        aged(laid.adverse, ageing->rate.adverse, years.adverse, bore),
+        aged(laid.favourable, ageing->rate.favourable, years.favourable,
+             bore)}; /* F10 */
+}
+
 /* The surface of one pipe; returns where it comes from. */
 static enum sl_provenance surface_of(const struct sl_plan *plan,
                                      struct sl_path_pipe *place,
                                      const struct sl_default **row)
 {
     const struct sl_pipe *pipe = &place->pipe->record;
-    const struct sl_roughness *material = material_row(plan, pipe->material);
 
     if (pipe->roughness.known) {
         place->roughness = sl_exactly(pipe->roughness.value);
@@ -55,10 +128,14 @@ static enum sl_provenance surface_of(const struct sl_plan *plan,
         place->roughness = sl_no_figure();
         return SL_RECORDED;
     }
-    if (material) {
-        place->roughness = by_material(material, pipe->condition);
-        return pipe->condition || material->good == material->poor ? SL_DERIVED
-                                                                   : SL_ASSUMED;
+    if (pipe->material) {
+        bool assumed;
+
+        place->roughness =
+            sl_plan_roughness(plan, pipe->material, pipe->condition,
+                              &pipe->year_installed, sl_recorded(&pipe->bore),
+                              plan->condition->suction_friction, &assumed);
+        return assumed ? SL_ASSUMED : SL_DERIVED;
     }
     *row = sl_default_find(plan->tables, "suction_roughness", "");
     place->roughness = *row ? (*row)->value : sl_no_figure();
@@ -163,7 +240,8 @@ static const char *surface_rule(enum sl_provenance provenance,
     if (row)
         return row->source;
     if (provenance != SL_RECORDED)
-        return "the roughest pipe of the path, by its material and condition";
+        return "the roughest pipe of the path, by its material, condition "
+               "and age";
     return isnan(worst->typical) ? "C is recorded in its place"
                                  : "the roughest pipe of the path";
 }
@@ -235,8 +313,6 @@ static void fittings(struct sl_plan *plan)
         miss_rejected_fitting(plan);
 }
 
-/* What the pumps that may run beside this one can add to the flow in the
- * pipes they share is set by station.c, which knows their flows. */
 static void piped(struct sl_plan *plan)
 {
     const struct sl_dossier_pipe *pipe = plan->pump->suction;

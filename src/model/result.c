@@ -33,6 +33,40 @@ const char *sl_source_basis_name(enum sl_source_basis basis)
     return basis <= SL_SOURCE_UNKNOWN ? names[basis] : "?";
 }
 
+const char *sl_curve_position_name(enum sl_curve_position position)
+{
+    static const char *const names[] = {"on the curve", "before its start",
+                                        "past its end"};
+
+    return position <= SL_PAST_END ? names[position] : "?";
+}
+
+const char *sl_check_name(enum sl_check_id id)
+{
+    static const char *const names[SL_CHECK_COUNT] = {
+        [SL_CHECK_SUBMERGENCE] = "submergence",
+        [SL_CHECK_OPERATING_REGION] = "operating region",
+        [SL_CHECK_SUCTION_VELOCITY] = "suction velocity",
+        [SL_CHECK_BELL_VELOCITY] = "bell velocity",
+        [SL_CHECK_SUCTION_LIFT] = "suction lift",
+        [SL_CHECK_STRAIGHT_RUN] = "straight run",
+        [SL_CHECK_BOOSTER_PRESSURE] = "suction pressure of a booster",
+        [SL_CHECK_SUCTION_ENERGY] = "suction energy",
+        [SL_CHECK_OFF_CURVE] = "off curve",
+        [SL_CHECK_TWO_CROSSINGS] = "two crossings",
+        [SL_CHECK_ROUGHNESS] = "roughness over bore",
+    };
+
+    return id < SL_CHECK_COUNT ? names[id] : "?";
+}
+
+const char *sl_limit_end_name(enum sl_limit_end end)
+{
+    static const char *const names[] = {"unknown", "found", "none", "always"};
+
+    return end <= SL_LIMIT_ALWAYS ? names[end] : "?";
+}
+
 static const struct {
     const char *column;
     const char *words;
@@ -68,8 +102,9 @@ static const struct {
     [SL_IN_SPEED] = {"max_speed", "its highest speed", SL_SPEED},
     [SL_IN_NPSHR] = {"npshr", "NPSHR at the flow it runs at", SL_LENGTH},
     [SL_IN_RUNNING_TOGETHER] = {"pumps_running_max",
-                                "the losses with other pumps running",
-                                SL_LENGTH},
+                                "how many pumps run at once", SL_PURE},
+    [SL_IN_RULE_MEASURE] = {"suction_nozzle_bore",
+                            "what the margin rule goes by", SL_PURE},
 };
 
 const char *sl_input_column(enum sl_input_id id)

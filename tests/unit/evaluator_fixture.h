@@ -245,7 +245,8 @@ static inline int fixture_teardown(void **state)
 static inline const struct sl_station_result *judge(struct fixture *f)
 {
     sl_arena_reset(&f->arena);
-    sl_evaluate_station(&f->dossier, &f->tables, &f->rule, &f->arena,
+    sl_evaluate_station(&f->dossier, &f->tables,
+                        &(struct sl_settings){.rule = &f->rule}, &f->arena,
                         &f->result);
     return &f->result;
 }

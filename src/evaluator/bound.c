@@ -1,0 +1,404 @@
+#include "evaluator/bound.h"
+
+#include <math.h>
+
+/* Steps of the first grid over a blend, and how often its step is halved
+ * afterwards: to 2^-13 of the interval, with heads flat there. */
+#define GRID 8
+#define HALVINGS 10
+/* Golden sections of an interval: to 0.618^18, 0.0002 of it. */
+#define SECTIONS 18
+#define GOLDEN 0.6180339887498949
+
+struct search {
+    const struct sl_bound_case *of;
+    struct sl_outcome *best;
+    bool any;
+    struct sl_liquid liquid;
+};
+
+/* Whether one outcome lies further toward an end than another; the one
+ * without a figure does, at either end. */
+static bool further(enum sl_corner sense, const struct sl_case *tried,
+                    const struct sl_case *kept)
+{
+    double a = tried->surplus, b = kept->surplus;
+
+    if (isnan(a) && isnan(b)) { /* without an NPSHR, NPSHA still has ends */
+        a = tried->terms.npsha;
+        b = kept->terms.npsha;
+    }
+    if (isnan(a) || isnan(b))
+        return isnan(a) && !isnan(b);
+    return sense == SL_FAVOURABLE ? a > b : a < b;
+}
+
+static double toward(enum sl_corner sense, double a, double b)
+{
+    if (isnan(a) || isnan(b))
+        return NAN;
+    return sense == SL_FAVOURABLE ? fmax(a, b) : fmin(a, b);
+}
+
+/* Each rule keeps its own extreme, beside the outcome that is furthest by
+ * the rule ranked on. */
+static void fold_rules(const struct search *search,
+                       const struct sl_outcome *kept, struct sl_outcome *into)
+{
+    size_t rules = search->of->layout->plans[0].tables->rule_count;
+
+    for (size_t i = 0; i < rules; i++)
+        into->surplus[i] =
+            toward(search->of->sense, into->surplus[i], kept->surplus[i]);
+}
+
+static void keep(struct search *search, struct sl_outcome *tried)
+{
+    if (!search->any) {
+        *search->best = *tried;
+        search->any = true;
+        return;
+    }
+    if (further(search->of->sense, &tried->figures, &search->best->figures)) {
+        fold_rules(search, search->best, tried);
+        *search->best = *tried;
+    } else {
+        fold_rules(search, tried, search->best);
+    }
+}
+
+/* One case; returns its surplus. */
+static double attempt(struct search *search, const struct sl_ends *ends,
+                      const double *given, struct sl_joint *joint)
+{
+    struct sl_joint_case one = {.layout = search->of->layout,
+                                .counts = search->of->counts,
+                                .focus = search->of->class,
+                                .ends = *ends,
+                                .liquid = search->liquid,
+                                .given = given,
+                                .imposed = NAN};
+    struct sl_outcome outcome;
+
+    sl_joint_solve(joint, &one);
+    sl_joint_outcome(joint, search->of->class, &outcome);
+    keep(search, &outcome);
+    return outcome.figures.surplus;
+}
+
+/* Beside the pump looked at. */
+static int beside(const struct sl_bound_case *of, size_t class)
+{
+    return of->counts[class] - (class == of->class);
+}
+
+static bool closed(const struct sl_interval *value)
+{
+    return value->adverse == value->favourable;
+}
+
+/* Whether a suction has figures at its adverse end, and whether it is the
+ * same at both. */
+static void look_at_suction(const struct sl_plan *plan, bool *bounded,
+                            bool *exact)
+{
+    const struct sl_input *minor = &plan->inputs[SL_IN_SUCTION_MINOR];
+
+    if (plan->unmeasured < SL_INPUT_COUNT) {
+        *exact = *exact && closed(&plan->inputs[plan->unmeasured].value);
+        *bounded =
+            *bounded && !isnan(plan->inputs[plan->unmeasured].value.adverse);
+    }
+    if (plan->path_count == 0 && minor->applies)
+        *exact = *exact && closed(&minor->value);
+    for (size_t i = 0; i < plan->path_count; i++) {
+        const struct sl_path_pipe *place = &plan->path[i];
+
+        *exact = *exact && closed(&place->minor_k) &&
+                 (place->hazen_williams || closed(&place->roughness));
+        *bounded = *bounded && !isnan(place->minor_k.adverse) &&
+                   (place->hazen_williams || !isnan(place->roughness.adverse));
+    }
+}
+
+static void others_at(const struct search *search, const struct sl_joint *joint,
+                      double *flows)
+{
+    for (size_t c = 0; c < search->of->layout->class_count; c++)
+        if (beside(search->of, c))
+            flows[c] = sl_joint_other_flow(joint, c);
+}
+
+/* Others at flows between their ends; `part` is 0 at the worst. */
+static double between(struct search *search, const struct sl_ends *ends,
+                      double part, struct sl_joint *joint)
+{
+    const struct sl_layout *layout = search->of->layout;
+
+    for (size_t c = 0; c < layout->class_count; c++)
+        layout->flows[c] =
+            layout->worst_flows[c] +
+            part * (layout->best_flows[c] - layout->worst_flows[c]);
+    return attempt(search, ends, layout->flows, joint);
+}
+
+/* The furthest of a function that bends one way. */
+static void section(struct search *search, const struct sl_ends *ends,
+                    struct sl_joint *joint)
+{
+    double sign = search->of->sense == SL_FAVOURABLE ? 1 : -1;
+    double low = 0, high = 1;
+    double left = high - GOLDEN, right = low + GOLDEN;
+    double at_left = sign * between(search, ends, left, joint);
+    double at_right = sign * between(search, ends, right, joint);
+
+    for (int i = 0; i < SECTIONS; i++) {
+        if (at_left > at_right) {
+            high = right;
+            right = left;
+            at_right = at_left;
+            left = high - GOLDEN * (high - low);
+            at_left = sign * between(search, ends, left, joint);
+        } else {
+            low = left;
+            left = right;
+            at_left = at_right;
+            right = low + GOLDEN * (high - low);
+            at_right = sign * between(search, ends, right, joint);
+        }
+    }
+}
+
+/* The others' suctions: both ends, and the flows between.  Where they have
+ * no adverse end they may draw nothing at all: for the worst that is the set
+ * without them, which is tried too; for the best it bounds the flows. */
+static void over_others(struct search *search, const struct sl_ends *ends,
+                        struct sl_joint *joint)
+{
+    const struct sl_bound_case *of = search->of;
+    const struct sl_layout *layout = of->layout;
+    struct sl_ends at = *ends;
+    bool bounded = true, exact = true;
+    bool middle;
+    double worst = NAN, best;
+
+    for (size_t c = 0; c < of->layout->class_count; c++)
+        if (beside(of, c) > 0)
+            look_at_suction(of->layout->classes[c].plan, &bounded, &exact);
+    if (of->ends.others == SL_TYPICAL || exact) {
+        attempt(search, &at, NULL, joint);
+        return;
+    }
+    at.others = SL_FAVOURABLE;
+    best = attempt(search, &at, NULL, joint);
+    others_at(search, joint, layout->best_flows);
+    at.others = SL_ADVERSE;
+    for (size_t c = 0; c < of->layout->class_count; c++)
+        layout->worst_flows[c] = 0;
+    if (bounded) {
+        worst = attempt(search, &at, NULL, joint);
+        others_at(search, joint, layout->worst_flows);
+    }
+    at.others = SL_FAVOURABLE;
+    if (of->sense == SL_FAVOURABLE) {
+        section(search, &at, joint);
+        return;
+    }
+    middle = bounded && between(search, &at, 0.5, joint) < fmin(worst, best);
+    if (middle)
+        section(search, &at, joint);
+}
+
+static bool suction_open(const struct sl_plan *plan)
+{
+    static const enum sl_input_id source[] = {SL_IN_SOURCE_LEVEL,
+                                              SL_IN_SOURCE_PRESSURE,
+                                              SL_IN_SOURCE_PRESSURE_ELEVATION};
+    bool bounded = true, exact = true;
+
+    for (size_t i = 0; i < sizeof source / sizeof *source; i++)
+        exact = exact && (!plan->inputs[source[i]].applies ||
+                          closed(&plan->inputs[source[i]].value));
+    look_at_suction(plan, &bounded, &exact);
+    return !exact;
+}
+
+static bool discharge_open(const struct sl_plan *plan)
+{
+    const struct sl_delivery *delivery = &plan->delivery;
+
+    if (plan->flow_basis != SL_FLOW_SOLVED)
+        return false;
+    if (!closed(&plan->inputs[SL_IN_DISCHARGE_LEVEL].value))
+        return true;
+    return isnan(delivery->loss_flow) &&
+           !(closed(&delivery->roughness) && closed(&delivery->minor_k));
+}
+
+/* A place in the two blends. */
+struct spot {
+    double suction, discharge;
+};
+
+static double at_spot(struct search *search, const struct sl_ends *ends,
+                      struct spot spot, struct sl_joint *joint)
+{
+    struct sl_ends at = *ends;
+    struct sl_outcome *all = search->best, here;
+    bool any = search->any;
+
+    at.suction_blend = spot.suction;
+    at.discharge_blend = spot.discharge;
+    search->best = &here;
+    search->any = false;
+    over_others(search, &at, joint);
+    search->best = all;
+    search->any = any;
+    keep(search, &here);
+    return here.figures.surplus;
+}
+
+static double within(double blend)
+{
+    return fmin(fmax(blend, 0), 1);
+}
+
+/* From the best of the grid, ever smaller steps. */
+static void refine(struct search *search, const struct sl_ends *ends,
+                   struct spot spot, double surplus, struct sl_joint *joint)
+{
+    double sign = search->of->sense == SL_FAVOURABLE ? 1 : -1;
+    double step = 1.0 / (2 * GRID);
+
+    for (int i = 0; i < HALVINGS; i++, step /= 2)
+        for (int move = 0; move < 4; move++) {
+            double by = move % 2 ? step : -step;
+            struct spot next = {within(spot.suction + (move < 2 ? by : 0)),
+                                within(spot.discharge + (move < 2 ? 0 : by))};
+            double tried;
+
+            if (next.suction == spot.suction &&
+                next.discharge == spot.discharge)
+                continue;
+            tried = at_spot(search, ends, next, joint);
+            if (sign * tried > sign * surplus) {
+                surplus = tried;
+                spot = next;
+            }
+        }
+}
+
+static void over_blends(struct search *search, const struct sl_ends *ends,
+                        int suction_steps, int discharge_steps,
+                        struct sl_joint *joint)
+{
+    double sign = search->of->sense == SL_FAVOURABLE ? 1 : -1;
+    struct spot best = {0, 0};
+    double surplus = NAN;
+
+    for (int s = 0; s <= suction_steps; s++)
+        for (int d = 0; d <= discharge_steps; d++) {
+            struct spot spot = {suction_steps ? (double)s / suction_steps : 0,
+                                discharge_steps ? (double)d / discharge_steps
+                                                : 0};
+            double tried = at_spot(search, ends, spot, joint);
+
+            if (isnan(tried))
+                return; /* and so is the whole */
+            if (isnan(surplus) || sign * tried > sign * surplus) {
+                surplus = tried;
+                best = spot;
+            }
+        }
+    refine(search, ends, best, surplus, joint);
+}
+
+/* All but the temperature. */
+static void at_temperature(struct search *search, double kelvin,
+                           struct sl_joint *joint)
+{
+    const struct sl_bound_case *of = search->of;
+    const struct sl_plan *plan = of->layout->classes[of->class].plan;
+    bool blend =
+        of->sense != SL_TYPICAL && !of->layout->classes[of->class].given;
+    bool turns = !plan->npshr_rises;
+    int suction = blend && (turns || !plan->head_is_steep) && suction_open(plan)
+                      ? GRID
+                      : 0;
+    int discharge = blend && turns && discharge_open(plan) ? GRID : 0;
+
+    search->liquid = sl_liquid_at(plan->salinity, kelvin);
+    if (suction || discharge)
+        over_blends(search, &of->ends, suction, discharge, joint);
+    else
+        over_others(search, &of->ends, joint);
+}
+
+/* Warm water boils sooner, cold water loses more: the surplus bends down on
+ * both sides, so the best may lie between. */
+static void between_temperatures(struct search *search, double low, double high,
+                                 struct sl_joint *joint)
+{
+    for (int i = 0; i < SECTIONS && high - low > 0.05; i++) {
+        double left = high - GOLDEN * (high - low);
+        double right = low + GOLDEN * (high - low);
+        struct sl_outcome *all = search->best, at_left, at_right;
+
+        search->best = &at_left;
+        search->any = false;
+        at_temperature(search, left, joint);
+        search->best = &at_right;
+        search->any = false;
+        at_temperature(search, right, joint);
+        search->best = all;
+        search->any = true;
+        keep(search, &at_left);
+        keep(search, &at_right);
+        if (at_left.figures.surplus > at_right.figures.surplus)
+            high = right;
+        else
+            low = left;
+    }
+}
+
+static void over_temperatures(struct search *search,
+                              const struct sl_interval *warmth,
+                              struct sl_joint *joint)
+{
+    double coldest = fmin(warmth->adverse, warmth->favourable);
+    double warmest = fmax(warmth->adverse, warmth->favourable);
+    double cold, middle;
+
+    at_temperature(search, coldest, joint);
+    cold = search->best->figures.surplus;
+    at_temperature(search, warmest, joint);
+    at_temperature(search, warmth->typical, joint);
+    if (isnan(warmth->adverse) || isnan(warmth->favourable)) {
+        at_temperature(search, NAN, joint);
+        return;
+    }
+    if (search->of->sense != SL_FAVOURABLE)
+        return;
+    /* Most often the coldest is the best, and a little warmer is worse. */
+    at_temperature(search, coldest + 0.05, joint);
+    middle = search->best->figures.surplus;
+    if (middle > cold)
+        between_temperatures(search, coldest, warmest, joint);
+}
+
+void sl_bound(const struct sl_bound_case *of, struct sl_outcome *outcome)
+{
+    const struct sl_class *class = &of->layout->classes[of->class];
+    const struct sl_interval *warmth =
+        &class->plan->inputs[SL_IN_TEMPERATURE].value;
+    enum sl_corner end = of->ends.of[SL_IN_TEMPERATURE];
+    struct search search = {.of = of, .best = outcome};
+    struct sl_joint joint;
+
+    if (!isnan(of->ends.temperature))
+        at_temperature(&search, of->ends.temperature, &joint);
+    else if (end == SL_TYPICAL || closed(warmth))
+        at_temperature(&search, sl_interval_at(warmth, end), &joint);
+    else
+        over_temperatures(&search, warmth, &joint);
+}

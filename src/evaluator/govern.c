@@ -1,0 +1,365 @@
+#include "evaluator/govern.h"
+
+#include <math.h>
+#include <string.h>
+
+struct governing {
+    const struct sl_layout *layout;
+    struct sl_sets *sets;
+    struct sl_arena *arena;
+    struct sl_tally *tallies;
+    bool list_sets;
+};
+
+static const int *copy_counts(const struct governing *all)
+{
+    size_t bytes = all->layout->class_count;
+    int *counts = sl_arena_new(all->arena, bytes, sizeof *counts);
+
+    memcpy(counts, all->sets->counts, bytes * sizeof *counts);
+    return counts;
+}
+
+static void take(const struct governing *all, struct sl_tried *into,
+                 const struct sl_outcome *outcome)
+{
+    into->counts = copy_counts(all);
+    into->running = all->sets->running;
+    into->outcome = *outcome;
+}
+
+/* Less surplus; without an NPSHR, less NPSHA.  A figure before none. */
+static bool worse(const struct sl_case *a, const struct sl_case *b)
+{
+    if (isnan(a->surplus) != isnan(b->surplus))
+        return isnan(b->surplus);
+    if (isnan(a->surplus))
+        return a->terms.npsha < b->terms.npsha;
+    return a->surplus < b->surplus;
+}
+
+/* Each rule's least over the sets, where the rule has a figure. */
+static void fold_rules(const struct governing *all,
+                       const struct sl_outcome *other, struct sl_outcome *into,
+                       bool strict)
+{
+    size_t rules = all->layout->plans[0].tables->rule_count;
+
+    for (size_t i = 0; i < rules; i++) {
+        double a = into->surplus[i], b = other->surplus[i];
+        bool keep = strict ? isnan(a) || a <= b : isnan(b) || a <= b;
+
+        if (keep)
+            continue;
+        into->surplus[i] = b;
+        into->required[i] = other->required[i];
+    }
+}
+
+static void take_worst(const struct governing *all, struct sl_tried *kept,
+                       const struct sl_outcome *outcome, bool strict)
+{
+    bool replace = !kept->counts;
+    struct sl_outcome before;
+
+    if (!replace && strict)
+        replace = !isnan(kept->outcome.figures.surplus) &&
+                  !(kept->outcome.figures.surplus <= outcome->figures.surplus);
+    else if (!replace)
+        replace = worse(&outcome->figures, &kept->outcome.figures);
+    if (!kept->counts) {
+        take(all, kept, outcome);
+        return;
+    }
+    if (!replace) {
+        fold_rules(all, outcome, &kept->outcome, strict);
+        return;
+    }
+    before = kept->outcome;
+    take(all, kept, outcome);
+    fold_rules(all, &before, &kept->outcome, strict);
+}
+
+static void list_set(const struct governing *all, struct sl_tally *tally,
+                     const struct sl_outcome *outcome)
+{
+    if (!all->list_sets)
+        return;
+    if (tally->list_count == tally->list_room) {
+        size_t room = tally->list_room ? 2 * tally->list_room : 8;
+        struct sl_tried *list = sl_arena_new(all->arena, room, sizeof *list);
+
+        if (tally->list_count)
+            memcpy(list, tally->list, tally->list_count * sizeof *list);
+        tally->list = list;
+        tally->list_room = room;
+    }
+    take(all, &tally->list[tally->list_count++], outcome);
+}
+
+static void note_extremes(struct sl_tally *tally,
+                          const struct sl_outcome *outcome)
+{
+    double flow = outcome->figures.flow;
+
+    tally->least_flow = fmin(tally->least_flow, flow);
+    tally->most_flow = fmax(tally->most_flow, flow);
+    tally->most_velocity =
+        fmax(tally->most_velocity, outcome->suction_velocity);
+    tally->least_pressure =
+        fmin(tally->least_pressure, outcome->flange_pressure);
+    tally->two_crossings = tally->two_crossings || outcome->two_crossings;
+}
+
+static void note_typical(const struct governing *all, struct sl_tally *tally,
+                         const struct sl_outcome *outcome)
+{
+    tally->sets++;
+    list_set(all, tally, outcome);
+    if (outcome->stands) {
+        if (!tally->stands.counts)
+            take(all, &tally->stands, outcome);
+        if (!tally->typical.counts)
+            take(all, &tally->typical, outcome);
+        return;
+    }
+    if (!tally->runs)
+        tally->typical.counts = NULL; /* what only stood does not count */
+    tally->runs = true;
+    note_extremes(tally, outcome);
+    if (outcome->position != SL_ON_CURVE && !tally->off_curve.counts)
+        take(all, &tally->off_curve, outcome);
+    take_worst(all, &tally->typical, outcome, false);
+    if (all->sets->running == all->layout->at_once - 1)
+        take_worst(all, &tally->one_out, outcome, false);
+}
+
+static bool no_adverse(const struct sl_tally *tally)
+{
+    return tally->adverse.counts &&
+           isnan(tally->adverse.outcome.figures.surplus);
+}
+
+/* A set in which some other pump's flow comes from its records. */
+static bool beside_given(const struct governing *all, size_t class,
+                         bool *sharing)
+{
+    const struct sl_layout *layout = all->layout;
+    bool given = false;
+
+    *sharing = false;
+    for (size_t c = 0; c < layout->class_count; c++) {
+        const struct sl_class *other = &layout->classes[c];
+
+        if (all->sets->counts[c] <= (c == class) || !other->given)
+            continue;
+        given = true;
+        *sharing = *sharing || c == class ||
+                   sl_classes_share(other, &layout->classes[class]);
+    }
+    return given;
+}
+
+/* The largest flow on record is one it may run at again. */
+static void at_recorded_flow(const struct governing *all, size_t class,
+                             struct sl_outcome *worst)
+{
+    const struct sl_class *of = &all->layout->classes[class];
+    const struct sl_number *largest =
+        &of->plan->pump->record.largest_recorded_flow;
+    struct sl_joint_case imposed = {.layout = all->layout,
+                                    .counts = all->sets->counts,
+                                    .focus = class,
+                                    .ends = sl_ends_all(SL_ADVERSE),
+                                    .imposed = largest->value};
+    const struct sl_interval *warmth =
+        &of->plan->inputs[SL_IN_TEMPERATURE].value;
+    struct sl_outcome outcome;
+    struct sl_joint joint;
+
+    if (all->sets->running > 1 || of->given || !largest->known ||
+        !(worst->figures.flow < largest->value))
+        return;
+    for (int corner = 0; corner < SL_CORNER_COUNT; corner++) {
+        imposed.liquid = sl_liquid_at(
+            of->plan->salinity, sl_interval_at(warmth, (enum sl_corner)corner));
+        sl_joint_solve(&joint, &imposed);
+        sl_joint_outcome(&joint, class, &outcome);
+        if (isnan(outcome.figures.surplus) ||
+            outcome.figures.surplus < worst->figures.surplus)
+            *worst = outcome;
+    }
+}
+
+static void note_adverse(const struct governing *all, size_t class, bool stands)
+{
+    struct sl_tally *tally = &all->tallies[class];
+    struct sl_bound_case of = {.layout = all->layout,
+                               .counts = all->sets->counts,
+                               .class = class,
+                               .ends = sl_ends_all(SL_ADVERSE),
+                               .sense = SL_ADVERSE};
+    const struct sl_class *self = &all->layout->classes[class];
+    struct sl_outcome outcome;
+    bool sharing;
+
+    if (no_adverse(tally))
+        return;
+    if (beside_given(all, class, &sharing) && !sharing)
+        return; /* it only lessens the flow: the set without it is tried */
+    sl_bound(&of, &outcome);
+    if (stands && outcome.stands)
+        return;
+    if (sharing || (all->sets->running > 1 && all->layout->neighbour_unknown &&
+                    self->plan->path_count > 0))
+        outcome.figures.surplus = outcome.figures.margin = NAN;
+    at_recorded_flow(all, class, &outcome);
+    take_worst(all, &tally->adverse, &outcome, true);
+}
+
+static void try_set(const struct governing *all)
+{
+    const struct sl_layout *layout = all->layout;
+    const struct sl_interval *warmth =
+        &layout->plans[0].inputs[SL_IN_TEMPERATURE].value;
+    struct sl_joint_case typical = {
+        .layout = layout,
+        .counts = all->sets->counts,
+        .focus = SL_NO_FOCUS,
+        .ends = sl_ends_all(SL_TYPICAL),
+        .liquid = sl_liquid_at(layout->plans[0].salinity, warmth->typical),
+        .imposed = NAN};
+    struct sl_joint joint;
+
+    sl_joint_solve(&joint, &typical);
+    for (size_t c = 0; c < layout->class_count; c++) {
+        struct sl_outcome outcome;
+
+        if (!all->sets->counts[c])
+            continue;
+        sl_joint_outcome(&joint, c, &outcome);
+        note_typical(all, &all->tallies[c], &outcome);
+        note_adverse(all, c, outcome.stands);
+    }
+}
+
+/* The set whose best can prove a pump short: the one that governs, where it
+ * is sure to occur and its flows are the station's own; else alone. */
+static void favourable_set(const struct governing *all, size_t class,
+                           int *counts)
+{
+    const struct sl_tally *tally = &all->tallies[class];
+    const struct sl_layout *layout = all->layout;
+    bool known = layout->plans[0].dossier->record.pumps_running_max.known;
+    bool sure = tally->runs && (known || tally->typical.running == 1);
+
+    for (size_t c = 0; c < layout->class_count; c++) {
+        counts[c] = tally->typical.counts[c];
+        sure = sure && (counts[c] == (c == class) || !layout->classes[c].given);
+    }
+    if (sure)
+        return;
+    for (size_t c = 0; c < layout->class_count; c++)
+        counts[c] = c == class;
+}
+
+static void find_favourable(struct governing *all, size_t class)
+{
+    struct sl_tally *tally = &all->tallies[class];
+    struct sl_sets one = *all->sets;
+    struct sl_bound_case of = {.layout = all->layout,
+                               .class = class,
+                               .ends = sl_ends_all(SL_FAVOURABLE),
+                               .sense = SL_FAVOURABLE};
+    struct sl_outcome outcome;
+
+    favourable_set(all, class, one.counts);
+    of.counts = one.counts;
+    one.running = 0;
+    for (size_t c = 0; c < all->layout->class_count; c++)
+        one.running += one.counts[c];
+    all->sets = &one;
+    sl_bound(&of, &outcome);
+    take(all, &tally->favourable, &outcome);
+}
+
+/* Flows of each class alone, to choose among the sets of many pumps. */
+static const double *lone_flows(const struct sl_layout *layout,
+                                struct sl_arena *arena)
+{
+    double *flows = sl_arena_new(arena, layout->class_count, sizeof *flows);
+    int *counts = sl_arena_new(arena, layout->class_count, sizeof *counts);
+
+    for (size_t c = 0; c < layout->class_count; c++) {
+        struct sl_bound_case of = {.layout = layout,
+                                   .counts = counts,
+                                   .class = c,
+                                   .ends = sl_ends_all(SL_TYPICAL),
+                                   .sense = SL_TYPICAL};
+        struct sl_outcome outcome;
+
+        counts[c] = 1;
+        sl_bound(&of, &outcome);
+        flows[c] = outcome.figures.flow;
+        counts[c] = 0;
+    }
+    return flows;
+}
+
+static void begin(struct sl_sets *sets, const struct sl_layout *layout,
+                  struct sl_arena *arena)
+{
+    const double *flows = layout->pump_count > SL_EXHAUSTIVE_PUMPS
+                              ? lone_flows(layout, arena)
+                              : NULL;
+
+    sl_sets_begin(sets, layout, flows, arena);
+}
+
+void sl_govern(const struct sl_layout *layout, bool list_sets,
+               struct sl_arena *arena, struct sl_tally *tallies)
+{
+    struct sl_sets sets;
+    struct governing all = {layout, &sets, arena, tallies, list_sets};
+
+    for (size_t c = 0; c < layout->class_count; c++)
+        tallies[c] = (struct sl_tally){.least_flow = NAN,
+                                       .most_flow = NAN,
+                                       .most_velocity = NAN,
+                                       .least_pressure = NAN};
+    begin(&sets, layout, arena);
+    while (sl_sets_next(&sets))
+        try_set(&all);
+    for (size_t c = 0; c < layout->class_count; c++) {
+        tallies[c].all = sets.all;
+        find_favourable(&all, c);
+        all.sets = &sets;
+    }
+}
+
+double sl_least_surplus(const struct sl_layout *layout, size_t class,
+                        const struct sl_ends *ends, struct sl_arena *arena)
+{
+    struct sl_sets sets;
+    double least = NAN;
+
+    begin(&sets, layout, arena);
+    while (sl_sets_next(&sets)) {
+        struct sl_bound_case of = {.layout = layout,
+                                   .counts = sets.counts,
+                                   .class = class,
+                                   .ends = *ends,
+                                   .sense = SL_TYPICAL};
+        struct sl_outcome outcome;
+
+        if (!sets.counts[class])
+            continue;
+        sl_bound(&of, &outcome);
+        if (outcome.stands)
+            continue;
+        if (isnan(outcome.figures.surplus))
+            return NAN;
+        least = fmin(least, outcome.figures.surplus);
+    }
+    return least;
+}

@@ -1,0 +1,78 @@
+/* What the margin rules ask for. */
+#include <math.h>
+
+#include "evaluator/joint.h"
+#include "hydraulics/npsh.h"
+
+bool sl_rule_applies(const struct sl_margin_rule *rule,
+                     const struct sl_plan *plan)
+{
+    return rule->make_up == 0 || rule->make_up == plan->pump->record.make_up;
+}
+
+double sl_rule_measure(const struct sl_margin_rule *rule,
+                       const struct sl_plan *plan,
+                       const struct sl_case *figures)
+{
+    switch (rule->measure) {
+    case SL_MEASURE_SUCTION_ENERGY:
+        return plan->suction_energy;
+    case SL_MEASURE_SUCTION_SPECIFIC_SPEED:
+        return plan->suction_specific_speed;
+    case SL_MEASURE_SUCTION_LIFT:
+        /* On a main there is no surface to lift from. */
+        return plan->source_kind == SL_MAIN ? 0 : 0 - figures->terms.elevation;
+    case SL_MEASURE_NONE:
+        break;
+    }
+    return 0;
+}
+
+static double asked_by(const struct sl_margin_tier *tier, double npshr)
+{
+    return sl_required_npsha(npshr, tier->ratio, tier->floor);
+}
+
+/* The tier of a measure; of an unknown one the strictest at the adverse end,
+ * the mildest at the favourable one, and none that is likely. */
+static double required_by_tier(const struct sl_margin_rule *rule,
+                               double measure, enum sl_corner corner,
+                               double npshr)
+{
+    double required = asked_by(&rule->tiers[0], npshr);
+
+    if (isnan(measure) && corner == SL_TYPICAL)
+        return NAN;
+    for (size_t i = 1; i < rule->tier_count; i++) {
+        double asked = asked_by(&rule->tiers[i], npshr);
+
+        if (measure > rule->tiers[i].over)
+            required = asked;
+        if (isnan(measure))
+            required = corner == SL_ADVERSE ? fmax(required, asked)
+                                            : fmin(required, asked);
+    }
+    return required;
+}
+
+void sl_rule_apply(const struct sl_margin_rule *rule,
+                   const struct sl_plan *plan, enum sl_corner corner,
+                   const struct sl_case *figures, double *required,
+                   double *surplus)
+{
+    const struct sl_terms *terms = &figures->terms;
+    double lift = 0 - terms->elevation - terms->friction - terms->minor;
+
+    *required = figures->npshr; /* a rule that is not about it asks nothing */
+    if (sl_rule_applies(rule, plan) && rule->tier_count)
+        *required = required_by_tier(rule, sl_rule_measure(rule, plan, figures),
+                                     corner, figures->npshr);
+    *surplus = terms->npsha - *required;
+    if (!sl_rule_applies(rule, plan) || isnan(rule->lift_limit))
+        return;
+    /* Suction lift, its losses and NPSHR together within the limit. */
+    *surplus = isnan(*surplus)
+                   ? NAN
+                   : fmin(*surplus, rule->lift_limit - lift - figures->npshr);
+    *required = terms->npsha - *surplus;
+}
