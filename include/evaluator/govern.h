@@ -11,6 +11,14 @@ struct sl_tried {
     struct sl_outcome outcome;
 };
 
+/* As many sets are solved anew for the limits: those of least surplus. */
+#define SL_LEAST_SETS 64
+
+struct sl_least {
+    const int *counts;
+    double surplus; /* typical; NaN comes before all figures */
+};
+
 /* What was found over the sets that a class runs in. */
 struct sl_tally {
     struct sl_tried typical;    /* least surplus; without any, the first set */
@@ -25,6 +33,8 @@ struct sl_tally {
     /* Over all sets, typical. */
     double least_flow, most_flow, most_velocity, least_pressure;
     bool two_crossings;
+    struct sl_least *least; /* of the sets it delivers in, the least first */
+    size_t least_count;
     struct sl_tried *list; /* every set, on demand */
     size_t list_count, list_room;
 };
@@ -33,9 +43,11 @@ struct sl_tally {
 void sl_govern(const struct sl_layout *layout, bool list_sets,
                struct sl_arena *arena, struct sl_tally *tallies);
 
-/* The least typical surplus of a class over all its sets with the ends
- * given: NaN where some set in which it delivers has no figure. */
+/* The least typical surplus of a class at the ends given, over the sets that
+ * its tally holds as the least: NaN where one in which it delivers has no
+ * figure. */
 double sl_least_surplus(const struct sl_layout *layout, size_t class,
-                        const struct sl_ends *ends, struct sl_arena *arena);
+                        const struct sl_tally *tally,
+                        const struct sl_ends *ends);
 
 #endif

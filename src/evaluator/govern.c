@@ -97,6 +97,26 @@ static void list_set(const struct governing *all, struct sl_tally *tally,
     take(all, &tally->list[tally->list_count++], outcome);
 }
 
+/* Keeps the sets of least surplus, in order. */
+static void note_least(const struct governing *all, struct sl_tally *tally,
+                       double surplus)
+{
+    size_t place = tally->least_count;
+
+    while (place > 0 &&
+           (isnan(surplus) ? !isnan(tally->least[place - 1].surplus)
+                           : surplus < tally->least[place - 1].surplus)) {
+        if (place < SL_LEAST_SETS)
+            tally->least[place] = tally->least[place - 1];
+        place--;
+    }
+    if (place == SL_LEAST_SETS)
+        return;
+    tally->least[place] = (struct sl_least){copy_counts(all), surplus};
+    if (tally->least_count < SL_LEAST_SETS)
+        tally->least_count++;
+}
+
 static void note_extremes(struct sl_tally *tally,
                           const struct sl_outcome *outcome)
 {
@@ -127,6 +147,7 @@ static void note_typical(const struct governing *all, struct sl_tally *tally,
         tally->typical.counts = NULL; /* what only stood does not count */
     tally->runs = true;
     note_extremes(tally, outcome);
+    note_least(all, tally, outcome->figures.surplus);
     if (outcome->position != SL_ON_CURVE && !tally->off_curve.counts)
         take(all, &tally->off_curve, outcome);
     take_worst(all, &tally->typical, outcome, false);
@@ -235,7 +256,8 @@ static void try_set(const struct governing *all)
     for (size_t c = 0; c < layout->class_count; c++) {
         struct sl_outcome outcome;
 
-        if (!all->sets->counts[c])
+        /* Of many pumps each set is about one class alone. */
+        if (!all->sets->counts[c] || (!all->sets->all && c != all->sets->about))
             continue;
         sl_joint_outcome(&joint, c, &outcome);
         note_typical(all, &all->tallies[c], &outcome);
@@ -323,10 +345,13 @@ void sl_govern(const struct sl_layout *layout, bool list_sets,
     struct governing all = {layout, &sets, arena, tallies, list_sets};
 
     for (size_t c = 0; c < layout->class_count; c++)
-        tallies[c] = (struct sl_tally){.least_flow = NAN,
-                                       .most_flow = NAN,
-                                       .most_velocity = NAN,
-                                       .least_pressure = NAN};
+        tallies[c] =
+            (struct sl_tally){.least_flow = NAN,
+                              .most_flow = NAN,
+                              .most_velocity = NAN,
+                              .least_pressure = NAN,
+                              .least = sl_arena_new(arena, SL_LEAST_SETS,
+                                                    sizeof(struct sl_least))};
     begin(&sets, layout, arena);
     while (sl_sets_next(&sets))
         try_set(&all);
@@ -338,22 +363,19 @@ void sl_govern(const struct sl_layout *layout, bool list_sets,
 }
 
 double sl_least_surplus(const struct sl_layout *layout, size_t class,
-                        const struct sl_ends *ends, struct sl_arena *arena)
+                        const struct sl_tally *tally,
+                        const struct sl_ends *ends)
 {
-    struct sl_sets sets;
     double least = NAN;
 
-    begin(&sets, layout, arena);
-    while (sl_sets_next(&sets)) {
+    for (size_t i = 0; i < tally->least_count; i++) {
         struct sl_bound_case of = {.layout = layout,
-                                   .counts = sets.counts,
+                                   .counts = tally->least[i].counts,
                                    .class = class,
                                    .ends = *ends,
                                    .sense = SL_TYPICAL};
         struct sl_outcome outcome;
 
-        if (!sets.counts[class])
-            continue;
         sl_bound(&of, &outcome);
         if (outcome.stands)
             continue;

@@ -1,5 +1,6 @@
 /* How far one thing may go until the rule is just met: the whole station is
- * solved anew at each step, all else at its typical value. */
+ * solved anew at each step, all else at its typical value, in the sets of
+ * least surplus. */
 #include <math.h>
 
 #include "evaluator/judge.h"
@@ -55,8 +56,8 @@ static double surplus_at(const struct limit_search *search, double value)
             ends.level_shift = value;
         else
             ends.temperature = value;
-        surplus = sl_least_surplus(judging->layout, judging->class, &ends,
-                                   judging->arena);
+        surplus = sl_least_surplus(judging->layout, judging->class,
+                                   judging->tally, &ends);
     }
     return isnan(surplus) ? -INFINITY : surplus;
 }
