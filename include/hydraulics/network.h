@@ -9,6 +9,11 @@
  * Equal pumps on equal branches are one unit: they run at the same flow and
  * are not solved twice.  A pipe that each of them has for itself is `own`.
  *
+ * Where every curve falls and every loss grows with flow there is one
+ * solution.  A curve that rises somewhere may allow several: then no pump is
+ * left at a flow where, the others held, it could run at a larger one, if
+ * that can be; equal pumps then run alike only as one unit.
+ *
  * Pure numbers: no heap, no state.  SI throughout. */
 #ifndef SL_HYDRAULICS_NETWORK_H
 #define SL_HYDRAULICS_NETWORK_H
@@ -29,10 +34,12 @@
 
 struct sl_network_pipe {
     int draws_from;   /* a pipe before it in the list; -1: the source itself */
-    bool own;         /* each pump of its one unit has such a pipe for itself */
+    bool own;         /* each pump of its one unit has such a pipe for itself;
+                         no shared pipe draws from it, unless that unit is
+                         of one pump */
     double length;    /* [m] >= 0; 0: fittings only */
     double bore;      /* [m] > 0 */
-    double roughness; /* [m] >= 0; not used with a C */
+    double roughness; /* [m] >= 0; not used with a C, nor where length is 0 */
     double hazen_williams_c; /* NaN: by roughness (F7, F8); else F9 */
     double minor_k;          /* of V²/2g in its bore, >= 0 (F24) */
 };
@@ -43,7 +50,8 @@ struct sl_network_unit {
     double given_flow;         /* [m³/s] >= 0; NaN: sought */
     int count;                 /* equal pumps, >= 1 */
     int pipe;                  /* the last of its suction; -1: none */
-    double fixed_loss;         /* [m] >= 0 of its suction, at any flow > 0 */
+    double fixed_loss;         /* [m] >= 0 of its suction, at any flow > 0 and
+                                  in what it must overcome to start */
 };
 
 struct sl_network {
@@ -72,9 +80,9 @@ enum sl_unit_end {
 struct sl_unit_flow {
     double flow; /* of one pump [m³/s] */
     enum sl_unit_end end;
-    /* Its curve rises somewhere, and at the flows of the others this pump's
-     * head also meets the system's at a smaller flow: the larger one is
-     * given. */
+    /* Its curve rises somewhere, and at the flows of the others (of its
+     * equals too) this pump's head also meets the system's at a smaller flow:
+     * the larger one is given. */
     bool two_crossings;
     double suction_loss; /* [m] friction, fittings and fixed, to the pump */
     double residual;     /* [m] pump's head less what is asked; 0 standing */
@@ -83,7 +91,8 @@ struct sl_unit_flow {
 enum sl_network_end {
     SL_NETWORK_SOLVED,
     /* Finished, but look: flows stand where laminar flow ends in some pipe,
-     * and the residual lies within the jump of head there. */
+     * to 2e-9 of its flow, and the residual lies within the jump of head
+     * there. */
     SL_NETWORK_AT_JUMP,
     /* Some pump's curve does not come down to the system's head within
      * SL_NETWORK_REACH. */
@@ -91,7 +100,8 @@ enum sl_network_end {
     /* The caps on steps were reached: an error in this file. */
     SL_NETWORK_NOT_FOUND,
     /* A curve that is not usable or starts below flow 0, an index out of
-     * place, or too many units. */
+     * place, a count below 1, an own pipe that others use, or too many units
+     * or pipes. */
     SL_NETWORK_BAD_INPUT,
     /* A head or loss is not a number at some flow: a NaN among the values,
      * or out of a formula's range. */
@@ -100,8 +110,12 @@ enum sl_network_end {
 const char *sl_network_end_name(enum sl_network_end end);
 
 /* Solves it.
+ * in   start  a guess of the flows, one a unit, or NULL.  It saves steps and
+ *      changes no more than the last digits.  A figure that is no flow on or
+ *      left of the unit's curve is not used; nor is any where a curve rises,
+ *      for it might lead to another solution.
  * out  flows, one a unit, written only for SOLVED and AT_JUMP
- * start  a guess of the flows, one a unit, or NULL */
+ * For SOLVED each residual is under 1e-9 m, mostly rounding. */
 enum sl_network_end sl_network_solve(const struct sl_network *network,
                                      const double *start,
                                      struct sl_unit_flow *flows);

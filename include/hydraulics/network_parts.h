@@ -17,7 +17,8 @@ struct sl_network_work {
     size_t sought[SL_NETWORK_UNITS]; /* the units whose flow is sought */
     size_t sought_count;
     double most[SL_NETWORK_UNITS]; /* the reach of each sought one [m³/s] */
-    bool rises[SL_NETWORK_UNITS];  /* its curve does somewhere */
+    /* The flow from which on its curve falls; NaN: it falls throughout. */
+    double falls_from[SL_NETWORK_UNITS];
 
     size_t used[SL_NETWORK_PIPES]; /* the pipes on the way of some unit */
     size_t used_count;
@@ -43,9 +44,12 @@ struct sl_network_work {
 };
 
 /* Checks the network, and sets all of `work` up to `ramps`, which is off.
- * SOLVED or BAD_INPUT. */
+ * SOLVED, BAD_INPUT or, where a flow or loss given is no number, NO_FIGURE. */
 enum sl_network_end sl_network_prepare(const struct sl_network *network,
                                        struct sl_network_work *work);
+
+/* Whether its curve rises somewhere. */
+bool sl_network_rises(const struct sl_network_work *work, size_t unit);
 
 /* The flows to start from: those given, else those of `start` where it has
  * a possible one, else one on each curve. */
@@ -107,10 +111,10 @@ enum sl_network_search sl_network_newton(struct sl_network_work *work,
                                          int weighings);
 
 /* Unit after unit, each by sl_operating_point_find with the others held,
- * round and round.  For curves that do not rise it gets there from
- * everywhere, if slowly (with `ramps`; without, or with one unit, it may
- * stop at a jump). */
-enum sl_network_search sl_network_sweep(struct sl_network_work *work);
+ * round and round, `most` times at the most.  For curves that do not rise it
+ * gets there from everywhere, if slowly (with `ramps`; without, or with one
+ * unit, it may stop at a jump). */
+enum sl_network_search sl_network_sweep(struct sl_network_work *work, int most);
 
 /* The larger flow at which one pump's head falls through the system's, all
  * others held, or its own flow where there is none larger.  NaN: no figure. */

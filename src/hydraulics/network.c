@@ -11,12 +11,13 @@
 #define WEIGHINGS_RAMPED 300
 /* Times that rising curves are looked over again. */
 #define ROUNDS_MOST 16
+/* Sweeps that let the others settle beside one that was moved, and those
+ * after which sweeping is given up. */
+#define SWEEPS_TO_SETTLE 30
+#define SWEEPS_MOST 3000
 /* A flow that is this share of a curve's reach is nought or rounding, and
  * one that is this near to a curve's end is at it. */
 #define ROUNDING_SHARE 1e-14
-/* Where on a curve that does not rise the search starts, as a share of its
- * last flow. */
-#define START_SHARE 0.6
 
 const char *sl_network_end_name(enum sl_network_end end)
 {
@@ -37,111 +38,6 @@ const char *sl_network_end_name(enum sl_network_end end)
     return "unknown end";
 }
 
-static bool rises_somewhere(const struct sl_curve_view *curve)
-{
-    size_t i;
-
-    for (i = 1; i < curve->count; i++)
-        if (curve->y[i] > curve->y[i - 1])
-            return true;
-    return false;
-}
-
-static bool prepare_pipes(const struct sl_network *network,
-                          struct sl_network_work *work)
-{
-    size_t i;
-
-    for (i = 0; i < network->pipe_count; i++) {
-        int from = network->pipes[i].draws_from;
-
-        if (from < -1 || from >= (int)i)
-            return false;
-        work->fed[i] = 0;
-    }
-    return true;
-}
-
-static bool prepare_unit(const struct sl_network *network, size_t i,
-                         struct sl_network_work *work)
-{
-    const struct sl_network_unit *unit = &network->units[i];
-    int pipe;
-
-    if (unit->count < 1 || unit->pipe < -1 ||
-        unit->pipe >= (int)network->pipe_count)
-        return false;
-    for (pipe = unit->pipe; pipe >= 0; pipe = network->pipes[pipe].draws_from)
-        work->fed[pipe] |= (uint64_t)1 << i;
-    if (!isnan(unit->given_flow))
-        return true;
-    if (!sl_curve_usable(&unit->head) || unit->head.x[0] < 0.0)
-        return false;
-    work->sought[work->sought_count++] = i;
-    work->most[i] = SL_NETWORK_REACH * unit->head.x[unit->head.count - 1];
-    work->rises[i] = rises_somewhere(&unit->head);
-    return true;
-}
-
-/* An own pipe has one unit, and feeds no pipe that several pumps share. */
-static bool own_pipe_fits(const struct sl_network *network, size_t i,
-                          uint64_t fed)
-{
-    const struct sl_network_pipe *pipe = &network->pipes[i];
-    size_t unit = 0;
-
-    if (pipe->own)
-        return (fed & (fed - 1)) == 0;
-    if (pipe->draws_from < 0 || !network->pipes[pipe->draws_from].own)
-        return true;
-    while (!(fed >> unit & 1))
-        unit++;
-    return network->units[unit].count == 1;
-}
-
-enum sl_network_end sl_network_prepare(const struct sl_network *network,
-                                       struct sl_network_work *work)
-{
-    size_t i;
-
-    work->network = network;
-    work->ramps = false;
-    work->used_count = work->sought_count = 0;
-    if (network->unit_count > SL_NETWORK_UNITS ||
-        network->pipe_count > SL_NETWORK_PIPES || !prepare_pipes(network, work))
-        return SL_NETWORK_BAD_INPUT;
-    for (i = 0; i < network->unit_count; i++)
-        if (!prepare_unit(network, i, work))
-            return SL_NETWORK_BAD_INPUT;
-    for (i = 0; i < network->pipe_count; i++) {
-        if (work->fed[i] == 0)
-            continue;
-        if (!own_pipe_fits(network, i, work->fed[i]))
-            return SL_NETWORK_BAD_INPUT;
-        work->used[work->used_count++] = i;
-    }
-    return SL_NETWORK_SOLVED;
-}
-
-void sl_network_begin(struct sl_network_work *work, const double *start)
-{
-    const struct sl_network *network = work->network;
-    size_t i;
-
-    for (i = 0; i < network->unit_count; i++)
-        work->flow[i] = network->units[i].given_flow;
-    for (i = 0; i < work->sought_count; i++) {
-        size_t unit = work->sought[i];
-        double last = work->most[unit] / SL_NETWORK_REACH;
-
-        /* Down from the end of a curve that rises, for the larger root. */
-        work->flow[unit] = work->rises[unit] ? last : last * START_SHARE;
-        if (start && !work->rises[unit] && start[unit] > 0.0 &&
-            start[unit] <= last)
-            work->flow[unit] = start[unit];
-    }
-}
-
 /* Newton's method; where it stalls, with heads made continuous; where that
  * stalls too, sweeps, and Newton's method from where they end. */
 static enum sl_network_search balance(struct sl_network_work *work)
@@ -151,14 +47,14 @@ static enum sl_network_search balance(struct sl_network_work *work)
     if (ended != SL_SEARCH_STALLED)
         return ended;
     if (work->sought_count == 1)
-        return sl_network_sweep(work);
+        return sl_network_sweep(work, SWEEPS_MOST);
     work->ramps = true;
     if (!sl_network_weigh(work))
         return SL_SEARCH_NO_FIGURE;
     ended = sl_network_newton(work, WEIGHINGS_RAMPED);
     if (ended != SL_SEARCH_STALLED)
         return ended;
-    ended = sl_network_sweep(work);
+    ended = sl_network_sweep(work, SWEEPS_MOST);
     if (ended == SL_SEARCH_NO_FIGURE)
         return ended;
     return sl_network_newton(work, WEIGHINGS_RAMPED);
@@ -176,14 +72,27 @@ static bool move_to_larger(struct sl_network_work *work)
     for (i = 0; i < work->sought_count; i++) {
         size_t unit = work->sought[i];
 
-        larger[i] = work->rises[unit] ? sl_network_larger(work, unit)
-                                      : work->flow[unit];
+        larger[i] = sl_network_rises(work, unit) ? sl_network_larger(work, unit)
+                                                 : work->flow[unit];
     }
     for (i = 0; i < work->sought_count; i++) {
         moved = moved || larger[i] != work->flow[work->sought[i]];
         work->flow[work->sought[i]] = larger[i];
     }
     return moved;
+}
+
+/* Balances after units were moved to a larger flow.  Newton's step may take
+ * them off it again, where it is narrow; so, at the second time, the others
+ * make room first. */
+static enum sl_network_search balance_from_there(struct sl_network_work *work,
+                                                 int round)
+{
+    if (!sl_network_weigh(work) ||
+        (round > 0 &&
+         sl_network_sweep(work, SWEEPS_TO_SETTLE) == SL_SEARCH_NO_FIGURE))
+        return SL_SEARCH_NO_FIGURE;
+    return balance(work);
 }
 
 /* Balances until no unit has a larger flow to run at.  Two pumps that each
@@ -205,7 +114,7 @@ static enum sl_network_search balance_at_larger(struct sl_network_work *work)
         }
         if (!move_to_larger(work))
             return ended;
-        ended = sl_network_weigh(work) ? balance(work) : SL_SEARCH_NO_FIGURE;
+        ended = balance_from_there(work, round);
     }
     if (ended == SL_SEARCH_NO_FIGURE || total < 0.0)
         return ended;
@@ -282,29 +191,14 @@ static void report(const struct sl_network_work *work, size_t i,
 
     flow->flow = work->flow[i];
     flow->end = end_of(unit, flow->flow);
-    flow->two_crossings = sought && flow->flow > 0.0 && work->rises[i] &&
+    flow->two_crossings = sought && flow->flow > 0.0 &&
+                          sl_network_rises(work, i) &&
                           sl_network_crosses_twice(work, i);
     flow->suction_loss = flow->flow > 0.0 ? unit->fixed_loss : 0.0;
     for (pipe = unit->pipe; pipe >= 0;
          pipe = work->network->pipes[pipe].draws_from)
         flow->suction_loss += work->pipe_loss[pipe];
     flow->residual = sought && flow->flow > 0.0 ? -work->lack[i] : 0.0;
-}
-
-static bool known(const struct sl_network *network)
-{
-    size_t i;
-
-    for (i = 0; i < network->unit_count; i++) {
-        const struct sl_network_unit *unit = &network->units[i];
-
-        if (!(unit->fixed_loss >= 0.0 && isfinite(unit->fixed_loss)))
-            return false;
-        if (!isnan(unit->given_flow) &&
-            !(unit->given_flow >= 0.0 && isfinite(unit->given_flow)))
-            return false;
-    }
-    return true;
 }
 
 /* How a search that did not fail ended, with flows weighed as they are. */
@@ -333,8 +227,6 @@ solve(const struct sl_network *network, const double *start,
 
     if (end != SL_NETWORK_SOLVED)
         return end;
-    if (!known(network))
-        return SL_NETWORK_NO_FIGURE;
     sl_network_begin(&work, start);
     if (!sl_network_weigh(&work) ||
         (work.sought_count > 0 && search(&work) == SL_SEARCH_NO_FIGURE))
@@ -358,7 +250,7 @@ static enum sl_network_search sweep_ramped(struct sl_network_work *work)
     work->ramps = work->sought_count > 1;
     if (!sl_network_weigh(work))
         return SL_SEARCH_NO_FIGURE;
-    return sl_network_sweep(work);
+    return sl_network_sweep(work, SWEEPS_MOST);
 }
 
 enum sl_network_end sl_network_solve_by_sweeps(const struct sl_network *network,

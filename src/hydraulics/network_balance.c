@@ -2,7 +2,6 @@
 #include <float.h>
 #include <math.h>
 
-#include "hydraulics/constants.h"
 #include "hydraulics/friction.h"
 #include "hydraulics/minor_loss.h"
 #include "hydraulics/network_parts.h"
@@ -33,7 +32,7 @@ static struct bore bore_of_delivery(const struct sl_network *network)
 /* The flow at which laminar flow ends; NaN where the pipe has no such. */
 static double jump_flow(const struct bore *pipe, double viscosity)
 {
-    if (!isnan(pipe->c))
+    if (!isnan(pipe->c) || pipe->length == 0.0)
         return NAN;
     return SL_LAMINAR_BELOW * viscosity /
            (pipe->bore * sl_pipe_velocity(1.0, pipe->bore)); /* F23 */
@@ -52,6 +51,8 @@ static struct sl_loss friction(const struct bore *pipe, double viscosity,
     struct sl_loss below, above;
     double jump, width, slope;
 
+    if (pipe->length == 0.0)
+        return (struct sl_loss){0.0, 0.0};
     if (!isnan(pipe->c))
         return sl_hazen_williams_loss(flow, pipe->c, pipe->length, pipe->bore);
     jump = ramps ? jump_flow(pipe, viscosity) : NAN;
@@ -68,11 +69,9 @@ static struct sl_loss friction(const struct bore *pipe, double viscosity,
 /* Multiples of V²/2g. */
 static struct sl_loss minor(double k, double bore, double flow)
 {
-    double velocity = sl_pipe_velocity(flow, bore);
+    double head = sl_minor_head(k, sl_pipe_velocity(flow, bore));
 
-    return (struct sl_loss){sl_minor_head(k, velocity),
-                            k * velocity * sl_pipe_velocity(1.0, bore) /
-                                SL_GRAVITY}; /* F24 */
+    return (struct sl_loss){head, flow > 0.0 ? 2.0 * head / flow : 0.0};
 }
 
 static struct sl_loss pipe_loss(const struct bore *pipe, double viscosity,

@@ -690,6 +690,15 @@ static void test_jump(void **state)
         check_end("at the step", solve(&network, at), SL_NETWORK_AT_JUMP);
         total = at[0].flow + (count == 2 ? at[1].flow : 0.0);
         check_close("total flow", total, jump_flow, 2e-9, 0.0);
+        if (count == 1) {
+            struct sl_system system = {one_pump_asked, &network};
+            struct sl_operating_point point;
+
+            assert_int_equal(
+                sl_operating_point_find(&units[0].head, &system, 0.0, &point),
+                SL_OPERATING_FOUND);
+            check_close("as for one pump", at[0].flow, point.flow, 1e-15, 0.0);
+        }
         lack = fabs(at[0].residual);
         assert_true(lack > 0.01);
         assert_true(lack < jumps_on_way(&network, 0));
@@ -773,6 +782,43 @@ static void check_balance(const struct station *s,
         if (out[i].end != SL_UNIT_STANDS && end == SL_NETWORK_SOLVED)
             check_close("residual", out[i].residual, -lack, 0.0, 1e-12);
     }
+}
+
+/* One pump's flow varied, the others' as they are. */
+struct varied {
+    const struct sl_network *network;
+    struct sl_unit_flow flows[STATION_UNITS];
+    size_t unit;
+};
+
+static double varied_asked(void *context, double flow)
+{
+    struct varied *v = context;
+
+    v->flows[v->unit].flow = flow;
+    return lack_of(v->network, v->flows, v->unit) +
+           sl_curve_carried_on(&v->network->units[v->unit].head, flow);
+}
+
+/* Of each pump that is alone in its unit; how many were looked at. */
+static int check_none_larger(const struct station *s,
+                             const struct sl_unit_flow *out)
+{
+    int looked_at = 0;
+
+    for (size_t i = 0; i < s->network.unit_count; i++) {
+        struct varied varied = {.network = &s->network, .unit = i};
+        struct sl_system system = {varied_asked, &varied};
+        struct sl_operating_point point = {0};
+
+        if (s->units[i].count > 1 || !isnan(s->units[i].given_flow))
+            continue;
+        memcpy(varied.flows, out, s->network.unit_count * sizeof *out);
+        sl_operating_point_find(&s->units[i].head, &system, 0.0, &point);
+        check_close("none larger", point.flow, out[i].flow, 1e-9, 1e-12);
+        looked_at++;
+    }
+    return looked_at;
 }
 
 /* The same units in another order. */
@@ -869,6 +915,7 @@ static void test_random_stations(void **state)
     static struct station s;
     struct sl_unit_flow out[STATION_UNITS];
     int ends[4] = {0}, solved = 0, swept = 0, rising = 0, twice = 0;
+    int looked_at = 0;
 
     (void)state;
     for (int i = 0; i < 4000; i++) {
@@ -879,6 +926,8 @@ static void test_random_stations(void **state)
         solved++;
         check_balance(&s, out, SL_NETWORK_SOLVED);
         check_permuted(&s, out);
+        if (s.rises)
+            looked_at += check_none_larger(&s, out);
         check_from_elsewhere(&seed, &s, out);
         if (!s.rises) /* else equal pumps may balance unequally too */
             check_split(&s, out);
@@ -893,7 +942,7 @@ static void test_random_stations(void **state)
         }
     }
     assert_true(solved > 3990 && swept > 300);
-    assert_true(rising > 300 && twice > 10);
+    assert_true(rising > 300 && twice > 10 && looked_at > 300);
     for (size_t end = 0; end < COUNT(ends); end++)
         assert_true(ends[end] > 300);
 }
