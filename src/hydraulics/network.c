@@ -95,6 +95,16 @@ static enum sl_network_search balance_from_there(struct sl_network_work *work,
     return balance(work);
 }
 
+/* A set of one, and not where its curve falls: F20's own search says what
+ * is to be taken for a crossing there. */
+static bool is_one_short_of_fall(const struct sl_network_work *work)
+{
+    size_t unit = work->sought[0];
+
+    return work->sought_count == 1 && work->network->units[unit].count == 1 &&
+           work->flow[unit] < work->falls_from[unit];
+}
+
 /* Balances until no unit has a larger flow to run at.  Two pumps that each
  * can run only where the other does not have no such balance; then the one
  * of the largest total met stands. */
@@ -105,6 +115,8 @@ static enum sl_network_search balance_at_larger(struct sl_network_work *work)
     size_t i;
     int round;
 
+    if (ended != SL_SEARCH_NO_FIGURE && is_one_short_of_fall(work))
+        return sl_network_sweep(work, 1);
     for (round = 0; round < ROUNDS_MOST && ended == SL_SEARCH_SETTLED;
          round++) {
         if (work->total > total) {

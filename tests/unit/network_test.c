@@ -29,6 +29,7 @@ static const double weak_heads[] = {21.3, 20.7, 18.4, 15.1, 8.2};
 static const double droop_heads[] = {27.3, 30.2, 31.1, 27.6, 16.4};
 static const double late_flows[] = {0.02, 0.031, 0.044, 0.07};
 static const double late_heads[] = {31.7, 29.9, 26.2, 15.3};
+static const double late_droop_heads[] = {26.1, 30.4, 27.2, 15.3};
 static const double flat_heads[] = {33.1, 33.1, 33.1, 33.1, 33.1};
 
 /* A shared pipe, one that draws from it, and an own one behind that. */
@@ -197,7 +198,8 @@ static void test_a_set_of_one_is_the_operating_point(void **state)
 {
     const struct sl_network_unit units[] = {
         unit_of(flows, heads, 5), unit_of(flows, weak_heads, 5),
-        unit_of(flows, droop_heads, 5), unit_of(late_flows, late_heads, 4)};
+        unit_of(flows, droop_heads, 5), unit_of(late_flows, late_heads, 4),
+        unit_of(late_flows, late_droop_heads, 4)};
     int ends[SL_OPERATING_BAD_SYSTEM + 1] = {0};
 
     (void)state;
