@@ -1,6 +1,5 @@
 #include "hydraulics/network.h"
 
-#include <float.h>
 #include <math.h>
 
 #include "hydraulics/network_parts.h"
