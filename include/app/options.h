@@ -7,7 +7,7 @@
 #include "base/status.h"
 #include "base/units.h"
 
-#define SL_VERSION "0.1.0"
+#define SL_VERSION "0.2.0"
 
 enum sl_command {
     SL_COMMAND_NONE,

@@ -22,6 +22,23 @@ struct sl_pump_row {
     enum sl_source_basis source_basis;
     bool off_curve;
     bool stands;
+    /* Over all running sets; each set in words, "" where there is none. */
+    const char *running_set; /* the one that governs */
+    const char *adverse_set;
+    const char *one_out_set;
+    const char *off_curve_set;
+    const char *stands_set;
+    int running; /* pumps in the one that governs */
+    long long sets_tried;
+    bool sets_all; /* those are all the controls allow */
+    double one_out_margin, one_out_surplus; /* m */
+    enum sl_curve_position curve_position;  /* in off_curve_set */
+    bool two_crossings;
+    const char *flags; /* names of the checks that are beyond, "; " between */
+    /* A letter a rule of the summary: S, T, U, C as enum sl_state, or - where
+     * it does not apply; "" when they were not kept. */
+    const char *rule_states;
+    struct sl_limit limits[SL_LIMIT_COUNT];
     struct sl_case cases[SL_CORNER_COUNT];
     double altitude;                         /* m, NaN when unknown */
     double temperature;                      /* K, typical */
@@ -73,6 +90,14 @@ struct sl_set_aside_row {
     const char *reason;
 };
 
+/* A margin rule, and what it says of the pumps, each by its worst condition.
+ */
+struct sl_rule_row {
+    struct sl_margin_rule rule; /* no tiers: the store no longer holds it */
+    long long pumps_by_state[SL_STATE_COUNT];
+    long long pumps_apart; /* that it is not about */
+};
+
 /* The audit as a whole. */
 struct sl_summary {
     const char *label; /* of the vintage */
@@ -82,7 +107,10 @@ struct sl_summary {
     long long stations_by_state[SL_STATE_COUNT];
     long long pumps_by_state[SL_STATE_COUNT];
     long long stations_without_pumps;
-    struct sl_margin_rule rule;
+    int year; /* of the audit: pipes are as old as that makes them */
+    struct sl_margin_rule rule;      /* ranked on */
+    const struct sl_rule_row *rules; /* every one judged by, in order */
+    size_t rule_count;
     const struct sl_condition *conditions;
     size_t condition_count;
     struct sl_file_sum sums[SL_KIND_COUNT];

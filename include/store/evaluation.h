@@ -30,6 +30,10 @@ enum sl_status sl_store_find_evaluation(struct sl_store *store,
 enum sl_status sl_store_add_evaluation(struct sl_store *store,
                                        struct sl_evaluation *evaluation,
                                        struct sl_error *error);
+/* The margin rules the evaluation judges by; before any result. */
+enum sl_status sl_store_add_rules(struct sl_store *store, long long evaluation,
+                                  const struct sl_tables *tables,
+                                  struct sl_error *error);
 /* One station's results: its pumps' cases, unknowns, defaults used. */
 enum sl_status sl_store_add_result(struct sl_store *store, long long evaluation,
                                    const struct sl_station_result *result,

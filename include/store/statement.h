@@ -19,6 +19,7 @@
 #include "base/memory.h"
 #include "base/status.h"
 #include "model/records.h"
+#include "model/result.h"
 #include "model/tables.h"
 #include "model/vocabulary.h"
 #include "store/catalogue.h"
@@ -78,6 +79,8 @@ struct sl_store {
     long long counted_evaluation;
     struct sl_default_uses *uses;
     size_t use_count, use_capacity;
+    /* By state, and behind them those a rule is not about; likewise. */
+    long long rule_pumps[SL_RULES_MOST][SL_STATE_COUNT + 1];
 };
 
 /* What SQLite last said about this store, as our status and message; `sql`
@@ -87,7 +90,8 @@ enum sl_status sl_store_fault(const struct sl_store *store, const char *sql,
 /* Run a text of one or more statements. */
 enum sl_status sl_store_execute(struct sl_store *store, const char *sql,
                                 struct sl_error *error);
-/* Write the counted uses of defaults (evaluation.c). */
+/* Write the counted uses of defaults and what was counted by each rule
+ * (evaluation.c). */
 enum sl_status sl_store_write_uses(struct sl_store *store,
                                    struct sl_error *error);
 /* Bring the file to the newest version; refuse one that is not ours. */

@@ -16,7 +16,12 @@ SELECT
     r.surplus_favourable, r.atmosphere, r.barometer, r.gauge, r.elevation,
     r.velocity, r.friction, r.minor, r.vapour, r.gas, r.altitude,
     r.temperature, r.recorded, r.derived, r.assumed, r.unknown,
-    r.leading_unknown
+    r.leading_unknown,
+    r.running_set, r.running, r.sets_tried, r.sets_all, r.adverse_set,
+    r.one_out_set, r.one_out_margin, r.one_out_surplus, r.curve_position,
+    r.off_curve_set, r.stands_set, r.two_crossings, r.flags, r.rule_states,
+    r.limit_level, r.limit_level_end, r.limit_temperature,
+    r.limit_temperature_end, r.limit_flow, r.limit_flow_end
 FROM station_results AS t
 JOIN stations AS s ON s.station = t.station
 LEFT JOIN pumps AS p ON p.pump = t.worst_pump

@@ -69,5 +69,8 @@ enum sl_status sl_run_evaluate(struct sl_run *run, struct sl_error *error)
     if (status || found)
         return status;
     status = sl_store_add_evaluation(run->store, &run->evaluation, error);
+    if (!status)
+        status = sl_store_add_rules(run->store, run->evaluation.evaluation,
+                                    &run->tables, error);
     return status ? status : evaluate_all(run, rule, error);
 }

@@ -1,5 +1,6 @@
 #include "store/evaluation.h"
 
+#include "store/sets.h"
 #include "store/statement.h"
 
 enum sl_status sl_store_find_evaluation(struct sl_store *store,
@@ -48,6 +49,37 @@ enum sl_status sl_store_add_evaluation(struct sl_store *store,
     return status;
 }
 
+static enum sl_status add_rule(struct sl_store *store, long long evaluation,
+                               size_t place, const struct sl_margin_rule *rule,
+                               struct sl_error *error)
+{
+    const char trust[] = {rule->trust, '\0'};
+    struct sl_statement *statement = NULL;
+    enum sl_status status = sl_statement_use(
+        store, SL_QUERY_ADD_EVALUATION_RULE, &statement, error);
+
+    if (status)
+        return status;
+    sl_bind_whole(statement, "evaluation", evaluation);
+    sl_bind_whole(statement, "place", (long long)place);
+    sl_bind_text(statement, "rule", rule->rule);
+    sl_bind_text(statement, "edition", rule->edition);
+    sl_bind_text(statement, "source", rule->source);
+    sl_bind_text(statement, "trust", trust);
+    return sl_statement_run(statement, error);
+}
+
+enum sl_status sl_store_add_rules(struct sl_store *store, long long evaluation,
+                                  const struct sl_tables *tables,
+                                  struct sl_error *error)
+{
+    enum sl_status status = SL_OK;
+
+    for (size_t i = 0; !status && i < tables->rule_count; i++)
+        status = add_rule(store, evaluation, i + 1, &tables->rules[i], error);
+    return status;
+}
+
 static enum sl_status write_use(struct sl_store *store,
                                 const struct sl_default_uses *use,
                                 struct sl_error *error)
@@ -75,5 +107,5 @@ enum sl_status sl_store_write_uses(struct sl_store *store,
             return status;
     }
     store->use_count = 0;
-    return SL_OK;
+    return sl_store_write_rule_counts(store, error);
 }

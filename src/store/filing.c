@@ -5,6 +5,7 @@
 #include "base/text.h"
 #include "store/cases.h"
 #include "store/evaluation.h"
+#include "store/sets.h"
 #include "store/statement.h"
 
 static void count_use(struct sl_store *store, const struct sl_default *row)
@@ -98,6 +99,7 @@ static enum sl_status add_pump(const struct sl_filing *filing,
                                const struct sl_pump_result *pump)
 {
     struct sl_statement *statement = NULL;
+    struct sl_sets_room room = {0};
     enum sl_status status = sl_statement_use(
         filing->store, SL_QUERY_ADD_PUMP_RESULT, &statement, filing->error);
 
@@ -114,13 +116,16 @@ static enum sl_status add_pump(const struct sl_filing *filing,
     sl_bind_whole(statement, "stands", pump->stands);
     sl_bind_cases(statement, pump->cases);
     bind_inputs(statement, pump);
+    sl_bind_sets(statement, pump, &room);
     for (int i = 0; i < SL_INPUT_COUNT; i++) {
         if (pump->inputs[i].row)
             count_use(filing->store, pump->inputs[i].row);
         if (pump->inputs[i].other)
             count_use(filing->store, pump->inputs[i].other);
     }
-    return sl_statement_run(statement, filing->error);
+    status = sl_statement_run(statement, filing->error);
+    sl_sets_room_release(&room);
+    return status;
 }
 
 static const char *what_it_rests_on(const struct sl_input *input)
@@ -241,6 +246,7 @@ static enum sl_status add_all(const struct sl_filing *filing)
         enum sl_state state = state_over_all(result, i);
 
         counts[state]++;
+        sl_count_rules(filing->store, result, i);
         if (state == SL_UNPROVEN)
             status = add_unknowns(filing, i);
     }

@@ -9,6 +9,7 @@
 #include "base/text.h"
 #include "store/cases.h"
 #include "store/evaluation.h"
+#include "store/sets.h"
 #include "store/statement.h"
 
 /* The value whose name is `word`; the last value when there is no word, as
@@ -84,6 +85,7 @@ static void read_pump(struct sl_statement *row, struct sl_pump_row *pump)
                                     source_basis_word, SL_SOURCE_UNKNOWN);
     pump->off_curve = sl_read_whole(row, "off_curve") != 0;
     pump->stands = sl_read_whole(row, "stands") != 0;
+    sl_read_sets(row, pump);
     sl_read_cases(row, pump->cases);
     pump->altitude = sl_read_number(row, "altitude");
     pump->temperature = sl_read_number(row, "temperature");

@@ -111,6 +111,7 @@ static void forget_pending(struct sl_store *store)
     store->recall_station = 0;
     store->counted_evaluation = 0;
     store->use_count = 0;
+    memset(store->rule_pumps, 0, sizeof store->rule_pumps);
 }
 
 void sl_store_rollback(struct sl_store *store)

@@ -26,6 +26,7 @@ static enum sl_status read_head(struct sl_store *store, struct sl_arena *arena,
         return sl_error_set(error, SL_BUG, "there is no evaluation %lld",
                             summary->evaluation);
     summary->vintage = sl_read_whole(statement, "vintage");
+    summary->year = (int)sl_read_whole(statement, "year");
     summary->label = sl_read_filled(statement, "label", arena);
     summary->inventory_sha256 =
         sl_read_filled(statement, "inventory_sha256", arena);
@@ -53,10 +54,57 @@ static enum sl_status read_rule(struct sl_store *store, struct sl_arena *arena,
     return status;
 }
 
+static const char *const pumps[SL_STATE_COUNT] = {
+    "pumps_short", "pumps_thin", "pumps_unproven", "pumps_clear"};
+
+/* As it was judged by; its tiers are those of the rule of that name. */
+static void read_judged(struct sl_statement *row, struct sl_arena *arena,
+                        const struct sl_margin_rule *known, size_t count,
+                        struct sl_rule_row *judged)
+{
+    const char *name = sl_read_filled(row, "rule", arena);
+
+    judged->rule = (struct sl_margin_rule){.lift_limit = NAN};
+    for (size_t i = 0; i < count; i++)
+        if (sl_same(known[i].rule, name))
+            judged->rule = known[i];
+    judged->rule.rule = name;
+    judged->rule.edition = sl_read_filled(row, "edition", arena);
+    judged->rule.source = sl_read_filled(row, "source", arena);
+    judged->rule.trust = sl_read_text(row, "trust")[0];
+    for (int state = 0; state < SL_STATE_COUNT; state++)
+        judged->pumps_by_state[state] = sl_read_whole(row, pumps[state]);
+    judged->pumps_apart = sl_read_whole(row, "pumps_apart");
+}
+
+static enum sl_status read_rules(struct sl_store *store, struct sl_arena *arena,
+                                 struct sl_summary *summary,
+                                 struct sl_error *error)
+{
+    struct sl_rule_row *rules =
+        sl_arena_new(arena, SL_RULES_MOST, sizeof *rules);
+    struct sl_margin_rule *known = NULL;
+    struct sl_statement *statement = NULL;
+    size_t count = 0;
+    bool row = false;
+    enum sl_status status = sl_read_rules(store, summary->vintage, NULL, arena,
+                                          &known, &count, error);
+
+    if (!status)
+        status =
+            sl_statement_use_for(store, SL_QUERY_EVALUATION_RULES, "evaluation",
+                                 summary->evaluation, &statement, error);
+    while (!status && !(status = sl_statement_step(statement, &row, error)) &&
+           row)
+        if (summary->rule_count < SL_RULES_MOST)
+            read_judged(statement, arena, known, count,
+                        &rules[summary->rule_count++]);
+    summary->rules = rules;
+    return status;
+}
+
 static void add_counts(struct sl_statement *row, struct sl_summary *summary)
 {
-    static const char *const pumps[SL_STATE_COUNT] = {
-        "pumps_short", "pumps_thin", "pumps_unproven", "pumps_clear"};
     const char *word = sl_read_text(row, "state");
     int state = 0;
 
@@ -98,10 +146,15 @@ enum sl_status sl_store_read_summary(struct sl_store *store,
         .conditions = summary->conditions,
         .condition_count = summary->condition_count,
     };
-    enum sl_status status = read_head(store, arena, &read, error);
+    enum sl_status status = sl_store_write_uses(store, error);
+
+    if (!status)
+        status = read_head(store, arena, &read, error);
 
     if (!status)
         status = read_rule(store, arena, &read, error);
+    if (!status)
+        status = read_rules(store, arena, &read, error);
     if (!status)
         status = read_counts(store, &read, error);
     if (!status)

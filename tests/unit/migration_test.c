@@ -50,7 +50,7 @@ static void evaluations_stay_and_get_the_year_of_their_import(void **state)
     make_store_of(f, 3);
     file_does(f, evaluated);
     bring_up_to_date(f);
-    assert_int_equal(file_says(f, "PRAGMA user_version"), 7);
+    assert_int_equal(file_says(f, "PRAGMA user_version"), 8);
     assert_int_equal(
         file_says(f, "SELECT year FROM evaluations WHERE evaluation = 7"),
         2024);
@@ -129,6 +129,36 @@ static void an_owners_rows_stay(void **state)
     check_close("ours", t->rules[6].tiers[0].floor, 0.75, 0, 0);
 }
 
+/* Nothing is made up for what an older program did not keep. */
+static void results_of_an_older_program_have_no_sets(void **state)
+{
+    struct fixture *f = *state;
+
+    make_store_of(f, 7);
+    file_does(f, "INSERT INTO vintages VALUES"
+                 "(1, '2024', 'aa', '2024-07-03T10:00:00Z');"
+                 "INSERT INTO stations (station, vintage, line, station_id)"
+                 "VALUES (1, 1, 2, 'S');"
+                 "INSERT INTO pumps (pump, vintage, line, station, pump_id,"
+                 "station_id) VALUES (1, 1, 2, 1, 'P', 'S');"
+                 "INSERT INTO evaluations VALUES"
+                 "(7, 1, '0.1.0', 'fixed head', 2024);"
+                 "INSERT INTO pump_results (evaluation, station, pump,"
+                 "condition, state, likely, reason, flow_basis, source_basis,"
+                 "off_curve, stands, recorded, derived, assumed, unknown)"
+                 "VALUES (7, 1, 1, 'normal', 'thin', 'thin', 'why', 'solved',"
+                 "'normal level', 0, 0, 1, 2, 3, 4);");
+    bring_up_to_date(f);
+    assert_int_equal(
+        file_says(f, "SELECT count(*) FROM pump_results WHERE recorded = 1 "
+                     "AND coalesce(running_set, running, sets_tried, sets_all,"
+                     "flags, rule_states, limit_level_end) IS NULL"),
+        1);
+    assert_int_equal(file_says(f, "SELECT count(*) FROM rule_verdicts"), 0);
+    assert_int_equal(
+        file_says(f, "SELECT lowest_level_end IS NULL FROM pump_limits"), 1);
+}
+
 #define IN_FOLDER(test)                                                        \
     cmocka_unit_test_setup_teardown(test, fixture_folder, fixture_end)
 
@@ -139,6 +169,7 @@ int main(void)
         IN_FOLDER(results_still_need_their_evaluation),
         IN_FOLDER(an_untouched_store_comes_to_what_a_new_one_has),
         IN_FOLDER(an_owners_rows_stay),
+        IN_FOLDER(results_of_an_older_program_have_no_sets),
     };
 
     return cmocka_run_group_tests_name("migration", tests, NULL, NULL);

@@ -365,6 +365,150 @@ static void a_result_comes_back_whole(void **state)
     sl_text_release(&seen.texts);
 }
 
+/* Every set, check, rule and limit told, each with a value of its own. */
+static void fill_sets(struct fixture *f, struct sl_pump_result *result)
+{
+    result->governing = (struct sl_set_case){
+        "with P-2, P-3", 3, {.flow = 1}, SL_ON_CURVE, false, false};
+    result->one_out =
+        (struct sl_set_case){.words = "with any 1 of P-2, P-3",
+                             .running = 2,
+                             .figures = {.margin = 1.31, .surplus = -0.19}};
+    result->off_curve_set = (struct sl_set_case){
+        .words = "alone", .running = 1, .position = SL_PAST_END};
+    result->adverse_set = "with P-3";
+    result->stands_set = "with P-2";
+    result->sets_tried = 6;
+    result->sets_all = true;
+    result->checks[SL_CHECK_SUBMERGENCE].end = SL_CHECK_BEYOND;
+    result->checks[SL_CHECK_SUCTION_LIFT].end = SL_CHECK_UNKNOWN;
+    result->checks[SL_CHECK_STRAIGHT_RUN].end = SL_CHECK_WITHIN;
+    result->checks[SL_CHECK_TWO_CROSSINGS].end = SL_CHECK_BEYOND;
+    result->limits[SL_LIMIT_LEVEL] = (struct sl_limit){SL_LIMIT_FOUND, 1204.37};
+    result->limits[SL_LIMIT_TEMPERATURE] =
+        (struct sl_limit){SL_LIMIT_NONE, 300.5};
+    result->limits[SL_LIMIT_FLOW] = (struct sl_limit){SL_LIMIT_ALWAYS, NAN};
+    result->rule_count = f->tables.rule_count;
+    result->rules =
+        sl_arena_new(&f->arena, result->rule_count, sizeof *result->rules);
+    for (size_t i = 0; i < result->rule_count; i++)
+        result->rules[i] = (struct sl_rule_verdict){
+            .rule = &f->tables.rules[i],
+            .applies = i != 4,
+            .state = (enum sl_state)(i % SL_STATE_COUNT)};
+}
+
+static enum sl_status tell_sets(void *context, const struct sl_pump_row *row,
+                                struct sl_error *error)
+{
+    struct sl_text *text = context;
+
+    (void)error;
+    sl_text_addf(text, "%s|%d|%lld|%d|%s|%s|%.2f|%.2f|", row->running_set,
+                 row->running, row->sets_tried, row->sets_all, row->adverse_set,
+                 row->one_out_set, row->one_out_margin, row->one_out_surplus);
+    sl_text_addf(text, "%s|%s|%s|%d|%s|%s",
+                 sl_curve_position_name(row->curve_position),
+                 row->off_curve_set, row->stands_set, row->two_crossings,
+                 row->flags, row->rule_states);
+    for (int i = 0; i < SL_LIMIT_COUNT; i++)
+        sl_text_addf(text, "|%s %.2f", sl_limit_end_name(row->limits[i].end),
+                     row->limits[i].value);
+    sl_text_add_string(text, "\n");
+    return SL_OK;
+}
+
+static void the_sets_come_back_whole(void **state)
+{
+    struct fixture *f = *state;
+    struct evaluated e = begin(f);
+    struct sl_text text = {NULL, 0, 0};
+    struct made made;
+
+    make(&e, &made, "A", 12, 1);
+    fill_sets(f, &made.results[1][0]);
+    file(&e, &made);
+    must(f, sl_store_each_pump(f->store, e.evaluation, tell_sets, &text,
+                               &f->error));
+    assert_string_equal(
+        sl_text_string(&text),
+        "|0|0|0|||nan|nan|on the curve|||0|||"
+        "unknown nan|unknown nan|unknown nan\n"
+        "with P-2, P-3|3|6|1|with P-3|with any 1 of P-2, P-3|1.31|-0.19|"
+        "past its end|alone|with P-2|1|submergence; two crossings|STUC-T|"
+        "found 1204.37|none nan|always nan\n");
+    sl_text_release(&text);
+}
+
+static void rules_are_told_and_their_pumps_counted(void **state)
+{
+    struct fixture *f = *state;
+    struct evaluated e = begin(f);
+    struct sl_summary summary = {.version = "0.1"};
+    struct made made;
+
+    must(f, sl_store_add_rules(f->store, e.evaluation, &f->tables, &f->error));
+    make(&e, &made, "A", 12, 2);
+    for (int c = 0; c < 2; c++)
+        for (int p = 0; p < 2; p++)
+            fill_sets(f, &made.results[c][p]);
+    /* The worst condition counts, whichever it is. */
+    made.results[0][0].rules[3].state = SL_THIN;
+    made.results[1][1].rules[3].state = SL_SHORT;
+    file(&e, &made);
+    must(f, sl_store_read_summary(f->store, e.evaluation, &f->arena, &summary,
+                                  &f->error));
+    assert_int_equal(summary.year, 2026);
+    assert_int_equal(summary.rule_count, f->tables.rule_count);
+    for (size_t i = 0; i < summary.rule_count; i++) {
+        assert_string_equal(summary.rules[i].rule.rule,
+                            f->tables.rules[i].rule);
+        assert_string_equal(summary.rules[i].rule.source,
+                            f->tables.rules[i].source);
+        assert_int_equal(summary.rules[i].rule.trust, f->tables.rules[i].trust);
+        assert_int_equal(summary.rules[i].rule.tier_count,
+                         f->tables.rules[i].tier_count);
+    }
+    assert_int_equal(summary.rules[0].pumps_by_state[SL_SHORT], 2);
+    assert_int_equal(summary.rules[2].pumps_by_state[SL_UNPROVEN], 2);
+    assert_int_equal(summary.rules[3].pumps_by_state[SL_THIN], 1);
+    assert_int_equal(summary.rules[3].pumps_by_state[SL_SHORT], 1);
+    assert_int_equal(summary.rules[3].pumps_by_state[SL_CLEAR], 0);
+    assert_int_equal(summary.rules[4].pumps_apart, 2);
+    must(f, sl_store_commit(f->store, &f->error));
+    assert_int_equal(
+        file_says(f, "SELECT sum(pumps_short + pumps_thin + pumps_unproven + "
+                     "pumps_clear + pumps_apart) FROM evaluation_rules"),
+        (long long)(2 * f->tables.rule_count));
+    assert_int_equal(file_says(f, "SELECT count(*) FROM rule_verdicts WHERE "
+                                  "state = 'does not apply'"),
+                     4);
+    assert_int_equal(file_says(f, "SELECT count(*) FROM pump_limits WHERE "
+                                  "lowest_level_m = 1204.37 AND "
+                                  "warmest_water_end = 'none'"),
+                     4);
+}
+
+static void counts_of_rules_are_rolled_back_too(void **state)
+{
+    struct fixture *f = *state;
+    struct evaluated e = begin(f);
+    struct made made;
+
+    must(f, sl_store_add_rules(f->store, e.evaluation, &f->tables, &f->error));
+    must(f, sl_store_commit(f->store, &f->error));
+    must(f, sl_store_begin(f->store, &f->error));
+    make(&e, &made, "A", 12, 1);
+    fill_sets(f, &made.results[0][0]);
+    file(&e, &made);
+    sl_store_rollback(f->store);
+    must(f, sl_store_begin(f->store, &f->error));
+    must(f, sl_store_commit(f->store, &f->error));
+    assert_int_equal(file_says(f, "SELECT sum(pumps_short) + count(*) FROM "
+                                  "evaluation_rules"),
+                     (long long)f->tables.rule_count);
+}
+
 static void an_unknown_site_has_no_altitude(void **state)
 {
     struct fixture *f = *state;
@@ -686,6 +830,9 @@ int main(void)
         IN_VINTAGE(evaluations_do_not_mix),
         IN_VINTAGE(a_station_without_a_pump_is_unproven),
         IN_VINTAGE(a_result_comes_back_whole),
+        IN_VINTAGE(the_sets_come_back_whole),
+        IN_VINTAGE(rules_are_told_and_their_pumps_counted),
+        IN_VINTAGE(counts_of_rules_are_rolled_back_too),
         IN_VINTAGE(an_unknown_site_has_no_altitude),
         IN_VINTAGE(what_settles_is_found_out_first),
         IN_VINTAGE(only_unproven_pumps_have_something_to_find_out),

@@ -52,12 +52,12 @@ static void fresh_store_is_marked_ours(void **state)
 
     open_and_close(f, SL_STORE_CREATE);
     assert_int_equal(file_says(f, "PRAGMA application_id"), 0x736C7731);
-    assert_int_equal(file_says(f, "PRAGMA user_version"), 7);
+    assert_int_equal(file_says(f, "PRAGMA user_version"), 8);
     assert_int_equal(file_says(f, "SELECT count(*) FROM fitting_k"), 26);
     assert_int_equal(file_says(f, "SELECT count(*) FROM roughness"), 17);
     assert_int_equal(file_says(f, "SELECT count(*) FROM sqlite_schema "
                                   "WHERE type = 'view'"),
-                     5);
+                     7);
 }
 
 static void opening_again_changes_no_byte(void **state)
@@ -94,9 +94,9 @@ static void newer_store_is_refused(void **state)
     struct fixture *f = *state;
 
     open_and_close(f, SL_STORE_CREATE);
-    file_does(f, "PRAGMA user_version = 8");
+    file_does(f, "PRAGMA user_version = 9");
     assert_refused_untouched(f, SL_STORE_CREATE,
-                             "is of version 8, this program knows 7; use the "
+                             "is of version 9, this program knows 8; use the "
                              "newer program");
     assert_refused_untouched(f, SL_STORE_READ, "use the newer program");
 }
@@ -116,8 +116,8 @@ static void older_store_is_not_read(void **state)
     struct fixture *f = *state;
 
     open_and_close(f, SL_STORE_CREATE);
-    file_does(f, "PRAGMA user_version = 6");
-    assert_refused_untouched(f, SL_STORE_READ, "is of version 6");
+    file_does(f, "PRAGMA user_version = 7");
+    assert_refused_untouched(f, SL_STORE_READ, "is of version 7");
 }
 
 static void other_database_is_refused(void **state)
@@ -159,7 +159,7 @@ static void changed_views_are_made_anew(void **state)
     open_and_close(f, SL_STORE_CREATE);
     assert_int_equal(file_says(f, "SELECT count(*) FROM sqlite_schema WHERE "
                                   "type = 'view'"),
-                     5);
+                     7);
     assert_int_equal(file_says(f, "SELECT count(*) FROM station_order"), 0);
 }
 
@@ -175,7 +175,7 @@ static void a_view_named_to_break_out_is_only_dropped(void **state)
     assert_int_equal(file_says(f, "SELECT count(*) FROM conditions"), 2);
     assert_int_equal(file_says(f, "SELECT count(*) FROM sqlite_schema WHERE "
                                   "type = 'view'"),
-                     5);
+                     7);
 }
 
 static void a_store_without_a_name_is_refused(void **state)
@@ -262,7 +262,7 @@ static void every_table_is_strict(void **state)
     assert_int_equal(file_says(f, "SELECT count(*) FROM pragma_table_list "
                                   "WHERE schema = 'main' AND type = 'table' "
                                   "AND name NOT LIKE 'sqlite_%'"),
-                     26);
+                     27);
     assert_int_equal(file_says(f, "SELECT count(*) FROM pragma_table_list "
                                   "WHERE schema = 'main' AND type = 'table' "
                                   "AND name NOT LIKE 'sqlite_%' "
@@ -349,7 +349,7 @@ static void every_table_and_column_has_a_comment(void **state)
     for (; sqlite3_step(asked) == SQLITE_ROW; tables++)
         assert_commented(database, (const char *)sqlite3_column_text(asked, 0),
                          (const char *)sqlite3_column_text(asked, 1));
-    assert_int_equal(tables, 26);
+    assert_int_equal(tables, 27);
     sqlite3_finalize(asked);
     sqlite3_close(database);
 }
