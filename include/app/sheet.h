@@ -19,4 +19,8 @@ void sl_sheet_print(const struct sl_sheet *sheet,
                     const struct sl_condition_result *condition,
                     const struct sl_pump_result *pump);
 
+/* What each margin rule asks for, once behind the sheets. */
+void sl_sheet_rule_forms(const struct sl_sheet *sheet,
+                         const struct sl_tables *tables);
+
 #endif

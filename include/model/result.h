@@ -125,6 +125,12 @@ struct sl_limit {
     double value; /* SI; NaN unless found */
 };
 
+/* The range looked at: either way from where the level is, m; K. */
+#define SL_LIMIT_REACH 20.0
+#define SL_LIMIT_COLDEST 273.15
+#define SL_LIMIT_WARMEST 333.15
+#define SL_LIMIT_WARMEST_SEAWATER 313.15
+
 enum sl_limit_id {
     SL_LIMIT_LEVEL,       /* lowest source level, or gauge pressure head of a
                              main as an elevation, m */

@@ -32,6 +32,12 @@ struct sl_page_list {
 
 void sl_page_list_row(struct sl_report *report, const struct sl_page_list *list,
                       const void *row);
+/* A row across all columns that tells more about the row before it. */
+void sl_page_list_more(const struct sl_report *report,
+                       const struct sl_page_list *list,
+                       void (*write)(const struct sl_report *report,
+                                     const void *row),
+                       const void *row);
 /* Close the list, or say that it is empty; ready for the next. */
 void sl_page_list_end(struct sl_report *report,
                       const struct sl_page_list *list);
@@ -73,6 +79,12 @@ const char *sl_page_unit(const struct sl_report *report,
 void sl_page_front(const struct sl_report *report);
 void sl_page_files(struct sl_report *report);
 void sl_page_glossary(const struct sl_report *report);
+
+/* What a pump's balance does not hold: its running sets, flags, what the
+ * margin rules say, how far it may go.  `row` is a struct sl_pump_row. */
+void sl_page_beside(const struct sl_report *report, const void *row);
+/* The section of the margin rules. */
+void sl_page_rules(struct sl_report *report);
 
 /* End the lists of stations, those that had no row among them; the section
  * of what to find out is left open for the pumps. */

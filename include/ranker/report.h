@@ -37,7 +37,8 @@ void sl_report_unknown(struct sl_report *report,
 /* The terms: the head balance of every pump of a station at risk. */
 void sl_report_begin_terms(struct sl_report *report);
 void sl_report_pump(struct sl_report *report, const struct sl_pump_row *row);
-/* Records read, file by file; those rejected and those out of scope. */
+/* What each margin rule says; records read, file by file; those rejected and
+ * those out of scope. */
 void sl_report_begin_set_aside(struct sl_report *report);
 void sl_report_set_aside(struct sl_report *report,
                          const struct sl_set_aside_row *row);

@@ -5,6 +5,9 @@
 #ifndef SL_RANKER_WORDS_H
 #define SL_RANKER_WORDS_H
 
+#include <stdbool.h>
+#include <stddef.h>
+
 #include "base/text.h"
 #include "base/units.h"
 #include "model/row.h"
@@ -28,8 +31,26 @@ void sl_words_confidence(const struct sl_pump_row *row, struct sl_text *text);
 /* What to do next: "find out the elevation of the impeller eye", "confirm
  * ... on site; then look into ...". */
 void sl_words_next_step(const struct sl_pump_row *row, struct sl_text *text);
-/* "summer low, solved flow, low-level cut-out" */
+/* "summer low, with P-2, P-3, solved flow, low-level cut-out"; says so where
+ * not every set was tried */
 void sl_words_case(const struct sl_pump_row *row, struct sl_text *text);
+
+/* The running set that governs, "with P-2, P-3"; nothing where none does. */
+void sl_words_set(const struct sl_pump_row *row, struct sl_text *text);
+/* "the worst of all 7 sets"; says so where not all were tried. */
+void sl_words_sets_tried(const struct sl_pump_row *row, struct sl_text *text);
+/* What each rule of the summary says: "fixed head: clear; ..."; nothing when
+ * that was not kept. */
+void sl_words_rule_states(const struct sl_pump_row *row,
+                          const struct sl_summary *summary,
+                          struct sl_text *text);
+/* What the rule of that place says of the pump; false where it is not about
+ * it, or that was not kept. */
+bool sl_rule_state(const struct sl_pump_row *row, size_t rule,
+                   enum sl_state *state);
+/* "lowest source level", and how the search for it ended. */
+const char *sl_words_limit(enum sl_limit_id id, const struct sl_pump_row *row);
+const char *sl_words_limit_end(enum sl_limit_end end);
 
 /* One sentence of what a state means. */
 const char *sl_words_state(enum sl_state state);
@@ -40,6 +61,9 @@ const char *sl_words_column(const char *column);
 const char *sl_words_default(const char *field);
 /* How far a published value can be trusted, from its mark. */
 const char *sl_words_trust(char trust);
+/* Its name, and "(from memory)" where it is so known. */
+void sl_words_rule_name(const struct sl_margin_rule *rule,
+                        struct sl_text *text);
 /* The rule: "NPSHA at least 1.30 x NPSHR, and at least NPSHR + 1.5 m". */
 void sl_words_rule(const struct sl_margin_rule *rule, enum sl_unit_system units,
                    struct sl_text *text);

@@ -18,6 +18,7 @@ static void print_pump(struct sl_run *run, const struct sl_margin_rule *rule,
     for (size_t c = 0; c < result->condition_count; c++)
         sl_sheet_print(&sheet, &result->conditions[c],
                        &result->conditions[c].pumps[pump]);
+    sl_sheet_rule_forms(&sheet, &run->tables);
     puts("Screening, not design: the maker's curve, local codes and a "
          "licensed\nengineer decide.");
 }

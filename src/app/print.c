@@ -48,10 +48,15 @@ static enum sl_status print_worst(void *context,
         (row->state != SL_SHORT && row->state != SL_THIN))
         return SL_OK;
     worst->shown++;
-    sl_text_addf(&text, "  %d. %s  %s%s%s, pump %s: ", worst->shown,
+    sl_text_addf(&text, "  %d. %s  %s%s%s, pump %s", worst->shown,
                  sl_state_name(row->state), row->worst.station_id,
                  row->worst.station_name[0] ? " " : "", row->worst.station_name,
                  row->worst.pump_id);
+    if (row->worst.running > 1) {
+        sl_text_add_string(&text, " ");
+        sl_words_set(&row->worst, &text);
+    }
+    sl_text_add_string(&text, ": ");
     sl_words_why(&row->worst, worst->units, &text);
     sl_print_safely(stdout, sl_text_string(&text));
     putchar('\n');

@@ -83,8 +83,9 @@ static enum sl_status no_such_rule(const struct sl_run *run, const char *name,
     enum sl_status status = SL_OK;
 
     for (size_t i = 0; i < run->tables.rule_count; i++)
-        sl_text_addf(&names, "%s\"%s\"", i ? ", " : "",
-                     run->tables.rules[i].rule);
+        sl_text_addf(&names, "%s\"%s\"%s", i ? ", " : "",
+                     run->tables.rules[i].rule,
+                     run->tables.rules[i].trust == 'M' ? " (from memory)" : "");
     status = sl_error_set(error, SL_REFUSED,
                           "there is no margin rule \"%s\"; use one of %s", name,
                           sl_text_string(&names));

@@ -2,43 +2,10 @@
 
 #include <math.h>
 
+#include "app/sheet_parts.h"
 #include "app/terminal.h"
 #include "model/fields.h"
-
-/* A value in the sheet's units, or "unknown". */
-static const char *figure(const struct sl_sheet *sheet,
-                          enum sl_quantity quantity, double si, int decimals,
-                          char room[48])
-{
-    double shown = sl_shown(quantity, sheet->units, si);
-
-    if (isnan(si)) {
-        snprintf(room, 48, "unknown");
-        return room;
-    }
-    if (fabs(shown) < 0.5 * pow(10, -decimals))
-        shown = 0; /* no "-0.00" */
-    snprintf(room, 48, "%.*f%s%s", decimals, shown,
-             quantity == SL_PURE ? "" : " ",
-             sl_unit_shown(quantity, sheet->units)->label);
-    return room;
-}
-
-static int decimals_of(enum sl_quantity quantity)
-{
-    switch (quantity) {
-    case SL_PURE:
-        return 3;
-    case SL_TEMPERATURE:
-    case SL_FLOW:
-    case SL_PRESSURE:
-        return 1;
-    case SL_SPEED:
-        return 0;
-    default:
-        return 2;
-    }
-}
+#include "ranker/words.h"
 
 static void head(const struct sl_sheet *sheet, const char *name, double value,
                  const char *formula)
@@ -46,7 +13,7 @@ static void head(const struct sl_sheet *sheet, const char *name, double value,
     char room[48];
 
     fprintf(sheet->stream, "  %-34s %12s   %s\n", name,
-            figure(sheet, SL_LENGTH, value, 2, room), formula);
+            sl_sheet_figure(sheet, SL_LENGTH, value, 2, room), formula);
 }
 
 static void title(const struct sl_sheet *sheet,
@@ -82,14 +49,20 @@ static void balance(const struct sl_sheet *sheet,
 {
     const struct sl_case *typical = &pump->cases[SL_TYPICAL];
     const struct sl_terms *terms = &typical->terms;
+    struct sl_text rule = {0};
     char room[48];
 
     fprintf(sheet->stream,
             "Head balance (F1) at the typical values; flow %s, %s; source "
-            "by %s\n",
-            figure(sheet, SL_FLOW, typical->flow, 1, room),
+            "by %s",
+            sl_sheet_figure(sheet, SL_FLOW, typical->flow, 1, room),
             sl_flow_basis_name(pump->flow_basis),
             sl_source_basis_name(pump->source_basis));
+    if (pump->governing.words) {
+        fputs("; running ", sheet->stream);
+        sl_print_safely(sheet->stream, pump->governing.words);
+    }
+    putc('\n', sheet->stream);
     head(sheet, "standard air at the site", terms->atmosphere, "F6, F3");
     head(sheet, "its fall in a storm", terms->barometer, "F1, F3");
     head(sheet, "gauge pressure of the source", terms->gauge, "F1, F3");
@@ -102,9 +75,11 @@ static void balance(const struct sl_sheet *sheet,
     head(sheet, "NPSHA", terms->npsha, "the sum");
     head(sheet, "NPSHR (NPSH3)", typical->npshr, "F19, F20");
     head(sheet, "margin", typical->margin, "NPSHA - NPSHR");
+    sl_words_rule_name(sheet->rule, &rule);
     head(sheet, "the rule asks for an NPSHA of", typical->required,
-         sheet->rule->rule);
+         sl_text_string(&rule));
     head(sheet, "surplus over the rule", typical->surplus, sheet->rule->source);
+    sl_text_release(&rule);
 }
 
 static void corner(const struct sl_sheet *sheet, const char *name,
@@ -113,11 +88,11 @@ static void corner(const struct sl_sheet *sheet, const char *name,
     char flow[48], npsha[48], npshr[48], margin[48], surplus[48];
 
     fprintf(sheet->stream, "  %-11s %12s %11s %11s %11s %11s\n", name,
-            figure(sheet, SL_FLOW, solved->flow, 1, flow),
-            figure(sheet, SL_LENGTH, solved->terms.npsha, 2, npsha),
-            figure(sheet, SL_LENGTH, solved->npshr, 2, npshr),
-            figure(sheet, SL_LENGTH, solved->margin, 2, margin),
-            figure(sheet, SL_LENGTH, solved->surplus, 2, surplus));
+            sl_sheet_figure(sheet, SL_FLOW, solved->flow, 1, flow),
+            sl_sheet_figure(sheet, SL_LENGTH, solved->terms.npsha, 2, npsha),
+            sl_sheet_figure(sheet, SL_LENGTH, solved->npshr, 2, npshr),
+            sl_sheet_figure(sheet, SL_LENGTH, solved->margin, 2, margin),
+            sl_sheet_figure(sheet, SL_LENGTH, solved->surplus, 2, surplus));
 }
 
 static void corners(const struct sl_sheet *sheet,
@@ -143,13 +118,14 @@ static void pipe_line(const struct sl_sheet *sheet,
     fprintf(sheet->stream,
             ": flow %s, velocity %s, Re %s, roughness %s, f %s, friction "
             "%s, K %.2f, fittings %s (suction_pipes.csv:%ld)\n",
-            figure(sheet, SL_FLOW, loss->flow, 1, flow),
-            figure(sheet, SL_VELOCITY, loss->velocity, 2, velocity),
-            figure(sheet, SL_PURE, loss->reynolds, 0, reynolds),
-            figure(sheet, SL_BORE, loss->roughness, 3, roughness),
-            figure(sheet, SL_PURE, loss->factor, 5, factor),
-            figure(sheet, SL_LENGTH, loss->friction, 3, friction),
-            loss->minor_k, figure(sheet, SL_LENGTH, loss->minor, 3, minor),
+            sl_sheet_figure(sheet, SL_FLOW, loss->flow, 1, flow),
+            sl_sheet_figure(sheet, SL_VELOCITY, loss->velocity, 2, velocity),
+            sl_sheet_figure(sheet, SL_PURE, loss->reynolds, 0, reynolds),
+            sl_sheet_figure(sheet, SL_BORE, loss->roughness, 3, roughness),
+            sl_sheet_figure(sheet, SL_PURE, loss->factor, 5, factor),
+            sl_sheet_figure(sheet, SL_LENGTH, loss->friction, 3, friction),
+            loss->minor_k,
+            sl_sheet_figure(sheet, SL_LENGTH, loss->minor, 3, minor),
             loss->pipe->record.line);
 }
 
@@ -186,25 +162,25 @@ static void input_line(const struct sl_sheet *sheet,
                        const struct sl_input *input)
 {
     enum sl_quantity quantity = quantity_of(input);
-    int decimals = decimals_of(quantity);
+    int decimals = sl_sheet_decimals(quantity);
     char typical[48], adverse[48], favourable[48];
     FILE *stream = sheet->stream;
 
     fprintf(stream, "  %-42s %s", sl_input_words(input->id),
             sl_provenance_name(input->provenance));
     if (!isnan(input->value.typical) && input->id != SL_IN_SOURCE_KIND)
-        fprintf(
-            stream, " %s",
-            figure(sheet, quantity, input->value.typical, decimals, typical));
+        fprintf(stream, " %s",
+                sl_sheet_figure(sheet, quantity, input->value.typical, decimals,
+                                typical));
     if (!(input->value.adverse == input->value.favourable) &&
         !isnan(input->value.favourable))
         fprintf(stream, " (%s at best, %s at worst)",
-                figure(sheet, quantity, input->value.favourable, decimals,
-                       favourable),
+                sl_sheet_figure(sheet, quantity, input->value.favourable,
+                                decimals, favourable),
                 isnan(input->value.adverse)
                     ? "no bound"
-                    : figure(sheet, quantity, input->value.adverse, decimals,
-                             adverse));
+                    : sl_sheet_figure(sheet, quantity, input->value.adverse,
+                                      decimals, adverse));
     if (input->line)
         fprintf(stream, ", %s:%ld", sl_record_kind(input->kind)->file,
                 input->line);
@@ -237,6 +213,10 @@ void sl_sheet_print(const struct sl_sheet *sheet,
     title(sheet, condition, pump);
     balance(sheet, pump);
     corners(sheet, pump);
+    sl_sheet_sets(sheet, pump);
+    sl_sheet_checks(sheet, pump);
+    sl_sheet_limits(sheet, pump);
+    sl_sheet_rules(sheet, pump);
     pipes(sheet, pump);
     inputs(sheet, pump);
     putc('\n', sheet->stream);

@@ -60,6 +60,20 @@ void sl_page_list_row(struct sl_report *report, const struct sl_page_list *list,
     sl_markup(report->stream, "</tr>\n");
 }
 
+void sl_page_list_more(const struct sl_report *report,
+                       const struct sl_page_list *list,
+                       void (*write)(const struct sl_report *report,
+                                     const void *row),
+                       const void *row)
+{
+    sl_markup(report->stream, "<tr role=\"row\" class=\"more\">"
+                              "<td role=\"cell\" colspan=\"");
+    sl_markup_count(report->stream, (long long)list->column_count);
+    sl_markup(report->stream, "\"><div>");
+    write(report, row);
+    sl_markup(report->stream, "</div></td></tr>\n");
+}
+
 void sl_page_list_end(struct sl_report *report, const struct sl_page_list *list)
 {
     if (report->rows > 0) {

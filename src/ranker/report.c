@@ -46,6 +46,7 @@ static void write_masthead(const struct sl_report *report)
               "<li><a href=\"#clear\">Clear</a></li>\n"
               "<li><a href=\"#find-out\">Find out first</a></li>\n"
               "<li><a href=\"#terms\">Terms</a></li>\n"
+              "<li><a href=\"#rules\">Margin rules</a></li>\n"
               "<li><a href=\"#records\">Records</a></li>\n"
               "<li><a href=\"#defaults\">Defaults</a></li>\n"
               "<li><a href=\"#words\">What the words mean</a></li>\n"

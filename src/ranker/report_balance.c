@@ -99,7 +99,9 @@ void sl_report_begin_terms(struct sl_report *report)
         report, "terms", "The terms, pump by pump",
         "Formula F1: each term is signed as it acts on the pump, and the terms "
         "from atmosphere to gas add up to NPSHA. Margin = NPSHA &minus; "
-        "NPSHR. Heads are of the water pumped.");
+        "NPSHR. Heads are of the water pumped. Each pump is told in the "
+        "running "
+        "set that governs it; below its terms stands what else was found.");
     sl_markup(report->stream, "<p>All heads in ");
     sl_page_text(report, sl_page_unit(report, SL_LENGTH));
     sl_markup(report->stream, ".</p>\n");
@@ -108,6 +110,7 @@ void sl_report_begin_terms(struct sl_report *report)
 void sl_report_pump(struct sl_report *report, const struct sl_pump_row *row)
 {
     sl_page_list_row(report, &list, row);
+    sl_page_list_more(report, &list, sl_page_beside, row);
 }
 
 void sl_report_begin_set_aside(struct sl_report *report)
@@ -115,5 +118,6 @@ void sl_report_begin_set_aside(struct sl_report *report)
     sl_page_list_end(report, &list);
     sl_page_section_end(report);
     report->rows = 0;
+    sl_page_rules(report);
     sl_page_files(report);
 }

@@ -135,11 +135,23 @@ static void write_conditions(const struct sl_report *report)
 static void write_running(const struct sl_report *report)
 {
     sl_markup(report->stream,
-              "<dt>Running</dt>\n<dd>each pump alone on its station's system "
-              "(else at its recorded or rated flow); others that may run "
-              "with it are counted in the suction pipes they share, at their "
-              "largest flow. Sets of pumps running together are not solved "
-              "yet.</dd>\n");
+              "<dt>Running</dt>\n<dd>every set of pumps that a station's "
+              "controls may run together, solved as one system; each pump is "
+              "judged by its worst set. Where its curve or the discharge is "
+              "not known, its recorded or rated flow stands in. A station too "
+              "large to try every set says so.</dd>\n");
+}
+
+static void write_year(const struct sl_report *report)
+{
+    struct sl_text year = {0};
+
+    if (report->summary->year == 0)
+        return;
+    sl_text_addf(&year, "%d", report->summary->year);
+    sl_markup(report->stream, "<dt>Year</dt>\n<dd>");
+    sl_page_say(report, &year);
+    sl_markup(report->stream, ": pipes are as old as that makes them</dd>\n");
 }
 
 static void write_rule(const struct sl_report *report)
@@ -159,7 +171,8 @@ static void write_rule(const struct sl_report *report)
     sl_page_say(report, &words);
     sl_markup(report->stream, " (");
     sl_page_text(report, sl_words_trust(rule->trust));
-    sl_markup(report->stream, ")</dd>\n");
+    sl_markup(report->stream, "); <a href=\"#rules\">what the others say</a>"
+                              "</dd>\n");
 }
 
 static void write_hash(const struct sl_report *report)
@@ -228,6 +241,7 @@ static void write_judgement(const struct sl_report *report)
               "<section aria-labelledby=\"judged-head\">\n"
               "<h2 id=\"judged-head\">How it was judged</h2>\n<dl>\n");
     write_conditions(report);
+    write_year(report);
     write_running(report);
     write_rule(report);
     write_origin(report);

@@ -25,6 +25,12 @@ static const struct {
                           "pump run."},
     {"Impeller eye", "where the water enters the impeller; heads are measured "
                      "to its elevation, the datum."},
+    {"Running set", "pumps of a station that run at the same time. The one a "
+                    "pump has the least to spare in governs."},
+    {"One pump less",
+     "the worst set with one pump fewer than may run at once."},
+    {"Flags", "checks beside the margin that are beyond their limit; they "
+              "change no state."},
     {"Solved, recorded, rated flow",
      "the flow the pump runs at: where its curve meets the station's system; "
      "the largest ever recorded; or the rated point, which says nothing of "

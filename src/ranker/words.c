@@ -371,9 +371,17 @@ void sl_words_case(const struct sl_pump_row *row, struct sl_text *text)
         return;
     }
     sl_text_add_string(text, row->condition ? row->condition : "");
+    if (row->running_set && row->running_set[0] != '\0') {
+        sl_text_add_string(text, ", ");
+        sl_words_set(row, text);
+    }
     sl_text_addf(text, ", %s flow, ", sl_flow_basis_name(row->flow_basis));
     if (row->source_basis == SL_SOURCE_UNKNOWN)
         sl_text_add_string(text, "source unknown");
     else
         sl_text_add_string(text, sl_source_basis_name(row->source_basis));
+    if (row->sets_tried > 0 && !row->sets_all) {
+        sl_text_add_string(text, "; ");
+        sl_words_sets_tried(row, text);
+    }
 }
