@@ -28,13 +28,14 @@ struct sl_pump_row {
     const char *one_out_set;
     const char *off_curve_set;
     const char *stands_set;
-    int running; /* pumps in the one that governs */
-    long long sets_tried;
-    bool sets_all; /* those are all the controls allow */
+    int running;          /* pumps in the one that governs */
+    long long sets_tried; /* 0: not kept */
+    bool sets_all;        /* those are all the controls allow */
     double one_out_margin, one_out_surplus; /* m */
     enum sl_curve_position curve_position;  /* in off_curve_set */
     bool two_crossings;
-    const char *flags; /* names of the checks that are beyond, "; " between */
+    /* Names of the checks that are beyond, "; " between; NULL: not kept. */
+    const char *flags;
     /* A letter a rule of the summary: S, T, U, C as enum sl_state, or - where
      * it does not apply; "" when they were not kept. */
     const char *rule_states;

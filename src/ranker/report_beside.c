@@ -66,8 +66,10 @@ static void write_one_out(const struct sl_report *report,
 static void write_flags(const struct sl_report *report,
                         const struct sl_pump_row *row)
 {
+    const char *flags = row->flags ? row->flags : "not kept";
+
     open_fact(report, "Flags");
-    sl_page_text(report, is_there(row->flags) ? row->flags : "none");
+    sl_page_text(report, is_there(flags) ? flags : "none");
     close_fact(report);
 }
 

@@ -17,7 +17,7 @@ void sl_words_set(const struct sl_pump_row *row, struct sl_text *text)
 void sl_words_sets_tried(const struct sl_pump_row *row, struct sl_text *text)
 {
     if (row->sets_tried <= 0)
-        sl_text_add_string(text, "no running set was tried");
+        sl_text_add_string(text, "which sets were tried was not kept");
     else if (!row->sets_all)
         sl_text_addf(text, "%lld sets tried, not all that the controls allow",
                      row->sets_tried);

@@ -1,8 +1,7 @@
 #include "ranker/tables.h"
 
-#include <math.h>
-
 #include "ranker/cells.h"
+#include "ranker/set_cells.h"
 #include "ranker/words.h"
 
 /* A row that gives each table's head its shape: no value of it is written. */
@@ -217,34 +216,6 @@ static void pump_favourable(struct sl_cells *cells, const struct sl_case *best)
     sl_cell_number(cells, "surplus_favourable", SL_LENGTH, best->surplus);
 }
 
-/* What was found over all running sets. */
-static void pump_sets(struct sl_cells *cells, const struct sl_pump_row *row)
-{
-    sl_cell_count(cells, "running", row->running);
-    sl_cell_count(cells, "sets_tried", row->sets_tried);
-    sl_cell_yes_no(cells, "sets_all", row->sets_all);
-    sl_cell_text(cells, "adverse_set", row->adverse_set);
-    sl_cell_text(cells, "one_out_set", row->one_out_set);
-    sl_cell_number(cells, "one_out_margin", SL_LENGTH, row->one_out_margin);
-    sl_cell_number(cells, "one_out_surplus", SL_LENGTH, row->one_out_surplus);
-    sl_cell_text(cells, "curve_position",
-                 sl_curve_position_name(row->curve_position));
-    sl_cell_text(cells, "off_curve_set", row->off_curve_set);
-    sl_cell_text(cells, "stands_set", row->stands_set);
-    sl_cell_text(cells, "flags", row->flags);
-}
-
-static void rule_states(struct sl_cells *cells,
-                        const struct sl_table_writer *writer,
-                        const struct sl_pump_row *row)
-{
-    struct sl_text text = {0};
-
-    if (!cells->naming)
-        sl_words_rule_states(row, writer->summary, &text);
-    sentence(cells, "rule_states", &text);
-}
-
 /* The name as it is given to --rule; its trust beside it. */
 static void margin_rule(struct sl_cells *cells,
                         const struct sl_table_writer *writer)
@@ -253,30 +224,6 @@ static void margin_rule(struct sl_cells *cells,
 
     sl_cell_text(cells, "margin_rule", rule->rule);
     sl_cell_text(cells, "margin_rule_trust", sl_words_trust(rule->trust));
-}
-
-/* A limit, and in words how the search for it ended. */
-static void pump_limits(struct sl_cells *cells, const struct sl_pump_row *row)
-{
-    static const struct {
-        const char *name, *end;
-        enum sl_quantity quantity;
-    } limits[SL_LIMIT_COUNT] = {
-        [SL_LIMIT_LEVEL] = {"limit_lowest_level", "limit_lowest_level_end",
-                            SL_LENGTH},
-        [SL_LIMIT_TEMPERATURE] = {"limit_warmest_water",
-                                  "limit_warmest_water_end", SL_TEMPERATURE},
-        [SL_LIMIT_FLOW] = {"limit_largest_flow", "limit_largest_flow_end",
-                           SL_FLOW},
-    };
-
-    for (int id = 0; id < SL_LIMIT_COUNT; id++) {
-        const struct sl_limit *limit = &row->limits[id];
-
-        sl_cell_number(cells, limits[id].name, limits[id].quantity,
-                       limit->end == SL_LIMIT_FOUND ? limit->value : NAN);
-        sl_cell_text(cells, limits[id].end, sl_words_limit_end(limit->end));
-    }
 }
 
 static void pump_line(const struct sl_table_writer *writer, bool naming,
@@ -288,9 +235,9 @@ static void pump_line(const struct sl_table_writer *writer, bool naming,
     pump_terms(&cells, &row->cases[SL_TYPICAL]);
     pump_adverse(&cells, &row->cases[SL_ADVERSE]);
     pump_favourable(&cells, &row->cases[SL_FAVOURABLE]);
-    pump_sets(&cells, row);
-    rule_states(&cells, writer, row);
-    pump_limits(&cells, row);
+    sl_cells_sets(&cells, row);
+    sl_cells_rule_states(&cells, writer->summary, row);
+    sl_cells_limits(&cells, row);
     sl_cell_number(&cells, "altitude", SL_LENGTH, row->altitude);
     sl_cell_number(&cells, "temperature", SL_TEMPERATURE, row->temperature);
     provenance_counts(&cells, row);

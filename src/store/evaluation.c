@@ -1,6 +1,6 @@
 #include "store/evaluation.h"
 
-#include "store/sets.h"
+#include "store/running_sets.h"
 #include "store/statement.h"
 
 enum sl_status sl_store_find_evaluation(struct sl_store *store,

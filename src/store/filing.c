@@ -5,7 +5,7 @@
 #include "base/text.h"
 #include "store/cases.h"
 #include "store/evaluation.h"
-#include "store/sets.h"
+#include "store/running_sets.h"
 #include "store/statement.h"
 
 static void count_use(struct sl_store *store, const struct sl_default *row)

@@ -9,7 +9,7 @@
 #include "base/text.h"
 #include "store/cases.h"
 #include "store/evaluation.h"
-#include "store/sets.h"
+#include "store/running_sets.h"
 #include "store/statement.h"
 
 /* The value whose name is `word`; the last value when there is no word, as

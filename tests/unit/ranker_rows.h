@@ -132,6 +132,56 @@ static inline struct sl_station_row unknown_station(void)
     return row;
 }
 
+/* The worst of seven sets, all told. */
+static inline void fill_sets(struct sl_pump_row *row)
+{
+    row->running_set = "with P-1, P-3";
+    row->running = 3;
+    row->sets_tried = 7;
+    row->sets_all = true;
+    row->adverse_set = "with any 1 of P-1, P-3";
+    row->one_out_set = "with P-3";
+    row->one_out_margin = 1.283;
+    row->one_out_surplus = -0.217;
+    row->off_curve_set = "alone";
+    row->curve_position = SL_PAST_END;
+    row->flags = "submergence; operating region";
+    row->rule_states = "TC-";
+    row->limits[SL_LIMIT_LEVEL] = (struct sl_limit){SL_LIMIT_FOUND, 208.4375};
+    row->limits[SL_LIMIT_TEMPERATURE] = (struct sl_limit){SL_LIMIT_NONE, NAN};
+    row->limits[SL_LIMIT_FLOW] = (struct sl_limit){SL_LIMIT_FOUND, 0.12345};
+}
+
+static const struct sl_rule_row sample_rules[] = {
+    {{.rule = "fixed head",
+      .tiers = {{NAN, 1, 1.5}},
+      .tier_count = 1,
+      .lift_limit = NAN,
+      .edition = "",
+      .source = "common practice, no source",
+      .trust = 'N'},
+     {5, 7, 9, 24},
+     0},
+    {{.rule = "a rule recalled",
+      .tiers = {{NAN, 1.1, 0.6}},
+      .tier_count = 1,
+      .lift_limit = NAN,
+      .edition = "1998",
+      .source = "a standard, as one remembers it",
+      .trust = 'M'},
+     {4, 3, 11, 27},
+     0},
+    {{.rule = "the <b>board's</b>, own",
+      .tiers = {{NAN, 1.25, 0}},
+      .tier_count = 1,
+      .lift_limit = NAN,
+      .edition = "",
+      .source = "the owner's own",
+      .trust = 'O'},
+     {1, 0, 0, 2},
+     42},
+};
+
 static inline struct sl_summary summary_of(const struct sl_condition *condition)
 {
     static const char *const files[SL_KIND_COUNT] = {
@@ -148,6 +198,9 @@ static inline struct sl_summary summary_of(const struct sl_condition *condition)
         .stations_by_state = {2, 3, 4, 6},
         .pumps_by_state = {5, 7, 9, 24},
         .stations_without_pumps = 1,
+        .year = 2026,
+        .rules = sample_rules,
+        .rule_count = sizeof sample_rules / sizeof sample_rules[0],
         .rule = {.rule = "fixed head",
                  .tiers = {{NAN, 1, 1.5}},
                  .tier_count = 1,

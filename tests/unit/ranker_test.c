@@ -646,6 +646,10 @@ static struct sl_station_row hostile_station(void)
     row.worst.pump_id = "<b onload=x>&";
     row.worst.condition = "summer, \"low\"";
     row.worst.reason = "-because";
+    fill_sets(&row.worst);
+    row.worst.running_set = "=with <b onload=y>";
+    row.worst.one_out_set = "+<b onload=z>";
+    row.worst.stands_set = "<i>c";
     return row;
 }
 
@@ -719,16 +723,16 @@ static void test_ranked_stations_golden(void **state)
     check_string(
         "ranked-stations.csv", captured(&capture),
         "rank,block,state,station_id,name,service,installation,likely,pump_id,"
-        "condition,flow_basis,source_basis,shortfall_m,margin_m,"
+        "condition,running_set,flow_basis,source_basis,shortfall_m,margin_m,"
         "margin_adverse_m,margin_favourable_m,npsha_m,npshr_m,required_m,"
-        "flow_l_s,why,next_step,inputs_recorded,inputs_derived,"
+        "flow_l_s,flags,why,next_step,inputs_recorded,inputs_derived,"
         "inputs_assumed,inputs_unknown,people_served,pumps,pumps_rejected,"
         "pumps_short,"
         "pumps_thin,pumps_unproven,pumps_clear,latitude,longitude,"
         "stations_csv_line,vintage,inventory_sha256\r\n"
         "1,at risk,short,0107,Juniper Draw,raw water,dry pit,short,P-2,"
-        "summer low,rated,low-level cut-out,2.220,-0.720,-1.020,-0.420,3.360,"
-        "4.080,5.580,95.30,\"low-level cut-out puts the water 3.4 m below the "
+        "summer low,,rated,low-level cut-out,2.220,-0.720,-1.020,-0.420,3.360,"
+        "4.080,5.580,95.30,,\"low-level cut-out puts the water 3.4 m below the "
         "eye; air at 1,830 m is worth only 8.3 m; suction losses take 1.2 m; "
         "NPSHR 4.1 m at 95 L/s (rated flow)\",confirm the eye's elevation and "
         "the lowest source level on site; then look into a higher low-level "
@@ -879,8 +883,9 @@ static void test_a_hostile_inventory_stays_text(void **state)
     struct sl_station_row rows[3] = {hostile_station(), hostile_station(),
                                      hostile_station()};
     static const char *const never[] = {
-        "<i>c", "<b onload", "<s>",      "<u>a",    "<f>",    "<r>",
-        "<d>",  "<c>",       "<source>", "<label>", "\u202E", "</td><script",
+        "<i>c",    "<b onload", "<s>",          "<u>a",     "<f>",
+        "<r>",     "<d>",       "<c>",          "<b>board", "<source>",
+        "<label>", "\u202E",    "</td><script",
     };
     struct capture capture;
 

@@ -35,6 +35,7 @@ static void add_at_risk(void)
     pump = add(station_of(3, SL_THIN, "0220", "Harrow Bend Lift", SL_WASTEWATER,
                           SL_DRY_PIT, 41800));
     pump->assumed = 5;
+    fill_sets(pump);
     pump->temperature = 303.65;
     fill_cases(pump, 0.1277,
                (struct sl_terms){.atmosphere = 10.21,

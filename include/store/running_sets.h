@@ -1,7 +1,7 @@
 /* Inside the store's room only: what was found over all running sets of a
  * pump, and by every margin rule, as columns. */
-#ifndef SL_STORE_SETS_H
-#define SL_STORE_SETS_H
+#ifndef SL_STORE_RUNNING_SETS_H
+#define SL_STORE_RUNNING_SETS_H
 
 #include "base/text.h"
 #include "model/row.h"

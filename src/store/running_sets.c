@@ -1,4 +1,4 @@
-#include "store/sets.h"
+#include "store/running_sets.h"
 
 #include <math.h>
 #include <string.h>
@@ -130,7 +130,8 @@ void sl_read_sets(struct sl_statement *row, struct sl_pump_row *pump)
     pump->off_curve_set = sl_read_text(row, "off_curve_set");
     pump->stands_set = sl_read_text(row, "stands_set");
     pump->two_crossings = sl_read_whole(row, "two_crossings") != 0;
-    pump->flags = sl_read_text(row, "flags");
+    pump->flags =
+        sl_read_null(row, "flags") ? NULL : sl_read_text(row, "flags");
     pump->rule_states = sl_read_text(row, "rule_states");
     for (int id = 0; id < SL_LIMIT_COUNT; id++)
         pump->limits[id] = read_limit(row, id);
