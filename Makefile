@@ -49,7 +49,7 @@ NEEDED_TO_TEST := $(NEEDED_TO_BUILD) libcmocka-dev sqlite3
 
 .DELETE_ON_ERROR:
 .SUFFIXES:
-.PHONY: all help demo test check unit cli recompute compare clean install \
+.PHONY: all help demo test check unit cli examples recompute compare clean install \
         uninstall tidy sample needed-to-build needed-to-test
 
 all: needed-to-build ## build the program (the default)
@@ -70,7 +70,7 @@ demo: all ## install what is missing, build, audit the sample inventory
 	@echo "Open build/demo/report.html in a browser."
 
 test: needed-to-test ## install what is missing, build, pass every test
-	@$(MAKE) --no-print-directory check unit cli
+	@$(MAKE) --no-print-directory check unit cli examples
 
 # --- what is missing -------------------------------------------------------
 
@@ -137,6 +137,9 @@ unit: $(TESTS) $(FUZZERS) ## the unit and reference tests
 
 cli: $(OUT)/summerlow ## the command-line cases
 	@sh tests/cli/run.sh $(OUT)/summerlow
+
+examples: $(OUT)/summerlow ## published worked examples, CSV in, CSV out
+	@sh tests/examples/run.sh $(OUT)/summerlow
 
 # A second implementation on general-purpose libraries; see
 # docs/verification.md.

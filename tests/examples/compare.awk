@@ -1,0 +1,85 @@
+# Compare one example: the results in SI, in US units, and expected.csv.
+# A column is found by its name in either; "a_m+b_m" is the sum of two.
+# Ends with 1 when a figure is outside, 3 when none was compared.
+
+# The cells of one CSV line, no cell over two lines, into the array; how many.
+function cells(line, into,    count, quoted, at, character, cell)
+{
+    count = 0
+    cell = ""
+    quoted = 0
+    for (at = 1; at <= length(line) + 1; at++) {
+        character = substr(line, at, 1)
+        if (character == "\"")
+            quoted = !quoted # a doubled one turns it twice
+        else if (at > length(line) || (character == "," && !quoted)) {
+            into[++count] = cell
+            cell = ""
+        } else if (character != "\r")
+            cell = cell character
+    }
+    return count
+}
+
+# The sum of the columns named for that pump; "" where one is missing.
+function figure(pump, names,    parts, count, part, sum)
+{
+    count = split(names, parts, "+")
+    sum = 0
+    for (part = 1; part <= count; part++) {
+        if (!((pump, parts[part]) in results) ||
+            results[pump, parts[part]] == "")
+            return ""
+        sum += results[pump, parts[part]]
+    }
+    return sum
+}
+
+# The results do not have this column yet.
+function pending(names)
+{
+    return names == "submergence_least_ft" && !(names in known)
+}
+
+FNR == 1 {
+    file++
+    columns = cells($0, header)
+    for (i = 1; i <= columns; i++) {
+        place[file, header[i]] = i
+        if (file < 3)
+            known[header[i]] = 1
+    }
+    next
+}
+
+file < 3 {
+    columns = cells($0, row)
+    for (i = 1; i <= columns; i++)
+        results[row[place[file, "pump_id"]], header[i]] = row[i]
+    next
+}
+
+{
+    cells($0, row)
+    pump = row[place[3, "pump_id"]]
+    names = row[place[3, "column"]]
+    wanted = row[place[3, "published"]]
+    tolerance = row[place[3, "tolerance"]]
+    if (pending(names)) {
+        printf "pending %-4s %-6s %s: no such column\n", example, pump, names
+        next
+    }
+    compared++
+    got = figure(pump, names)
+    away = got - wanted
+    fits = got != "" && tolerance != "" && wanted != "" &&
+        away <= tolerance + 1e-9 && -away <= tolerance + 1e-9
+    if (!fits)
+        bad = 1
+    printf "%-7s %-4s %-6s %-24s got %9s, published %8s +/- %s %s\n",
+        fits ? "ok" : "FAILED:", example, pump,
+        (length(names) > 24) ? substr(names, 1, 21) "..." : names,
+        got == "" ? "none" : got, wanted, tolerance, row[place[3, "unit"]]
+}
+
+END { exit bad ? 1 : compared ? 0 : 3 }
