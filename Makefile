@@ -49,8 +49,8 @@ NEEDED_TO_TEST := $(NEEDED_TO_BUILD) libcmocka-dev sqlite3
 
 .DELETE_ON_ERROR:
 .SUFFIXES:
-.PHONY: all help demo test check unit cli examples recompute compare clean install \
-        uninstall tidy sample needed-to-build needed-to-test
+.PHONY: all help demo test check unit cli examples recompute compare \
+        clean install uninstall tidy sample needed-to-build needed-to-test
 
 all: needed-to-build ## build the program (the default)
 	@$(MAKE) --no-print-directory $(OUT)/summerlow
@@ -140,6 +140,7 @@ cli: $(OUT)/summerlow ## the command-line cases
 
 examples: $(OUT)/summerlow ## published worked examples, CSV in, CSV out
 	@sh tests/examples/run.sh $(OUT)/summerlow
+	@sh tests/sample/governs.sh $(OUT)/summerlow sample-inventory
 
 # A second implementation on general-purpose libraries; see
 # docs/verification.md.

@@ -1,25 +1,7 @@
 # Compare one example: the results in SI, in US units, and expected.csv.
 # A column is found by its name in either; "a_m+b_m" is the sum of two.
-# Ends with 1 when a figure is outside, 3 when none was compared.
-
-# The cells of one CSV line, no cell over two lines, into the array; how many.
-function cells(line, into,    count, quoted, at, character, cell)
-{
-    count = 0
-    cell = ""
-    quoted = 0
-    for (at = 1; at <= length(line) + 1; at++) {
-        character = substr(line, at, 1)
-        if (character == "\"")
-            quoted = !quoted # a doubled one turns it twice
-        else if (at > length(line) || (character == "," && !quoted)) {
-            into[++count] = cell
-            cell = ""
-        } else if (character != "\r")
-            cell = cell character
-    }
-    return count
-}
+# Takes ../csv.awk before it.  Ends with 1 when a figure is outside, 3 when
+# none was compared.
 
 # The sum of the columns named for that pump; "" where one is missing.
 function figure(pump, names,    parts, count, part, sum)

@@ -28,8 +28,8 @@ for example in */; do
         failed=$((failed + 1))
         continue
     fi
-    awk -v example="$example" -f compare.awk "$work/si.csv" "$work/us.csv" \
-        "$example/expected.csv"
+    awk -v example="$example" -f ../csv.awk -f compare.awk \
+        "$work/si.csv" "$work/us.csv" "$example/expected.csv"
     case $? in
     0) compared=$((compared + 1)) ;;
     3) ;; # all of it pending

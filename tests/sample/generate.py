@@ -53,7 +53,7 @@ PUMP_COLUMNS = [
     "max_speed_rpm", "bep_flow_gpm", "stages", "double_suction",
     "suction_nozzle_bore_in", "inlet_elevation_ft", "inlet_diameter_in",
     "suction_pipe_id", "largest_recorded_flow_gpm", "motor_power_hp",
-    "year_installed"]
+    "year_installed", "straight_run_ft"]
 CURVE_COLUMNS = ["curve_id", "flow_gpm", "head_ft", "npshr_ft", "efficiency",
                  "speed_rpm"]
 PIPE_COLUMNS = ["pipe_id", "station_id", "draws_from", "length_m",
@@ -454,6 +454,163 @@ def retire(board):
                     "note": "flow diverted to the interceptor"})
 
 
+def whole_station(board, code, service, installation, elevation, eye, low,
+                  static, loss, flow, **more):
+    """A station of which everything is recorded.  `loss`: what the discharge
+    takes from `flow`."""
+    height = elevation * 0.3048
+    pressure = 101325 * (1 - 0.0065 * height / 288.15) ** 5.255876
+    record = {
+        "source_kind": "open", "cut_out_level_ft": tidy(low),
+        "normal_level_ft": tidy(low + 5),
+        "barometer_low_inhg": tidy(pressure * 0.975 / 3386.389, 2),
+        "discharge_low_ft": tidy(eye + static),
+        "discharge_normal_ft": tidy(eye + static + 3),
+        "discharge_loss_flow_gpm": f"{flow:.0f}",
+        "discharge_loss_head_ft": tidy(loss)}
+    record.update(more)
+    station = new_station(board, code, service, installation, elevation,
+                          **record)
+    return station
+
+
+def whole_pumps(board, station, count, make_up, eye, flow, head, npshr, speed,
+                head_shape, npshr_shape, running=None, **more):
+    """Alike pumps on one curve, head (rise, power) and NPSHR (share,
+    power) from their values at best efficiency."""
+    (rise, fall), (share, power) = head_shape, npshr_shape
+    key = board.curve_id()
+    for part in (0, 0.3, 0.5, 0.7, 0.85, 1.0, 1.1, 1.2, 1.3):
+        board.curves.append({
+            "curve_id": key, "flow_gpm": f"{flow * part:.0f}",
+            "head_ft": tidy(head * (1 + rise - rise * part ** fall)),
+            "npshr_ft": tidy(npshr * (1 - share + share * part ** power))
+            if part else "",
+            "efficiency": f"{83 * (1 - 1.05 * (1 - part) ** 2):.0f}"
+            if part else "", "speed_rpm": str(speed)})
+    power = flow * head / 3960 / 0.83 * 1.15
+    for place in range(1, count + 1):
+        pump = dict.fromkeys(PUMP_COLUMNS, "")
+        pump.update({
+            "pump_id": f"{station['station_id']}-P{place}",
+            "station_id": station["station_id"], "position": str(place),
+            "make_up": make_up, "in_service": "yes",
+            "datum_elevation_ft": tidy(eye), "curve_id": key,
+            "rated_flow_gpm": f"{flow:.0f}", "rated_head_ft": tidy(head),
+            "rated_npshr_ft": tidy(npshr), "rated_speed_rpm": str(speed),
+            "bep_flow_gpm": f"{flow:.0f}", "stages": "1",
+            "double_suction": "yes" if make_up == "split case" else "no",
+            "motor_power_hp": tidy(min(m for m in MOTORS if m >= power)),
+            "year_installed": "1998"})
+        pump.update(more)
+        board.pumps.append(pump)
+    station["pumps_running_max"] = str(running or count)
+    station["pumps_running_firm"] = str(max(1, count - 1))
+    serve(board, station, flow * count * 0.4 * 1440)
+
+
+def whole_suctions(board, station, bore, length, wall_of, fittings,
+                   header=None):
+    """A suction for each pump, with what is known of its wall and K."""
+    key = station["station_id"]
+    upstream = ""
+    if header:
+        upstream = f"{key}-SH"
+        whole_pipe(board, upstream, station, "", *header)
+    for pump in board.pumps:
+        if pump["station_id"] != key:
+            continue
+        pipe = f"{key}-S{pump['position']}"
+        whole_pipe(board, pipe, station, upstream, bore, length, wall_of,
+                   fittings)
+        pump["suction_pipe_id"] = pipe
+        pump["suction_nozzle_bore_in"] = str(bore - 2)
+
+
+def whole_pipe(board, key, station, draws_from, bore, length, wall_of,
+               fittings):
+    material, condition, year = wall_of
+    pipe = add_pipe(board, key, station, draws_from, length, bore, condition)
+    pipe.update({"material": material, "year_installed": str(year)})
+    for fitting, k in fittings:
+        board.fittings.append({"pipe_id": key, "fitting": fitting,
+                               "count": "1", "k": str(k)})
+
+
+CAST_1957 = ("uncoated cast iron", "fair", 1957)
+PLASTIC_2004 = ("PVC, ring joints", "good", 2004)
+LONG_BEND = ("90 elbow, long radius", 0.2)
+REDUCER = ("eccentric reducer", 0.1)
+
+
+def build_whole(board):
+    """Stations with complete records, each shown in docs/running-sets.md:
+    what governs differs from one to the next."""
+    eye = 318  # one alone: the main's friction holds more than one back
+    station = whole_station(board, "RW", "raw water", "dry pit", 316, eye,
+                            eye - 12, 55, 60, 2200)
+    levels(station, eye - 12, 5, True)
+    whole_pumps(board, station, 3, "self-priming", eye, 1000, 95, 12.5, 1780,
+                (0.27, 2), (0.38, 2.6), straight_run_ft="4")
+    whole_suctions(board, station, 10, 34, CAST_1957,
+                   [("bellmouth entrance", 0.05), LONG_BEND, REDUCER])
+
+    eye = 148  # all together: one narrow header
+    station = whole_station(board, "PW", "potable", "dry pit", 164, eye,
+                            eye - 8, 113, 6, 4800)
+    whole_pumps(board, station, 4, "split case", eye, 1200, 130, 13, 1780,
+                (0.27, 2), (0.38, 2.6), straight_run_ft="5")
+    whole_suctions(board, station, 12, 9, CAST_1957,
+                   [("tee, branch", 0.8), ("gate valve", 0.15), REDUCER],
+                   (16, 630, CAST_1957, [("flush entrance", 0.5),
+                                         ("gate valve", 0.15)]))
+
+    eye = 402  # one fewer than all: header and main are both narrow
+    station = whole_station(board, "PW", "potable", "dry pit", 410, eye,
+                            eye - 5, 67, 46, 2730,
+                            normal_level_ft=tidy(eye + 2))
+    whole_pumps(board, station, 3, "end suction", eye, 1500, 120, 16, 1780,
+                (0.12, 5), (0.5, 2))
+    whole_suctions(board, station, 14, 12, PLASTIC_2004,
+                   [("tee, branch", 0.8), REDUCER],
+                   (12, 345, CAST_1957, [("flush entrance", 0.5)]))
+
+    eye = 1212  # the lowest level on record
+    station = whole_station(board, "RW", "raw water", "dry pit", 1216, eye,
+                            eye - 4, 122, 18, 1600,
+                            water_temp_summer_f="57",
+                            water_temp_normal_f="47",
+                            record_low_level_ft=tidy(eye - 15))
+    whole_pumps(board, station, 2, "split case", eye, 1600, 150, 18, 1780,
+                (0.27, 2), (0.38, 2.6), running=1, straight_run_ft="9")
+    whole_suctions(board, station, 14, 40, CAST_1957,
+                   [("bellmouth entrance", 0.05), LONG_BEND, REDUCER])
+
+    eye = 6496  # altitude
+    station = whole_station(board, "PW", "potable", "dry pit", 6500, eye,
+                            eye - 3, 106, 14, 1100,
+                            normal_level_ft=tidy(eye + 4),
+                            water_temp_summer_f="61",
+                            water_temp_normal_f="50")
+    whole_pumps(board, station, 2, "end suction", eye, 1100, 130, 21.5, 1780,
+                (0.27, 2), (0.38, 2.6), running=1, straight_run_ft="7")
+    whole_suctions(board, station, 12, 18, PLASTIC_2004,
+                   [("rounded entrance", 0.25), ("gate valve", 0.15),
+                    REDUCER])
+
+    eye = 1498  # a booster on a weak main
+    station = whole_station(board, "PW", "potable", "on main", 1500, eye, eye,
+                            145, 22, 900, source_kind="main",
+                            cut_out_level_ft="", normal_level_ft="",
+                            source_pressure_low_psi="21",
+                            source_pressure_normal_psi="27",
+                            source_pressure_elevation_ft=tidy(eye + 1))
+    whole_pumps(board, station, 2, "split case", eye, 900, 120, 11, 1780,
+                (0.27, 2), (0.38, 2.6), running=1, straight_run_ft="6")
+    whole_suctions(board, station, 10, 9, PLASTIC_2004,
+                   [("tee, branch", 0.8), ("gate valve", 0.15), REDUCER])
+
+
 def blank(rows, *columns):
     for row in rows:
         for column in columns:
@@ -562,6 +719,7 @@ def main():
     board = Board()
     build(board)
     make_gaps(board)
+    build_whole(board)
     plant_faults(board)
     os.makedirs(folder, exist_ok=True)
     write(folder, "stations.csv", STATION_COLUMNS, board.stations)
