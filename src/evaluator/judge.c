@@ -408,12 +408,13 @@ static void take_sets(const struct sl_judging *judging,
     list_sets(judging, result);
 }
 
-/* Flow through the discharge in the governing set. */
+/* Flow through the discharge in the governing set; none where the pump runs
+ * in no set. */
 static double header_flow(const struct sl_judging *judging,
                           struct sl_joint *joint)
 {
     const struct sl_layout *layout = judging->layout;
-    double sum = 0;
+    double sum = judging->tally->runs ? 0 : NAN;
 
     for (size_t c = 0; c < layout->class_count; c++)
         if (judging->tally->typical.counts[c])
