@@ -231,8 +231,8 @@ static void note_adverse(const struct governing *all, size_t class, bool stands)
     sl_bound(&of, &outcome);
     if (stands && outcome.stands)
         return;
-    if (sharing || (all->sets->running > 1 && all->layout->neighbour_unknown &&
-                    self->plan->path_count > 0))
+    if (sharing ||
+        (all->layout->neighbour_unknown && self->plan->path_count > 0))
         outcome.figures.surplus = outcome.figures.margin = NAN;
     at_recorded_flow(all, class, &outcome);
     take_worst(all, &tally->adverse, &outcome, true);

@@ -8,7 +8,7 @@
 
 #include <cmocka.h>
 
-#include "evaluator/solve.h"
+#include "evaluator/plan.h"
 #include "unit/evaluator_fixture.h"
 
 static const double summer_kelvin = 299.35;
@@ -282,104 +282,173 @@ static void share_a_header(struct fixture *f)
     f->dossier.record.pumps_running_max = known(3);
 }
 
+/* A pump's result in summer with every set it was tried in. */
+static const struct sl_pump_result *with_sets(struct fixture *f, size_t pump)
+{
+    sl_arena_reset(&f->arena);
+    sl_evaluate_station(
+        &f->dossier, &f->tables,
+        &(struct sl_settings){.rule = &f->rule, .list_sets = true}, &f->arena,
+        &f->result);
+    return &f->result.conditions[CONDITION_SUMMER].pumps[pump];
+}
+
+static const struct sl_set_case *set_named(const struct sl_pump_result *pump,
+                                           const char *words)
+{
+    for (size_t i = 0; i < pump->set_count; i++)
+        if (strcmp(pump->sets[i].words, words) == 0)
+            return &pump->sets[i];
+    fail_msg("no set '%s' among %zu", words, pump->set_count);
+    return NULL;
+}
+
 static double header_friction(double flow)
 {
     return friction_of(flow, 63.7, suction_bore, suction_wall, summer_kelvin);
 }
 
-static void others_load_a_shared_pipe_at_the_adverse_end(void **state)
+/* Head at the header of a pump on the complete station's curve, less what is
+ * asked when `all` flows through the discharge and `header` through D. */
+static double left_over(double flow, double header, double all)
+{
+    const struct sl_curve_view head = {curve_flow, curve_head, POINTS};
+
+    return sl_curve_at(&head, flow) - (327.3 - 298.35) -
+           4.7 * (all / 0.06) * (all / 0.06) -
+           friction_of(flow, suction_length, suction_bore, suction_wall,
+                       summer_kelvin) -
+           minor_of(flow, suction_bore, suction_k) - header_friction(header);
+}
+
+static void each_set_is_solved_with_all_its_flows(void **state)
 {
     struct fixture *f = *state;
-    const struct sl_pump_result *a, *c;
-    double flow, own;
+    const struct sl_pump_result *a;
+    const struct sl_set_case *alone, *pair;
+    double one, two;
 
     share_a_header(f);
-    a = summer(f);
-    flow = a->cases[SL_TYPICAL].flow;
-    own = friction_of(flow, suction_length, suction_bore, suction_wall,
-                      summer_kelvin);
-    check_close("alone", a->cases[SL_TYPICAL].terms.friction,
-                -(own + header_friction(flow)), 1e-10, 0);
-    check_close("its own flow stays", a->cases[SL_ADVERSE].flow, flow, 0, 0);
-    check_close("together", a->cases[SL_ADVERSE].terms.friction,
-                -(own + header_friction(2 * flow)), 1e-10, 0);
-    check_close("at best alone", a->cases[SL_FAVOURABLE].surplus,
-                a->cases[SL_TYPICAL].surplus, 0, 0);
-    check_provenance("together", &a->inputs[SL_IN_RUNNING_TOGETHER],
-                     SL_DERIVED);
-    check_close("loss", a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse,
-                header_friction(2 * flow) - header_friction(flow), 1e-9, 0);
-    c = &f->result.conditions[CONDITION_SUMMER].pumps[2];
-    assert_false(c->inputs[SL_IN_RUNNING_TOGETHER].applies);
-    check_close("C shares none", c->cases[SL_ADVERSE].surplus,
-                c->cases[SL_TYPICAL].surplus, 0, 0);
+    a = with_sets(f, 0);
+    assert_int_equal(a->sets_tried, 4);
+    assert_true(a->sets_all);
+    alone = set_named(a, "alone");
+    pair = set_named(a, "with B");
+    one = alone->figures.flow;
+    two = pair->figures.flow;
+    assert_true(two < one);
+    check_close("alone", left_over(one, one, one), 0, 0, 1e-9);
+    check_close("with B", left_over(two, 2 * two, 2 * two), 0, 0, 1e-9);
+    check_close("friction with B", pair->figures.terms.friction,
+                -(friction_of(two, suction_length, suction_bore, suction_wall,
+                              summer_kelvin) +
+                  header_friction(2 * two)),
+                1e-9, 0);
+    assert_int_equal(pair->running, 2);
+    assert_int_equal(set_named(a, "with B and C")->running, 3);
+}
+
+static void the_worst_set_governs(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *a;
+
+    share_a_header(f);
+    for (int pump = 0; pump < 3; pump++) {
+        double least = INFINITY;
+        a = with_sets(f, (size_t)pump);
+        for (size_t i = 0; i < a->set_count; i++)
+            least = fmin(least, a->sets[i].figures.surplus);
+        check_close("least", a->cases[SL_TYPICAL].surplus, least, 0, 0);
+        check_close("set", a->governing.figures.surplus, least, 0, 0);
+        check_close("named", set_named(a, a->governing.words)->figures.surplus,
+                    least, 0, 0);
+    }
 }
 
 static void others_are_limited_by_what_may_run(void **state)
 {
+    static const struct {
+        double most;
+        size_t sets;
+    } rows[] = {{1, 1}, {2, 3}, {3, 4}, {7, 4}, {NAN, 4}};
     struct fixture *f = *state;
-    const struct sl_pump_result *a;
-    double flow, all;
 
     share_a_header(f);
-    f->pipes[2].draws_from = &f->pipes[3]; /* C shares it too */
-    f->pumps[1].record.max_speed = known(1391);
-    flow = summer(f)->cases[SL_TYPICAL].flow;
+    for (size_t i = 0; i < COUNT(rows); i++) {
+        const struct sl_pump_result *a;
+        const struct sl_input *together;
 
-    /* Two may run: beside A the larger of B and C, which is C. */
-    f->dossier.record.pumps_running_max = known(2);
-    a = summer(f);
-    check_close("two", a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse,
-                header_friction(2 * flow) - header_friction(flow), 1e-9, 0);
+        f->dossier.record.pumps_running_max = known(rows[i].most);
+        if (isnan(rows[i].most))
+            forget(&f->dossier.record.pumps_running_max);
+        a = summer(f);
+        together = &a->inputs[SL_IN_RUNNING_TOGETHER];
+        assert_int_equal(a->sets_tried, rows[i].sets);
+        check_provenance("together", together,
+                         isnan(rows[i].most) ? SL_ASSUMED : SL_RECORDED);
+        check_interval("together", &together->value,
+                       isnan(rows[i].most) ? 3 : fmin(rows[i].most, 3),
+                       isnan(rows[i].most) ? 3 : fmin(rows[i].most, 3),
+                       isnan(rows[i].most) ? 1 : fmin(rows[i].most, 3));
+        check_state("all", a, SL_CLEAR, SL_CLEAR);
+    }
+}
 
-    f->dossier.record.pumps_running_max = known(1);
-    assert_false(summer(f)->inputs[SL_IN_RUNNING_TOGETHER].applies);
+/* A wide main, so that pumps hardly hinder one another there, and a narrow
+ * header, so that they do here. */
+static void load_the_header(struct fixture *f)
+{
+    share_a_header(f);
+    f->dossier.record.discharge_loss_head = known(0.37);
+    f->pipes[3].record.length = known(217.0);
+}
 
-    /* Not recorded: all, and that alone keeps no pump from clear. */
+static void a_shared_header_makes_the_pair_govern(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *a;
+    double alone, together;
+
+    load_the_header(f);
+    a = with_sets(f, 0);
+    assert_string_equal(a->governing.words, "with B");
+    alone = set_named(a, "alone")->figures.surplus;
+    together = a->cases[SL_TYPICAL].surplus;
+    assert_true(together < alone - 0.1);
+    f->pumps[0].record.datum_elevation.value += (alone + together) / 2;
+    f->pumps[1].record.datum_elevation.value += (alone + together) / 2;
+
+    /* That the two may run together is on record: it is proven. */
+    check_state("on record", summer(f), SL_THIN, SL_THIN);
+    /* Where it is not, one at a time would do. */
     forget(&f->dossier.record.pumps_running_max);
     a = summer(f);
-    check_provenance("all", &a->inputs[SL_IN_RUNNING_TOGETHER], SL_ASSUMED);
-    assert_true(a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse >
-                header_friction(2 * flow) - header_friction(flow));
-    check_state("all", a, SL_CLEAR, SL_CLEAR);
-    all = a->cases[SL_ADVERSE].surplus;
-
-    /* More than there are is all. */
-    f->dossier.record.pumps_running_max = known(7);
-    check_close("seven", summer(f)->cases[SL_ADVERSE].surplus, all, 0, 0);
-}
-
-static void running_together_can_keep_from_clear(void **state)
-{
-    struct fixture *f = *state;
-    const struct sl_pump_result *a;
-    double together;
-
-    share_a_header(f);
-    a = summer(f);
-    together = a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse;
-    f->pumps[0].record.datum_elevation.value +=
-        a->cases[SL_TYPICAL].surplus - together / 2;
-    a = summer(f);
-    check_state("alone clear, together not", a, SL_UNPROVEN, SL_CLEAR);
+    check_state("assumed", a, SL_UNPROVEN, SL_THIN);
     assert_ptr_equal(a->leading_unknown, &a->inputs[SL_IN_RUNNING_TOGETHER]);
     assert_true(a->leading_unknown->settles);
-    check_close("swing", a->leading_unknown->swing, together, 1e-9, 0);
+    check_close("swing", a->leading_unknown->swing, alone - together, 1e-9, 0);
+    f->dossier.record.pumps_running_max = known(1);
+    check_state("one at a time", summer(f), SL_CLEAR, SL_CLEAR);
 }
 
-static void
-pump_without_a_bound_leaves_the_shared_loss_without_one(void **state)
+static void a_flow_from_the_records_has_no_bound_for_others(void **state)
 {
     struct fixture *f = *state;
-    const struct sl_pump_result *a;
+    const struct sl_pump_result *a, *c;
 
     share_a_header(f);
     f->pumps[1].curve = NULL;
     f->pumps[1].record.rated_flow = known(0.0523);
     f->pumps[1].record.rated_npshr = known(2.61);
     a = summer(f);
-    check_nan("loss", a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse);
+    check_nan("together", a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse);
+    check_nan("adverse", a->cases[SL_ADVERSE].surplus);
     check_state("neighbour", a, SL_UNPROVEN, SL_CLEAR);
+    assert_non_null(strstr(a->reason, "is on record, not solved"));
+    /* C draws nothing through the header: beside B it only flows less. */
+    c = &f->result.conditions[CONDITION_SUMMER].pumps[2];
+    check_state("no shared pipe", c, SL_CLEAR, SL_CLEAR);
     /* With one pump at a time the neighbour does not matter. */
     f->dossier.record.pumps_running_max = known(1);
     check_state("alone", summer(f), SL_CLEAR, SL_CLEAR);
@@ -388,11 +457,18 @@ pump_without_a_bound_leaves_the_shared_loss_without_one(void **state)
 static void pump_that_stands_adds_nothing(void **state)
 {
     struct fixture *f = *state;
+    const struct sl_pump_result *a, *b;
 
     share_a_header(f);
     f->pumps[1].record.max_speed = known(1013);
-    assert_false(summer(f)->inputs[SL_IN_RUNNING_TOGETHER].applies);
-    assert_true(f->result.conditions[CONDITION_SUMMER].pumps[1].stands);
+    a = with_sets(f, 0);
+    check_close("beside it", set_named(a, "with B")->figures.flow,
+                set_named(a, "alone")->figures.flow, 1e-12, 0);
+    b = &f->result.conditions[CONDITION_SUMMER].pumps[1];
+    assert_true(b->stands);
+    assert_string_equal(b->stands_set, "alone");
+    for (size_t i = 0; i < b->set_count; i++)
+        assert_true(b->sets[i].stands);
 }
 
 /* The usual level not recorded bounds the flow of the others too: the
@@ -417,8 +493,7 @@ static void one_main_serves_all_pumps(void **state)
     check_state("usual", judge_a(f, CONDITION_NORMAL), SL_CLEAR, SL_CLEAR);
 }
 
-/* An unknown eye does not hide what the others cost. */
-static void shared_loss_is_known_without_the_datum(void **state)
+static void an_unknown_eye_leads_whatever_the_others_cost(void **state)
 {
     struct fixture *f = *state;
     const struct sl_pump_result *a;
@@ -426,39 +501,40 @@ static void shared_loss_is_known_without_the_datum(void **state)
     share_a_header(f);
     forget(&f->pumps[0].record.datum_elevation);
     a = summer(f);
-    assert_true(a->inputs[SL_IN_RUNNING_TOGETHER].value.adverse > 0.1);
+    check_nan("surplus", a->cases[SL_TYPICAL].surplus);
+    assert_true(a->cases[SL_TYPICAL].flow > curve_flow[0]);
     assert_ptr_equal(a->leading_unknown, &a->inputs[SL_IN_DATUM]);
     assert_true(a->leading_unknown->settles);
 }
 
-/* A loss of the suction counts at one end in the balance and at the other in
- * the flow: the flow at either corner is that of a record of the other. */
-static void suction_loss_counts_at_the_other_end_in_the_flow(void **state)
+/* Each corner is the balance of a station: of one whose records hold the
+ * ends of the unknowns. */
+static void a_corner_is_a_station_with_its_ends_on_record(void **state)
 {
     struct fixture *f = *state;
-    double adverse, favourable;
-    const struct sl_case *cases;
+    struct sl_case cases[SL_CORNER_COUNT];
+    const struct sl_case *known_end;
 
     forget(&f->pipes[0].record.roughness);
     f->pipes[0].fitting_count = 0;
-    cases = summer(f)->cases;
-    adverse = cases[SL_ADVERSE].flow;
-    favourable = cases[SL_FAVOURABLE].flow;
-    check_close("K", cases[SL_ADVERSE].terms.minor,
-                -minor_of(adverse, suction_bore, 2.13), 1e-12, 0);
-    check_close("least K", cases[SL_FAVOURABLE].terms.minor,
-                -minor_of(favourable, suction_bore, 0.23), 1e-12, 0);
-    assert_true(favourable < cases[SL_TYPICAL].flow &&
-                cases[SL_TYPICAL].flow < adverse);
+    memcpy(cases, summer(f)->cases, sizeof cases);
+    assert_true(cases[SL_ADVERSE].flow < cases[SL_FAVOURABLE].flow);
 
     f->pipes[0].fitting_count = 1;
-    f->fittings[0].k = known(0.23);
-    f->pipes[0].record.roughness = known(0.000003);
-    check_close("smooth", summer(f)->cases[SL_TYPICAL].flow, adverse, 1e-12, 0);
     f->fittings[0].k = known(2.13);
     f->pipes[0].record.roughness = known(0.006);
-    check_close("rough", summer(f)->cases[SL_TYPICAL].flow, favourable, 1e-12,
-                0);
+    known_end = &summer(f)->cases[SL_TYPICAL];
+    check_close("flow", known_end->flow, cases[SL_ADVERSE].flow, 1e-10, 0);
+    check_close("NPSHA", known_end->terms.npsha, cases[SL_ADVERSE].terms.npsha,
+                0, 1e-9);
+    check_close("NPSHR", known_end->npshr, cases[SL_ADVERSE].npshr, 0, 1e-9);
+    f->fittings[0].k = known(0.23);
+    f->pipes[0].record.roughness = known(0.000003);
+    known_end = &summer(f)->cases[SL_TYPICAL];
+    check_close("flow", known_end->flow, cases[SL_FAVOURABLE].flow, 1e-10, 0);
+    check_close("NPSHA", known_end->terms.npsha,
+                cases[SL_FAVOURABLE].terms.npsha, 0, 1e-9);
+    check_close("NPSHR", known_end->npshr, cases[SL_FAVOURABLE].npshr, 0, 1e-9);
 }
 
 /* On a flat head curve a rough suction lessens NPSHR by more than it costs: a
@@ -478,34 +554,6 @@ static void flat_curve_is_not_short_for_want_of_its_wall(void **state)
     check_state("rough", summer(f), SL_THIN, SL_THIN);
     forget(&f->pipes[0].record.roughness);
     assert_int_not_equal(summer(f)->state, SL_SHORT);
-}
-
-/* More loss in the suction, or a smoother discharge: the bound holds. */
-static void most_flow_bounds_the_flow_of_every_corner(void **state)
-{
-    struct fixture *f = *state;
-    struct sl_plan plan;
-    double most;
-
-    forget(&f->pipes[0].record.roughness);
-    forget(&f->dossier.record.water_temp_summer);
-    forget(&f->dossier.record.discharge_loss_flow);
-    f->dossier.record.discharge_length = known(812);
-    f->dossier.record.discharge_bore = known(0.263);
-    sl_plan_make(&plan, &f->dossier, &f->pumps[0],
-                 &conditions[CONDITION_SUMMER], &f->tables, &f->rule,
-                 &f->arena);
-    most = sl_solve_most_flow(&plan);
-    assert_true(most > 0.055 && most < 0.088);
-    for (int corner = 0; corner < SL_CORNER_COUNT; corner++) {
-        struct sl_ends ends = sl_ends_all((enum sl_corner)corner);
-        struct sl_case solved;
-        struct sl_case_notes notes;
-
-        sl_solve_case(&plan, &ends, &solved, &notes);
-        assert_true(solved.flow <= most);
-        assert_true(solved.flow > 0.04);
-    }
 }
 
 #define TEST(test)                                                             \
@@ -687,17 +735,17 @@ int main(void)
         TEST(no_speed_at_all_leaves_the_curve_as_it_is),
         TEST(rated_point_is_scaled_like_a_curve),
         TEST(rated_point_takes_the_speed_of_the_test),
-        TEST(others_load_a_shared_pipe_at_the_adverse_end),
+        TEST(each_set_is_solved_with_all_its_flows),
+        TEST(the_worst_set_governs),
         TEST(others_are_limited_by_what_may_run),
-        TEST(running_together_can_keep_from_clear),
-        TEST(pump_without_a_bound_leaves_the_shared_loss_without_one),
+        TEST(a_shared_header_makes_the_pair_govern),
+        TEST(a_flow_from_the_records_has_no_bound_for_others),
         TEST(pump_that_stands_adds_nothing),
         TEST(one_source_serves_all_pumps),
         TEST(one_main_serves_all_pumps),
-        TEST(shared_loss_is_known_without_the_datum),
-        TEST(suction_loss_counts_at_the_other_end_in_the_flow),
+        TEST(an_unknown_eye_leads_whatever_the_others_cost),
+        TEST(a_corner_is_a_station_with_its_ends_on_record),
         TEST(flat_curve_is_not_short_for_want_of_its_wall),
-        TEST(most_flow_bounds_the_flow_of_every_corner),
         TEST(a_rejected_fitting_leaves_the_losses_without_a_bound),
         TEST(a_lone_rejected_fitting_is_not_nought),
         TEST(a_rejected_curve_point_leaves_npshr_without_a_bound),

@@ -383,7 +383,9 @@ static void order_of_pumps_changes_only_the_order(void **state)
 
         make_any(&f, &seed);
         f.dossier.pump_count = PUMPS;
-        sl_evaluate_station(&f.dossier, &f.tables, &f.rule, &kept, &first);
+        sl_evaluate_station(&f.dossier, &f.tables,
+                            &(struct sl_settings){.rule = &f.rule}, &kept,
+                            &first);
         a = f.pumps[0];
         f.pumps[0] = f.pumps[2];
         f.pumps[2] = a;
