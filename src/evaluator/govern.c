@@ -212,6 +212,14 @@ static void at_recorded_flow(const struct governing *all, size_t class,
     }
 }
 
+/* No rule has an adverse end then, not the one ranked on alone. */
+static void leave_unbounded(struct sl_outcome *outcome)
+{
+    outcome->figures.surplus = outcome->figures.margin = NAN;
+    for (size_t i = 0; i < SL_RULES_MOST; i++)
+        outcome->surplus[i] = NAN;
+}
+
 static void note_adverse(const struct governing *all, size_t class, bool stands)
 {
     struct sl_tally *tally = &all->tallies[class];
@@ -233,7 +241,7 @@ static void note_adverse(const struct governing *all, size_t class, bool stands)
         return;
     if (sharing ||
         (all->layout->neighbour_unknown && self->plan->path_count > 0))
-        outcome.figures.surplus = outcome.figures.margin = NAN;
+        leave_unbounded(&outcome);
     at_recorded_flow(all, class, &outcome);
     take_worst(all, &tally->adverse, &outcome, true);
 }
