@@ -17,6 +17,9 @@ struct sl_class {
     const struct sl_plan *plan; /* of the first */
     /* Its flow comes from the records, not from the station's system. */
     bool given;
+    /* What it draws has no bound: the flow is given, or a point of its curve
+     * was rejected, or the speed of its curve's test is not known. */
+    bool unsure;
 };
 
 struct sl_layout {

@@ -161,24 +161,24 @@ static bool no_adverse(const struct sl_tally *tally)
            isnan(tally->adverse.outcome.figures.surplus);
 }
 
-/* A set in which some other pump's flow comes from its records. */
-static bool beside_given(const struct governing *all, size_t class,
-                         bool *sharing)
+/* A set in which what some other pump draws has no bound. */
+static bool beside_unsure(const struct governing *all, size_t class,
+                          bool *sharing)
 {
     const struct sl_layout *layout = all->layout;
-    bool given = false;
+    bool unsure = false;
 
     *sharing = false;
     for (size_t c = 0; c < layout->class_count; c++) {
         const struct sl_class *other = &layout->classes[c];
 
-        if (all->sets->counts[c] <= (c == class) || !other->given)
+        if (all->sets->counts[c] <= (c == class) || !other->unsure)
             continue;
-        given = true;
+        unsure = true;
         *sharing = *sharing || c == class ||
                    sl_classes_share(other, &layout->classes[class]);
     }
-    return given;
+    return unsure;
 }
 
 /* The largest flow on record is one it may run at again. */
@@ -234,7 +234,7 @@ static void note_adverse(const struct governing *all, size_t class, bool stands)
 
     if (no_adverse(tally))
         return;
-    if (beside_given(all, class, &sharing) && !sharing)
+    if (beside_unsure(all, class, &sharing) && !sharing)
         return; /* it only lessens the flow: the set without it is tried */
     sl_bound(&of, &outcome);
     if (stands && outcome.stands)
@@ -285,7 +285,8 @@ static void favourable_set(const struct governing *all, size_t class,
 
     for (size_t c = 0; c < layout->class_count; c++) {
         counts[c] = tally->typical.counts[c];
-        sure = sure && (counts[c] == (c == class) || !layout->classes[c].given);
+        sure =
+            sure && (counts[c] == (c == class) || !layout->classes[c].unsure);
     }
     if (sure)
         return;

@@ -132,6 +132,15 @@ static void mark_shared(struct sl_layout *layout)
     }
 }
 
+static bool draws_unsure(const struct sl_plan *plan)
+{
+    const struct sl_input *speed = &plan->inputs[SL_IN_SPEED];
+
+    return plan->flow_basis != SL_FLOW_SOLVED ||
+           plan->pump->curve->rejected_points ||
+           (speed->applies && isnan(speed->value.adverse));
+}
+
 static void join_class(struct sl_layout *layout, size_t pump, bool apart,
                        size_t *places)
 {
@@ -143,8 +152,10 @@ static void join_class(struct sl_layout *layout, size_t pump, bool apart,
         c++;
     if (c == layout->class_count) {
         layout->class_count++;
-        layout->classes[c] = (struct sl_class){
-            .plan = plan, .given = plan->flow_basis != SL_FLOW_SOLVED};
+        layout->classes[c] =
+            (struct sl_class){.plan = plan,
+                              .given = plan->flow_basis != SL_FLOW_SOLVED,
+                              .unsure = draws_unsure(plan)};
     }
     layout->classes[c].count++;
     places[pump] = c;

@@ -14,21 +14,21 @@ static const char *together_rule(const struct sl_layout *layout,
         return "the suction of a pump beside it is not on record; it may draw "
                "from the same pipes";
     if (sharing)
-        return "what a pump beside it draws from the pipes they share is on "
-               "record, not solved";
+        return "the most that a pump beside it draws from the pipes they share "
+               "is not known";
     if (dossier->record.pumps_running_max.known)
         return "";
     return "pumps_running_max is not recorded: all of them";
 }
 
 /* Whether a pump may run beside this one that shares its suction and whose
- * flow is not solved. */
-static bool shares_with_given(const struct sl_layout *layout, size_t class)
+ * draw has no bound. */
+static bool shares_with_unsure(const struct sl_layout *layout, size_t class)
 {
     for (size_t c = 0; c < layout->class_count; c++) {
         const struct sl_class *other = &layout->classes[c];
 
-        if (other->given && other->count > (c == class) &&
+        if (other->unsure && other->count > (c == class) &&
             sl_classes_share(other, &layout->classes[class]))
             return true;
     }
@@ -41,7 +41,7 @@ static void set_running_together(const struct sl_layout *layout,
                                  struct sl_plan *plan)
 {
     bool known = dossier->record.pumps_running_max.known;
-    bool sharing = layout->at_once > 1 && shares_with_given(layout, class);
+    bool sharing = layout->at_once > 1 && shares_with_unsure(layout, class);
     bool bounded =
         !sharing && !(layout->neighbour_unknown && plan->path_count > 0);
     struct sl_interval value = sl_exactly(layout->at_once);
