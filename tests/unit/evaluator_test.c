@@ -632,9 +632,9 @@ static void every_input_takes_part_somewhere(void **state)
     (void)state;
     for (size_t i = 0; i < COUNT(missing); i++)
         seen[missing[i].input] = true;
+    seen[SL_IN_RUNNING_TOGETHER] = seen[SL_IN_RULE_MEASURE] = true; /* sets */
     for (int id = 0; id < SL_INPUT_COUNT; id++)
-        if (!seen[id] && id != SL_IN_RUNNING_TOGETHER &&
-            id != SL_IN_RULE_MEASURE)
+        if (!seen[id])
             fail_msg("no row forgets %s", sl_input_words((enum sl_input_id)id));
 }
 
