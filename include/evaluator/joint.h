@@ -46,6 +46,9 @@ struct sl_outcome {
     double suction_velocity; /* in the pipe at the pump, m/s; NaN: none */
     double flange_pressure;  /* gauge, at the suction flange, Pa */
     double required[SL_RULES_MOST];
+    /* Where several cases or sets are looked at each of these keeps its own
+     * extreme, which need not be that of the figures. */
+    double margin;
     double surplus[SL_RULES_MOST]; /* of each rule of the tables */
 };
 

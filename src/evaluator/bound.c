@@ -40,13 +40,14 @@ static double toward(enum sl_corner sense, double a, double b)
     return sense == SL_FAVOURABLE ? fmax(a, b) : fmin(a, b);
 }
 
-/* Each rule keeps its own extreme, beside the outcome that is furthest by
- * the rule ranked on. */
+/* The margin and each rule keep their own extremes, beside the outcome that
+ * is furthest by the rule ranked on. */
 static void fold_rules(const struct search *search,
                        const struct sl_outcome *kept, struct sl_outcome *into)
 {
     size_t rules = search->of->layout->plans[0].tables->rule_count;
 
+    into->margin = toward(search->of->sense, into->margin, kept->margin);
     for (size_t i = 0; i < rules; i++)
         into->surplus[i] =
             toward(search->of->sense, into->surplus[i], kept->surplus[i]);

@@ -38,20 +38,25 @@ static bool worse(const struct sl_case *a, const struct sl_case *b)
     return a->surplus < b->surplus;
 }
 
-/* Each rule's least over the sets, where the rule has a figure. */
+/* The lesser of two; strict: none where one has none. */
+static bool is_least(double a, double b, bool strict)
+{
+    return strict ? isnan(a) || a <= b : isnan(b) || a <= b;
+}
+
+/* Margin and each rule's surplus: the least over the sets. */
 static void fold_rules(const struct governing *all,
                        const struct sl_outcome *other, struct sl_outcome *into,
                        bool strict)
 {
     size_t rules = all->layout->plans[0].tables->rule_count;
 
+    if (!is_least(into->margin, other->margin, strict))
+        into->margin = other->margin;
     for (size_t i = 0; i < rules; i++) {
-        double a = into->surplus[i], b = other->surplus[i];
-        bool keep = strict ? isnan(a) || a <= b : isnan(b) || a <= b;
-
-        if (keep)
+        if (is_least(into->surplus[i], other->surplus[i], strict))
             continue;
-        into->surplus[i] = b;
+        into->surplus[i] = other->surplus[i];
         into->required[i] = other->required[i];
     }
 }
@@ -216,6 +221,7 @@ static void at_recorded_flow(const struct governing *all, size_t class,
 static void leave_unbounded(struct sl_outcome *outcome)
 {
     outcome->figures.surplus = outcome->figures.margin = NAN;
+    outcome->margin = NAN;
     for (size_t i = 0; i < SL_RULES_MOST; i++)
         outcome->surplus[i] = NAN;
 }

@@ -7,27 +7,29 @@
 #include "hydraulics/friction.h"
 #include "hydraulics/minor_loss.h"
 
-/* Which state the figures of one corner show. */
-static enum sl_state state_of(const struct sl_case *solved)
+/* Which state a corner shows. */
+static enum sl_state state_of(const struct sl_tried *tried)
 {
-    if (isnan(solved->surplus))
+    double surplus = tried->outcome.figures.surplus;
+
+    if (!tried->counts || isnan(surplus))
         return SL_UNPROVEN;
-    if (solved->margin < 0)
+    if (tried->outcome.margin < 0)
         return SL_SHORT;
-    return solved->surplus < 0 ? SL_THIN : SL_CLEAR;
+    return surplus < 0 ? SL_THIN : SL_CLEAR;
 }
 
-static enum sl_state drawn(const struct sl_pump_result *result)
+static enum sl_state drawn(const struct sl_tally *tally)
 {
-    const struct sl_case *cases = result->cases;
-    enum sl_state best = state_of(&cases[SL_FAVOURABLE]);
+    enum sl_state best = state_of(&tally->favourable);
 
     if (best == SL_SHORT || best == SL_THIN)
         return best;
     /* Off its curve in any set, there is no NPSHR that the adverse end could
      * bound. */
-    if (state_of(&cases[SL_ADVERSE]) == SL_CLEAR &&
-        !isnan(cases[SL_TYPICAL].surplus) && !result->off_curve)
+    if (state_of(&tally->adverse) == SL_CLEAR &&
+        !isnan(tally->typical.outcome.figures.surplus) &&
+        !tally->off_curve.counts)
         return SL_CLEAR;
     return SL_UNPROVEN;
 }
@@ -455,9 +457,9 @@ void sl_judge(const struct sl_judging *judging, struct sl_pump_result *result)
                                       .source_basis = plan->source_basis};
     memcpy(result->inputs, plan->inputs, sizeof result->inputs);
     take_sets(judging, result);
-    result->state = drawn(result);
+    result->state = drawn(judging->tally);
     result->likely = result->state == SL_UNPROVEN
-                         ? state_of(&result->cases[SL_TYPICAL])
+                         ? state_of(&judging->tally->typical)
                          : result->state;
     look_closer(judging, plan, result);
     mark_what_the_curve_lacks(result);

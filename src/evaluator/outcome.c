@@ -137,5 +137,6 @@ void sl_joint_outcome(const struct sl_joint *joint, size_t class,
         balance(joint, &setting, flow, outcome);
     figures->npshr = npshr_at(&setting, flow, outcome);
     figures->margin = figures->terms.npsha - figures->npshr;
+    outcome->margin = figures->margin;
     apply_rules(&setting, outcome);
 }

@@ -14,15 +14,15 @@ static enum sl_state by_surplus(double surplus, double margin)
 
 /* As for the rule ranked on: what the best proves, else what the worst. */
 static enum sl_state verdict_of(const struct sl_rule_verdict *verdict,
-                                const struct sl_pump_result *result)
+                                const struct sl_tally *tally)
 {
     enum sl_state best = by_surplus(verdict->surplus[SL_FAVOURABLE],
-                                    result->cases[SL_FAVOURABLE].margin);
+                                    tally->favourable.outcome.margin);
 
     if (best == SL_SHORT || best == SL_THIN)
         return best;
     if (verdict->surplus[SL_ADVERSE] >= 0 &&
-        !isnan(verdict->surplus[SL_TYPICAL]) && !result->off_curve)
+        !isnan(verdict->surplus[SL_TYPICAL]) && !tally->off_curve.counts)
         return SL_CLEAR;
     return SL_UNPROVEN;
 }
@@ -56,6 +56,6 @@ void sl_judge_rules(const struct sl_judging *judging,
             verdict->surplus[corner] =
                 none ? NAN : tried[corner]->outcome.surplus[i];
         }
-        verdict->state = verdict_of(verdict, result);
+        verdict->state = verdict_of(verdict, tally);
     }
 }
