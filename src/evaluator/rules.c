@@ -61,7 +61,9 @@ void sl_rule_apply(const struct sl_margin_rule *rule,
                    double *surplus)
 {
     const struct sl_terms *terms = &figures->terms;
-    double lift = 0 - terms->elevation - terms->friction - terms->minor;
+    /* Gauge pressure over the source lifts as well as height does. */
+    double lift = 0 - terms->elevation - terms->gauge - terms->velocity -
+                  terms->friction - terms->minor;
 
     *required = figures->npshr; /* a rule that is not about it asks nothing */
     if (sl_rule_applies(rule, plan) && rule->tier_count)
