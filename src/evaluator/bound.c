@@ -53,9 +53,13 @@ static void fold_rules(const struct search *search,
             toward(search->of->sense, into->surplus[i], kept->surplus[i]);
 }
 
+/* A case in which the pump stands is not judged: it counts only where no
+ * other is left. */
 static void keep(struct search *search, struct sl_outcome *tried)
 {
-    if (!search->any) {
+    if (search->any && tried->stands && !search->best->stands)
+        return;
+    if (!search->any || (search->best->stands && !tried->stands)) {
         *search->best = *tried;
         search->any = true;
         return;
@@ -66,6 +70,15 @@ static void keep(struct search *search, struct sl_outcome *tried)
     } else {
         fold_rules(search, tried, search->best);
     }
+}
+
+/* Its surplus to the searches: where it stands, never the furthest. */
+static double weight_of(const struct search *search,
+                        const struct sl_outcome *outcome)
+{
+    if (!outcome->stands)
+        return outcome->figures.surplus;
+    return search->of->sense == SL_FAVOURABLE ? -INFINITY : INFINITY;
 }
 
 /* One case; returns its surplus. */
@@ -84,7 +97,7 @@ static double attempt(struct search *search, const struct sl_ends *ends,
     sl_joint_solve(joint, &one);
     sl_joint_outcome(joint, search->of->class, &outcome);
     keep(search, &outcome);
-    return outcome.figures.surplus;
+    return weight_of(search, &outcome);
 }
 
 /* Beside the pump looked at. */
@@ -256,7 +269,7 @@ static double at_spot(struct search *search, const struct sl_ends *ends,
     search->best = all;
     search->any = any;
     keep(search, &here);
-    return here.figures.surplus;
+    return weight_of(search, &here);
 }
 
 static double within(double blend)
@@ -355,7 +368,7 @@ static void between_temperatures(struct search *search, double low, double high,
         search->any = true;
         keep(search, &at_left);
         keep(search, &at_right);
-        if (at_left.figures.surplus > at_right.figures.surplus)
+        if (weight_of(search, &at_left) > weight_of(search, &at_right))
             high = right;
         else
             low = left;
@@ -371,7 +384,7 @@ static void over_temperatures(struct search *search,
     double cold, middle;
 
     at_temperature(search, coldest, joint);
-    cold = search->best->figures.surplus;
+    cold = weight_of(search, search->best);
     at_temperature(search, warmest, joint);
     at_temperature(search, warmth->typical, joint);
     if (isnan(warmth->adverse) || isnan(warmth->favourable)) {
@@ -382,7 +395,7 @@ static void over_temperatures(struct search *search,
         return;
     /* Most often the coldest is the best, and a little warmer is worse. */
     at_temperature(search, coldest + 0.05, joint);
-    middle = search->best->figures.surplus;
+    middle = weight_of(search, search->best);
     if (middle > cold)
         between_temperatures(search, coldest, warmest, joint);
 }
