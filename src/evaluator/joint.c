@@ -10,23 +10,6 @@ static double wall_of(const struct sl_setting *setting, bool own,
                : sl_interval_at(interval, setting->ends->others);
 }
 
-static bool on_way(const struct sl_plan *plan,
-                   const struct sl_dossier_pipe *pipe)
-{
-    for (size_t i = 0; i < plan->path_count; i++)
-        if (plan->path[i].pipe == pipe)
-            return true;
-    return false;
-}
-
-/* The plan whose way is its own; NULL: every way is. */
-static const struct sl_plan *focus_plan(const struct sl_joint *joint)
-{
-    return joint->of.focus == SL_NO_FOCUS
-               ? NULL
-               : joint->of.layout->classes[joint->of.focus].plan;
-}
-
 static int find_pipe(const struct sl_joint *joint,
                      const struct sl_dossier_pipe *pipe)
 {
@@ -73,11 +56,13 @@ static int add_pipe(struct sl_joint *joint, const struct sl_setting *setting,
     return put_pipe(joint, place->pipe, &pipe);
 }
 
-/* The pipes on the way of a unit; returns the last. */
+/* The pipes on the way of a unit; returns the last.  The focus comes first:
+ * what another shares with it is there already, at the focus's own end, and
+ * the equal pipe of an equal pump beside it is another pipe. */
 static int add_way(struct sl_joint *joint, const struct sl_setting *setting,
-                   bool own_way)
+                   bool own)
 {
-    const struct sl_plan *plan = setting->plan, *focus = focus_plan(joint);
+    const struct sl_plan *plan = setting->plan;
     int last = -1;
 
     for (size_t i = 0; i < plan->path_count; i++) {
@@ -87,8 +72,7 @@ static int add_way(struct sl_joint *joint, const struct sl_setting *setting,
         if (!place->pipe->record.bore.known)
             continue; /* what it loses is in the stand-in */
         if (known < 0)
-            known = add_pipe(joint, setting, place, last,
-                             own_way || on_way(focus, place->pipe));
+            known = add_pipe(joint, setting, place, last, own);
         last = known;
     }
     return last;
