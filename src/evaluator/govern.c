@@ -236,16 +236,18 @@ static void note_adverse(const struct governing *all, size_t class, bool stands)
                                .sense = SL_ADVERSE};
     const struct sl_class *self = &all->layout->classes[class];
     struct sl_outcome outcome;
-    bool sharing;
+    bool sharing, unsure;
 
     if (no_adverse(tally))
         return;
-    if (beside_unsure(all, class, &sharing) && !sharing)
-        return; /* it only lessens the flow: the set without it is tried */
+    unsure = beside_unsure(all, class, &sharing);
+    /* It only lessens the flow: the set without it is tried. */
+    if (unsure && !sharing && self->plan->npshr_rises)
+        return;
     sl_bound(&of, &outcome);
     if (stands && outcome.stands)
         return;
-    if (sharing ||
+    if (unsure ||
         (all->layout->neighbour_unknown && self->plan->path_count > 0))
         leave_unbounded(&outcome);
     at_recorded_flow(all, class, &outcome);

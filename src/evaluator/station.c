@@ -5,7 +5,8 @@
 #include "evaluator/judge.h"
 
 static const char *together_rule(const struct sl_layout *layout,
-                                 const struct sl_dossier *dossier, bool sharing)
+                                 const struct sl_dossier *dossier, bool sharing,
+                                 bool hindered)
 {
     if (dossier->rejected_pumps)
         return "a pump of the station was rejected (see findings.csv); what "
@@ -16,20 +17,24 @@ static const char *together_rule(const struct sl_layout *layout,
     if (sharing)
         return "the most that a pump beside it draws from the pipes they share "
                "is not known";
+    if (hindered)
+        return "what a pump beside it delivers is not known, and its NPSHR "
+               "falls somewhere as its flow grows";
     if (dossier->record.pumps_running_max.known)
         return "";
     return "pumps_running_max is not recorded: all of them";
 }
 
-/* Whether a pump may run beside this one that shares its suction and whose
- * draw has no bound. */
-static bool shares_with_unsure(const struct sl_layout *layout, size_t class)
+/* Whether a pump may run beside this one whose draw has no bound and, if so
+ * asked, that shares its suction. */
+static bool beside_unsure(const struct sl_layout *layout, size_t class,
+                          bool sharing)
 {
     for (size_t c = 0; c < layout->class_count; c++) {
         const struct sl_class *other = &layout->classes[c];
 
         if (other->unsure && other->count > (c == class) &&
-            sl_classes_share(other, &layout->classes[class]))
+            (!sharing || sl_classes_share(other, &layout->classes[class])))
             return true;
     }
     return false;
@@ -41,9 +46,11 @@ static void set_running_together(const struct sl_layout *layout,
                                  struct sl_plan *plan)
 {
     bool known = dossier->record.pumps_running_max.known;
-    bool sharing = layout->at_once > 1 && shares_with_unsure(layout, class);
-    bool bounded =
-        !sharing && !(layout->neighbour_unknown && plan->path_count > 0);
+    bool sharing = layout->at_once > 1 && beside_unsure(layout, class, true);
+    bool hindered = layout->at_once > 1 && !plan->npshr_rises &&
+                    beside_unsure(layout, class, false);
+    bool bounded = !sharing && !hindered &&
+                   !(layout->neighbour_unknown && plan->path_count > 0);
     struct sl_interval value = sl_exactly(layout->at_once);
     struct sl_input *input;
 
@@ -53,11 +60,12 @@ static void set_running_together(const struct sl_layout *layout,
         value.favourable = 1;
     if (!bounded)
         value.adverse = NAN;
-    input = sl_plan_set(plan, SL_IN_RUNNING_TOGETHER,
-                        !bounded ? SL_UNKNOWN
-                        : known  ? SL_RECORDED
-                                 : SL_ASSUMED,
-                        value, together_rule(layout, dossier, sharing));
+    input =
+        sl_plan_set(plan, SL_IN_RUNNING_TOGETHER,
+                    !bounded ? SL_UNKNOWN
+                    : known  ? SL_RECORDED
+                             : SL_ASSUMED,
+                    value, together_rule(layout, dossier, sharing, hindered));
     if (known)
         input->line = dossier->record.line;
 }
