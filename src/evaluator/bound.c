@@ -15,7 +15,13 @@ struct search {
     struct sl_outcome *best;
     bool any;
     struct sl_liquid liquid;
+    double imposed;  /* flow of the pump; NaN: solved */
+    bool stood, ran; /* in some case */
 };
+
+/* What the furthest is sought of: each rule of the tables, by its place, and
+ * these. */
+enum { BY_RANK = SL_RULES_MOST, BY_MARGIN, AIMS };
 
 /* Whether one outcome lies further toward an end than another; the one
  * without a figure does, at either end. */
@@ -72,13 +78,21 @@ static void keep(struct search *search, struct sl_outcome *tried)
     }
 }
 
-/* Its surplus to the searches: where it stands, never the furthest. */
+/* Its figure to the searches: where it stands, never the furthest. */
+static double aimed_at(const struct search *search,
+                       const struct sl_outcome *outcome, int aim)
+{
+    if (outcome->stands)
+        return search->of->sense == SL_FAVOURABLE ? -INFINITY : INFINITY;
+    if (aim == BY_RANK)
+        return outcome->figures.surplus;
+    return aim == BY_MARGIN ? outcome->margin : outcome->surplus[aim];
+}
+
 static double weight_of(const struct search *search,
                         const struct sl_outcome *outcome)
 {
-    if (!outcome->stands)
-        return outcome->figures.surplus;
-    return search->of->sense == SL_FAVOURABLE ? -INFINITY : INFINITY;
+    return aimed_at(search, outcome, BY_RANK);
 }
 
 /* One case; returns its surplus. */
@@ -91,11 +105,13 @@ static double attempt(struct search *search, const struct sl_ends *ends,
                                 .ends = *ends,
                                 .liquid = search->liquid,
                                 .given = given,
-                                .imposed = NAN};
+                                .imposed = search->imposed};
     struct sl_outcome outcome;
 
     sl_joint_solve(joint, &one);
     sl_joint_outcome(joint, search->of->class, &outcome);
+    search->stood = search->stood || outcome.stands;
+    search->ran = search->ran || !outcome.stands;
     keep(search, &outcome);
     return weight_of(search, &outcome);
 }
@@ -191,6 +207,7 @@ static void over_others(struct search *search, const struct sl_ends *ends,
 {
     const struct sl_bound_case *of = search->of;
     const struct sl_layout *layout = of->layout;
+    const struct sl_plan *self = layout->classes[of->class].plan;
     struct sl_ends at = *ends;
     bool bounded = true, exact = true;
     bool middle;
@@ -218,7 +235,8 @@ static void over_others(struct search *search, const struct sl_ends *ends,
         section(search, &at, joint);
         return;
     }
-    middle = bounded && between(search, &at, 0.5, joint) < fmin(worst, best);
+    middle = bounded ? between(search, &at, 0.5, joint) < fmin(worst, best)
+                     : !self->npshr_rises || !self->head_is_steep;
     if (middle)
         section(search, &at, joint);
 }
@@ -254,22 +272,23 @@ struct spot {
     double suction, discharge;
 };
 
-static double at_spot(struct search *search, const struct sl_ends *ends,
-                      struct spot spot, struct sl_joint *joint)
+static void at_spot(struct search *search, const struct sl_ends *ends,
+                    struct spot spot, struct sl_joint *joint,
+                    struct sl_outcome *here)
 {
     struct sl_ends at = *ends;
-    struct sl_outcome *all = search->best, here;
+    struct sl_outcome *all = search->best, copy;
     bool any = search->any;
 
     at.suction_blend = spot.suction;
     at.discharge_blend = spot.discharge;
-    search->best = &here;
+    search->best = here;
     search->any = false;
     over_others(search, &at, joint);
     search->best = all;
     search->any = any;
-    keep(search, &here);
-    return weight_of(search, &here);
+    copy = *here; /* to keep is to fold */
+    keep(search, &copy);
 }
 
 static double within(double blend)
@@ -277,54 +296,96 @@ static double within(double blend)
     return fmin(fmax(blend, 0), 1);
 }
 
-/* From the best of the grid, ever smaller steps. */
-static void refine(struct search *search, const struct sl_ends *ends,
-                   struct spot spot, double surplus, struct sl_joint *joint)
+static struct spot moved(struct spot from, int move, double step)
+{
+    static const int moves[][2] = {{1, 0}, {-1, 0}, {0, 1}, {0, -1}};
+
+    return (struct spot){within(from.suction + moves[move][0] * step),
+                         within(from.discharge + moves[move][1] * step)};
+}
+
+/* From the best of the grid, ever smaller steps; along the discharge only
+ * where that is searched. */
+static void refine(struct search *search, const struct sl_ends *ends, int aim,
+                   struct spot spot, double reached, int moves,
+                   struct sl_joint *joint)
 {
     double sign = search->of->sense == SL_FAVOURABLE ? 1 : -1;
     double step = 1.0 / (2 * GRID);
 
     for (int i = 0; i < HALVINGS; i++, step /= 2)
-        for (int move = 0; move < 4; move++) {
-            double by = move % 2 ? step : -step;
-            struct spot next = {within(spot.suction + (move < 2 ? by : 0)),
-                                within(spot.discharge + (move < 2 ? 0 : by))};
-            double tried;
+        for (int move = 0; move < moves; move++) {
+            struct spot next = moved(spot, move, step);
+            struct sl_outcome here;
 
             if (next.suction == spot.suction &&
                 next.discharge == spot.discharge)
                 continue;
-            tried = at_spot(search, ends, next, joint);
-            if (sign * tried > sign * surplus) {
-                surplus = tried;
+            at_spot(search, ends, next, joint, &here);
+            if (sign * aimed_at(search, &here, aim) > sign * reached) {
+                reached = aimed_at(search, &here, aim);
                 spot = next;
             }
         }
+}
+
+/* The furthest of the grid by each aim. */
+struct grid {
+    struct spot spots[AIMS];
+    double reached[AIMS];
+};
+
+static void note(const struct search *search, struct grid *grid,
+                 struct spot spot, const struct sl_outcome *here)
+{
+    double sign = search->of->sense == SL_FAVOURABLE ? 1 : -1;
+
+    for (int aim = 0; aim < AIMS; aim++) {
+        double tried = aimed_at(search, here, aim);
+
+        if (isnan(grid->reached[aim]) ||
+            sign * tried > sign * grid->reached[aim]) {
+            grid->reached[aim] = tried;
+            grid->spots[aim] = spot;
+        }
+    }
+}
+
+/* A rule that asks what another aim before it does is that aim. */
+static bool is_new(const struct grid *grid, int aim, int rules)
+{
+    for (int other = 0; other < AIMS; other++)
+        if ((other < rules ? other < aim : other >= BY_RANK && other != aim) &&
+            aim < rules && grid->reached[other] == grid->reached[aim])
+            return false;
+    return !isnan(grid->reached[aim]) && (aim < rules || aim >= BY_RANK);
 }
 
 static void over_blends(struct search *search, const struct sl_ends *ends,
                         int suction_steps, int discharge_steps,
                         struct sl_joint *joint)
 {
-    double sign = search->of->sense == SL_FAVOURABLE ? 1 : -1;
-    struct spot best = {0, 0};
-    double surplus = NAN;
+    int rules = (int)search->of->layout->plans[0].tables->rule_count;
+    struct grid grid;
 
+    for (int aim = 0; aim < AIMS; aim++)
+        grid.reached[aim] = NAN;
     for (int s = 0; s <= suction_steps; s++)
         for (int d = 0; d <= discharge_steps; d++) {
             struct spot spot = {suction_steps ? (double)s / suction_steps : 0,
                                 discharge_steps ? (double)d / discharge_steps
                                                 : 0};
-            double tried = at_spot(search, ends, spot, joint);
+            struct sl_outcome here;
 
-            if (isnan(tried))
+            at_spot(search, ends, spot, joint, &here);
+            if (isnan(weight_of(search, &here)))
                 return; /* and so is the whole */
-            if (isnan(surplus) || sign * tried > sign * surplus) {
-                surplus = tried;
-                best = spot;
-            }
+            note(search, &grid, spot, &here);
         }
-    refine(search, ends, best, surplus, joint);
+    for (int aim = 0; aim < AIMS; aim++)
+        if (is_new(&grid, aim, rules))
+            refine(search, ends, aim, grid.spots[aim], grid.reached[aim],
+                   discharge_steps ? 4 : 2, joint);
 }
 
 /* All but the temperature. */
@@ -333,8 +394,8 @@ static void at_temperature(struct search *search, double kelvin,
 {
     const struct sl_bound_case *of = search->of;
     const struct sl_plan *plan = of->layout->classes[of->class].plan;
-    bool blend =
-        of->sense != SL_TYPICAL && !of->layout->classes[of->class].given;
+    bool blend = of->sense != SL_TYPICAL && isnan(search->imposed) &&
+                 !of->layout->classes[of->class].given;
     bool turns = !plan->npshr_rises;
     int suction = blend && (turns || !plan->head_is_steep) && suction_open(plan)
                       ? GRID
@@ -400,19 +461,38 @@ static void over_temperatures(struct search *search,
         between_temperatures(search, coldest, warmest, joint);
 }
 
-void sl_bound(const struct sl_bound_case *of, struct sl_outcome *outcome)
+static void over_all(struct search *search, struct sl_joint *joint)
 {
-    const struct sl_class *class = &of->layout->classes[of->class];
+    const struct sl_bound_case *of = search->of;
     const struct sl_interval *warmth =
-        &class->plan->inputs[SL_IN_TEMPERATURE].value;
+        &of->layout->classes[of->class].plan->inputs[SL_IN_TEMPERATURE].value;
     enum sl_corner end = of->ends.of[SL_IN_TEMPERATURE];
-    struct search search = {.of = of, .best = outcome};
-    struct sl_joint joint;
 
     if (!isnan(of->ends.temperature))
-        at_temperature(&search, of->ends.temperature, &joint);
+        at_temperature(search, of->ends.temperature, joint);
     else if (end == SL_TYPICAL || closed(warmth))
-        at_temperature(&search, sl_interval_at(warmth, end), &joint);
+        at_temperature(search, sl_interval_at(warmth, end), joint);
     else
-        over_temperatures(&search, warmth, &joint);
+        over_temperatures(search, warmth, joint);
+}
+
+/* The least flow at which the pump has figures. */
+static double least_flow(const struct sl_plan *plan)
+{
+    double least = plan->head.count ? plan->head.x[0] : 0;
+
+    return plan->npshr.count ? fmax(least, plan->npshr.x[0]) : least;
+}
+
+void sl_bound(const struct sl_bound_case *of, struct sl_outcome *outcome)
+{
+    struct search search = {.of = of, .best = outcome, .imposed = NAN};
+    struct sl_joint joint;
+
+    over_all(&search, &joint);
+    /* Somewhere between, it just runs. */
+    if (of->sense == SL_TYPICAL || !search.stood || !search.ran)
+        return;
+    search.imposed = least_flow(of->layout->classes[of->class].plan);
+    over_all(&search, &joint);
 }

@@ -281,6 +281,12 @@ static void try_set(const struct governing *all)
     }
 }
 
+static void alone(const struct sl_layout *layout, size_t class, int *counts)
+{
+    for (size_t c = 0; c < layout->class_count; c++)
+        counts[c] = c == class;
+}
+
 /* The set whose best can prove a pump short: the one that governs, where it
  * is sure to occur and its flows are the station's own; else alone. */
 static void favourable_set(const struct governing *all, size_t class,
@@ -296,10 +302,59 @@ static void favourable_set(const struct governing *all, size_t class,
         sure =
             sure && (counts[c] == (c == class) || !layout->classes[c].unsure);
     }
-    if (sure)
-        return;
-    for (size_t c = 0; c < layout->class_count; c++)
-        counts[c] = c == class;
+    if (!sure)
+        alone(layout, class, counts);
+}
+
+/* Whether in some station of the records the pump stands in the set: with
+ * the least head at its eye, the most asked and the others drawing most. */
+static bool may_stand(const struct governing *all, size_t class,
+                      const int *counts)
+{
+    const struct sl_layout *layout = all->layout;
+    const struct sl_plan *plan = layout->classes[class].plan;
+    struct sl_joint_case hardest = {
+        .layout = layout,
+        .counts = counts,
+        .focus = class,
+        .ends = sl_ends_all(SL_ADVERSE),
+        .liquid = sl_liquid_at(plan->salinity,
+                               plan->inputs[SL_IN_TEMPERATURE].value.typical),
+        .imposed = NAN};
+    struct sl_outcome outcome;
+    struct sl_joint joint;
+
+    hardest.ends.of[SL_IN_DISCHARGE_LEVEL] = SL_FAVOURABLE;
+    hardest.ends.of[SL_IN_DISCHARGE_LOSS] = SL_FAVOURABLE;
+    hardest.ends.others = SL_FAVOURABLE;
+    sl_joint_solve(&joint, &hardest);
+    sl_joint_outcome(&joint, class, &outcome);
+    return isnan(outcome.figures.flow);
+}
+
+/* The better of two; without a figure where one has none. */
+static bool better(const struct sl_outcome *a, const struct sl_outcome *b)
+{
+    if (isnan(b->figures.surplus))
+        return false;
+    return !(a->figures.surplus <= b->figures.surplus);
+}
+
+static void take_best(const struct governing *all, struct sl_tried *kept,
+                      const struct sl_outcome *outcome)
+{
+    size_t rules = all->layout->plans[0].tables->rule_count;
+    struct sl_outcome before = kept->outcome;
+    bool replace = better(outcome, &before);
+
+    if (replace)
+        take(all, kept, outcome);
+    else
+        before = *outcome;
+    kept->outcome.margin = fmax(kept->outcome.margin, before.margin);
+    for (size_t i = 0; i < rules; i++)
+        kept->outcome.surplus[i] =
+            fmax(kept->outcome.surplus[i], before.surplus[i]);
 }
 
 static void find_favourable(struct governing *all, size_t class)
@@ -320,6 +375,13 @@ static void find_favourable(struct governing *all, size_t class)
     all->sets = &one;
     sl_bound(&of, &outcome);
     take(all, &tally->favourable, &outcome);
+    if (one.running == 1 || !may_stand(all, class, one.counts))
+        return;
+    /* Where it stands in that set it is judged by the others: at best alone. */
+    alone(all->layout, class, one.counts);
+    one.running = 1;
+    sl_bound(&of, &outcome);
+    take_best(all, &tally->favourable, &outcome);
 }
 
 /* Flows of each class alone, to choose among the sets of many pumps. */
