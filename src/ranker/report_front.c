@@ -136,10 +136,8 @@ static void write_running(const struct sl_report *report)
 {
     sl_markup(report->stream,
               "<dt>Running</dt>\n<dd>every set of pumps that a station's "
-              "controls may run together, solved as one system; each pump is "
-              "judged by its worst set. Where its curve or the discharge is "
-              "not known, its recorded or rated flow stands in. A station too "
-              "large to try every set says so.</dd>\n");
+              "controls may run together; each pump is judged by its worst "
+              "set. A station too large to try every set says so.</dd>\n");
 }
 
 static void write_year(const struct sl_report *report)
@@ -151,7 +149,7 @@ static void write_year(const struct sl_report *report)
     sl_text_addf(&year, "%d", report->summary->year);
     sl_markup(report->stream, "<dt>Year</dt>\n<dd>");
     sl_page_say(report, &year);
-    sl_markup(report->stream, ": pipes are as old as that makes them</dd>\n");
+    sl_markup(report->stream, ", for the age of pipes</dd>\n");
 }
 
 static void write_rule(const struct sl_report *report)
@@ -171,7 +169,7 @@ static void write_rule(const struct sl_report *report)
     sl_page_say(report, &words);
     sl_markup(report->stream, " (");
     sl_page_text(report, sl_words_trust(rule->trust));
-    sl_markup(report->stream, "); <a href=\"#rules\">what the others say</a>"
+    sl_markup(report->stream, "); <a href=\"#rules\">all the rules</a>"
                               "</dd>\n");
 }
 

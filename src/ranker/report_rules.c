@@ -1,6 +1,8 @@
 /* The margin rules side by side. */
 #include "ranker/page.h"
 
+#include <string.h>
+
 #include "base/text.h"
 #include "ranker/words.h"
 
@@ -12,13 +14,14 @@ static const struct sl_rule_row *rule_of(const void *row)
 static void write_name(const struct sl_report *report, const void *row)
 {
     const struct sl_margin_rule *rule = &rule_of(row)->rule;
+    const char *edition = rule->edition ? rule->edition : "";
 
     sl_page_name(report, rule->rule);
     if (rule->trust == 'M')
         sl_markup(report->stream, "<small>from memory</small>");
-    if (rule->edition && rule->edition[0] != '\0') {
+    if (edition[0] != '\0' && !strstr(rule->rule, edition)) {
         sl_markup(report->stream, "<small>");
-        sl_page_name(report, rule->edition);
+        sl_page_name(report, edition);
         sl_markup(report->stream, "</small>");
     }
     if (sl_same(rule->rule, report->summary->rule.rule))
@@ -85,7 +88,7 @@ static const struct sl_page_column columns[] = {
 
 static const struct sl_page_list list = {
     "Pumps by what each rule finds, each by its worst condition",
-    "wide compact", columns, sizeof columns / sizeof columns[0],
+    "wide compact rules", columns, sizeof columns / sizeof columns[0],
     "What each rule finds was not kept: this evaluation is of an older "
     "version. Evaluate anew."};
 

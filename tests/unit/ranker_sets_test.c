@@ -266,7 +266,7 @@ static void test_rules_stand_side_by_side(void **state)
     assert_in(page, "<bdi>the &lt;b&gt;board&#39;s&lt;/b&gt;, own</bdi>");
     assert_in(page, "data-label=\"Clear\"><div>27</div>");
     assert_in(page, "data-label=\"Does not apply\"><div>42</div>");
-    assert_in(page, "<dt>Year</dt>\n<dd>2026: pipes are as old");
+    assert_in(page, "<dt>Year</dt>\n<dd>2026, for the age of pipes");
     free(page);
 }
 
