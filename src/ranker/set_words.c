@@ -3,6 +3,8 @@
 
 #include <string.h>
 
+#include "ranker/takers.h"
+
 static bool is_there(const char *words)
 {
     return words && words[0] != '\0';
@@ -73,9 +75,7 @@ const char *sl_words_limit(enum sl_limit_id id, const struct sl_pump_row *row)
         [SL_LIMIT_FLOW] = "largest flow",
     };
 
-    if (id == SL_LIMIT_LEVEL &&
-        (row->source_basis == SL_SOURCE_PRESSURE_LOW ||
-         row->source_basis == SL_SOURCE_PRESSURE_NORMAL))
+    if (id == SL_LIMIT_LEVEL && sl_is_pressure_basis(row->source_basis))
         return "lowest gauge elevation at that pressure";
     return words[id];
 }
