@@ -61,7 +61,8 @@ struct sl_pipe_loss sl_pipe_loss_at(const struct sl_setting *setting,
 struct sl_suction_loss sl_suction_loss_at(const struct sl_setting *setting,
                                           const double *flows, double flow);
 /* V²/2g where the balance starts at a gauge on a pipe, and only there;
- * `flow` is that pipe's. */
+ * `flow` is that pipe's.  Of a bore that is not known 0, and no figure at the
+ * favourable end. */
 double sl_gauge_velocity_head(const struct sl_setting *setting, double flow);
 
 #endif

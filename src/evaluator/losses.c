@@ -171,9 +171,11 @@ double sl_gauge_velocity_head(const struct sl_setting *setting, double flow)
 {
     const struct sl_plan *plan = setting->plan;
 
-    if (plan->source_kind != SL_MAIN || plan->path_count == 0 ||
-        !plan->path[0].pipe->record.bore.known)
+    if (plan->source_kind != SL_MAIN)
         return 0;
+    /* It only helps, and without a bore nothing says how much. */
+    if (plan->path_count == 0 || !plan->path[0].pipe->record.bore.known)
+        return setting->ends->of[SL_IN_SUCTION_BORE] == SL_FAVOURABLE ? NAN : 0;
     return sl_velocity_head(
         sl_pipe_velocity(flow, plan->path[0].pipe->record.bore.value));
 }

@@ -38,7 +38,7 @@ static void balance(const struct sl_joint *joint,
     heads.friction = suction.friction;
     heads.minor = suction.minor;
     heads.velocity_head =
-        plan->path_count ? sl_gauge_velocity_head(setting, flows[0]) : 0;
+        sl_gauge_velocity_head(setting, plan->path_count ? flows[0] : flow);
     sl_npsha(&heads, &outcome->figures.terms);
     outcome->figures.terms.npsha +=
         doubt(setting, SL_IN_SOURCE_KIND) + doubt(setting, SL_IN_SPEED);
