@@ -113,16 +113,19 @@ struct sl_check {
 /* How far one thing may go until the rule is just met, all else typical and
  * the whole station solved anew. */
 enum sl_limit_end {
-    SL_LIMIT_UNKNOWN, /* there is no figure to start from */
+    SL_LIMIT_UNKNOWN, /* there are no figures to tell it by */
     SL_LIMIT_FOUND,
-    SL_LIMIT_NONE,  /* it is not met anywhere within the range */
-    SL_LIMIT_ALWAYS /* it is met over the whole range */
+    SL_LIMIT_NONE,   /* it is not met anywhere within the range */
+    SL_LIMIT_ALWAYS, /* it is met over the whole range */
+    /* It is met up to the value, and there is no figure beyond: some pump
+     * leaves its published curve. */
+    SL_LIMIT_FIGURES_END
 };
 const char *sl_limit_end_name(enum sl_limit_end end);
 
 struct sl_limit {
     enum sl_limit_end end;
-    double value; /* SI; NaN unless found */
+    double value; /* SI; NaN unless found, or where figures end */
 };
 
 /* The range looked at: either way from where the level is, m; K. */

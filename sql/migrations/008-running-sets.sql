@@ -32,7 +32,7 @@ ALTER TABLE pump_results
 ALTER TABLE pump_results
     ADD COLUMN limit_level REAL /* lowest source level that meets the rule, m */;
 ALTER TABLE pump_results
-    ADD COLUMN limit_level_end TEXT /* found, none, always or unknown */;
+    ADD COLUMN limit_level_end TEXT /* found, none, always, figures end (past the value) or unknown */;
 ALTER TABLE pump_results
     ADD COLUMN limit_temperature REAL /* warmest water that meets the rule, K */;
 ALTER TABLE pump_results

@@ -89,6 +89,15 @@ void sl_sheet_checks(const struct sl_sheet *sheet,
     checks_not_made(sheet, pump);
 }
 
+static void end_limit(const struct sl_sheet *sheet,
+                      const struct sl_limit *limit)
+{
+    if (limit->end == SL_LIMIT_FIGURES_END)
+        fputs("; met so far, past it some set leaves its published curve",
+              sheet->stream);
+    putc('\n', sheet->stream);
+}
+
 static void level_limit(const struct sl_sheet *sheet,
                         const struct sl_pump_result *pump)
 {
@@ -106,6 +115,7 @@ static void level_limit(const struct sl_sheet *sheet,
     sl_sheet_figure(sheet, SL_LENGTH, SL_LIMIT_REACH, 0, reach);
     switch (limit->end) {
     case SL_LIMIT_FOUND:
+    case SL_LIMIT_FIGURES_END:
         fputs(sl_sheet_figure(sheet, SL_LENGTH, limit->value, 2, room),
               sheet->stream);
         fprintf(sheet->stream, " (here %s)",
@@ -121,7 +131,7 @@ static void level_limit(const struct sl_sheet *sheet,
         fputs("unknown", sheet->stream);
         break;
     }
-    putc('\n', sheet->stream);
+    end_limit(sheet, limit);
 }
 
 static void temperature_limit(const struct sl_sheet *sheet,
@@ -137,6 +147,7 @@ static void temperature_limit(const struct sl_sheet *sheet,
     fprintf(sheet->stream, "  %-34s ", "warmest water");
     switch (limit->end) {
     case SL_LIMIT_FOUND:
+    case SL_LIMIT_FIGURES_END:
         fputs(sl_sheet_figure(sheet, SL_TEMPERATURE, limit->value, 1, room),
               sheet->stream);
         fprintf(sheet->stream, " (here %s)",
@@ -156,7 +167,7 @@ static void temperature_limit(const struct sl_sheet *sheet,
         fputs("unknown", sheet->stream);
         break;
     }
-    putc('\n', sheet->stream);
+    end_limit(sheet, limit);
 }
 
 static void flow_limit(const struct sl_sheet *sheet,
@@ -168,6 +179,7 @@ static void flow_limit(const struct sl_sheet *sheet,
     fprintf(sheet->stream, "  %-34s ", "largest flow, in the governing set");
     switch (limit->end) {
     case SL_LIMIT_FOUND:
+    case SL_LIMIT_FIGURES_END:
         fputs(sl_sheet_figure(sheet, SL_FLOW, limit->value, 1, room),
               sheet->stream);
         fprintf(sheet->stream, " (here %s)",
@@ -184,14 +196,14 @@ static void flow_limit(const struct sl_sheet *sheet,
         fputs("unknown", sheet->stream);
         break;
     }
-    putc('\n', sheet->stream);
+    end_limit(sheet, limit);
 }
 
 void sl_sheet_limits(const struct sl_sheet *sheet,
                      const struct sl_pump_result *pump)
 {
     fputs("\nHow far one thing may go until the rule is just met, all else "
-          "typical; a set\nwithout a figure counts as not met\n",
+          "typical\n",
           sheet->stream);
     level_limit(sheet, pump);
     temperature_limit(sheet, pump);

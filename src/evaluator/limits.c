@@ -5,17 +5,14 @@
 
 #include "evaluator/judge.h"
 
-/* How far from where it is a level is looked for, m. */
-#define LEVEL_REACH 20.0
-/* Liquid water at ordinary pressures; seawater's formulas end sooner. */
-#define COLDEST 273.15
-#define WARMEST 333.15
-#define WARMEST_SEAWATER 313.15
 /* To this in level (m) and temperature (K), and of the range in flow. */
 #define LIMIT_TOLERANCE 1e-7
 #define STEPS_MOST 60
 /* Steps in which the range of flows is looked at, from the largest. */
 #define FLOW_STEPS 32
+/* Level and temperature are looked at in steps from where they are, each
+ * twice as far as the one before: the first is this part of the range. */
+#define FIRST_STEP (1.0 / 32)
 
 struct limit_search {
     const struct sl_judging *judging;
@@ -42,7 +39,8 @@ static double surplus_at_flow(const struct sl_judging *judging, double flow)
     return outcome.figures.surplus;
 }
 
-/* The surplus with the one thing at a value; below 0 where it has none. */
+/* The surplus with the one thing at a value; minus infinity where it has none.
+ */
 static double surplus_at(const struct limit_search *search, double value)
 {
     struct sl_ends ends = sl_ends_all(SL_TYPICAL);
@@ -62,55 +60,70 @@ static double surplus_at(const struct limit_search *search, double value)
     return isnan(surplus) ? -INFINITY : surplus;
 }
 
+/* A value of the one thing, and the surplus there. */
+struct place {
+    double value, surplus;
+};
+
+static struct place look(const struct limit_search *search, double value)
+{
+    return (struct place){value, surplus_at(search, value)};
+}
+
 /* Between a value at which the rule is met and one at which it is not: by
  * secant where both have figures, in the Illinois manner, else by halves. */
-static double boundary(const struct limit_search *search, double met,
-                       double surplus_met, double missed, double surplus_missed,
-                       double tolerance)
+static struct sl_limit boundary(const struct limit_search *search,
+                                struct place met, struct place missed,
+                                double tolerance)
 {
     int side = 0;
 
-    for (int i = 0; i < STEPS_MOST && fabs(missed - met) > tolerance; i++) {
-        double part = surplus_met / (surplus_met - surplus_missed);
-        double next, surplus;
+    for (int i = 0;
+         i < STEPS_MOST && fabs(missed.value - met.value) > tolerance; i++) {
+        double part = met.surplus / (met.surplus - missed.surplus);
+        struct place next;
 
-        if (!isfinite(surplus_missed) || i % 8 == 7)
+        if (!isfinite(missed.surplus) || i % 8 == 7)
             part = 0.5;
-        next = met + part * (missed - met);
-        surplus = surplus_at(search, next);
-        if (surplus >= 0) {
+        next = look(search, met.value + part * (missed.value - met.value));
+        if (next.surplus >= 0) {
             met = next;
-            surplus_met = surplus;
-            if (surplus < tolerance * 1e-3)
+            if (next.surplus < tolerance * 1e-3)
                 break;
-            surplus_missed = side == 1 ? surplus_missed / 2 : surplus_missed;
+            missed.surplus /= side == 1 ? 2 : 1;
             side = 1;
         } else {
             missed = next;
-            surplus_missed = surplus;
-            surplus_met = side == -1 ? surplus_met / 2 : surplus_met;
+            met.surplus /= side == -1 ? 2 : 1;
             side = -1;
         }
     }
-    return met;
+    return (struct sl_limit){isfinite(missed.surplus) ? SL_LIMIT_FOUND
+                                                      : SL_LIMIT_FIGURES_END,
+                             met.value};
 }
 
-/* From where it is, toward `worse` while the rule is met there, else toward
- * `better`. */
+/* From where it is, toward `worse` while the rule is met, else toward
+ * `better` until it is. */
 static struct sl_limit search_limit(const struct limit_search *search,
                                     double here, double worse, double better)
 {
-    double now = surplus_at(search, here);
-    double there = surplus_at(search, now >= 0 ? worse : better);
+    struct place last = look(search, here);
+    bool met = last.surplus >= 0, figures = true;
+    double end = met ? worse : better;
 
-    if (now >= 0 && there >= 0)
+    for (double part = FIRST_STEP; part <= 1; part *= 2) {
+        struct place next = look(search, here + part * (end - here));
+
+        if ((next.surplus >= 0) != met)
+            return met ? boundary(search, last, next, LIMIT_TOLERANCE)
+                       : boundary(search, next, last, LIMIT_TOLERANCE);
+        figures = figures && isfinite(next.surplus);
+        last = next;
+    }
+    if (met)
         return (struct sl_limit){SL_LIMIT_ALWAYS, NAN};
-    if (now < 0 && there < 0)
-        return (struct sl_limit){SL_LIMIT_NONE, NAN};
-    return (struct sl_limit){
-        SL_LIMIT_FOUND,
-        now >= 0 ? boundary(search, here, now, worse, there, LIMIT_TOLERANCE)
-                 : boundary(search, better, there, here, now, LIMIT_TOLERANCE)};
+    return (struct sl_limit){figures ? SL_LIMIT_NONE : SL_LIMIT_UNKNOWN, NAN};
 }
 
 static struct sl_limit level_limit(const struct sl_judging *judging)
@@ -121,7 +134,8 @@ static struct sl_limit level_limit(const struct sl_judging *judging)
         &plan->inputs[plan->source_kind == SL_MAIN
                           ? SL_IN_SOURCE_PRESSURE_ELEVATION
                           : SL_IN_SOURCE_LEVEL];
-    struct sl_limit limit = search_limit(&search, 0, -LEVEL_REACH, LEVEL_REACH);
+    struct sl_limit limit =
+        search_limit(&search, 0, -SL_LIMIT_REACH, SL_LIMIT_REACH);
 
     limit.value += surface->value.typical;
     return limit;
@@ -131,10 +145,11 @@ static struct sl_limit temperature_limit(const struct sl_judging *judging)
 {
     struct limit_search search = {judging, SL_LIMIT_TEMPERATURE};
     const struct sl_plan *plan = &judging->layout->plans[judging->pump];
-    double warmest = plan->salinity > 0 ? WARMEST_SEAWATER : WARMEST;
+    double warmest =
+        plan->salinity > 0 ? SL_LIMIT_WARMEST_SEAWATER : SL_LIMIT_WARMEST;
     double here = plan->inputs[SL_IN_TEMPERATURE].value.typical;
 
-    return search_limit(&search, here, fmax(warmest, here), COLDEST);
+    return search_limit(&search, here, fmax(warmest, here), SL_LIMIT_COLDEST);
 }
 
 /* The largest flow at which it is met, looked for from the end of the
@@ -144,26 +159,24 @@ static struct sl_limit flow_limit(const struct sl_judging *judging)
     struct limit_search search = {judging, SL_LIMIT_FLOW};
     const struct sl_curve_view *npshr =
         &judging->layout->plans[judging->pump].npshr;
-    double first, last, missed, surplus_missed;
+    struct place missed;
+    double first, last;
 
     if (!sl_curve_usable(npshr))
         return (struct sl_limit){SL_LIMIT_UNKNOWN, NAN};
     first = npshr->x[0];
-    last = missed = npshr->x[npshr->count - 1];
-    surplus_missed = surplus_at(&search, last);
-    if (surplus_missed >= 0)
+    last = npshr->x[npshr->count - 1];
+    missed = look(&search, last);
+    if (missed.surplus >= 0)
         return (struct sl_limit){SL_LIMIT_ALWAYS, NAN};
     for (int i = FLOW_STEPS - 1; i >= 0; i--) {
-        double flow = first + (last - first) * i / FLOW_STEPS;
-        double surplus = surplus_at(&search, flow);
+        struct place next =
+            look(&search, first + (last - first) * i / FLOW_STEPS);
 
-        if (surplus >= 0)
-            return (struct sl_limit){
-                SL_LIMIT_FOUND,
-                boundary(&search, flow, surplus, missed, surplus_missed,
-                         LIMIT_TOLERANCE * (last - first))};
-        missed = flow;
-        surplus_missed = surplus;
+        if (next.surplus >= 0)
+            return boundary(&search, next, missed,
+                            LIMIT_TOLERANCE * (last - first));
+        missed = next;
     }
     return (struct sl_limit){SL_LIMIT_NONE, NAN};
 }

@@ -62,9 +62,10 @@ const char *sl_check_name(enum sl_check_id id)
 
 const char *sl_limit_end_name(enum sl_limit_end end)
 {
-    static const char *const names[] = {"unknown", "found", "none", "always"};
+    static const char *const names[] = {"unknown", "found", "none", "always",
+                                        "figures end"};
 
-    return end <= SL_LIMIT_ALWAYS ? names[end] : "?";
+    return end <= SL_LIMIT_FIGURES_END ? names[end] : "?";
 }
 
 static const struct {

@@ -130,11 +130,14 @@ static void write_limit(const struct sl_report *report,
     const struct sl_limit *limit = &row->limits[id];
 
     sl_page_text(report, sl_words_limit(id, row));
-    sl_markup(report->stream, limit->end == SL_LIMIT_FOUND ? " " : ": ");
-    if (limit->end == SL_LIMIT_FOUND)
+    sl_markup(report->stream, isnan(limit->value) ? ": " : " ");
+    if (!isnan(limit->value))
         sl_page_quantity(report, quantities[id], limit->value, decimals[id]);
-    else
-        sl_page_text(report, sl_words_limit_end(limit->end));
+    if (limit->end == SL_LIMIT_FOUND)
+        return;
+    if (!isnan(limit->value))
+        sl_markup(report->stream, ", ");
+    sl_page_text(report, sl_words_limit_end(limit->end));
 }
 
 static void write_limits(const struct sl_report *report,

@@ -89,6 +89,8 @@ const char *sl_words_limit_end(enum sl_limit_end end)
         return "none within the range";
     case SL_LIMIT_ALWAYS:
         return "always within the range";
+    case SL_LIMIT_FIGURES_END:
+        return "as far as there are figures";
     case SL_LIMIT_UNKNOWN:
         break;
     }

@@ -107,7 +107,7 @@ static enum sl_curve_position position_named(const char *word)
 static struct sl_limit read_limit(struct sl_statement *row, int id)
 {
     const char *word = sl_read_text(row, limit_columns[id].end);
-    int end = SL_LIMIT_ALWAYS;
+    int end = SL_LIMIT_FIGURES_END;
 
     while (end > SL_LIMIT_UNKNOWN &&
            !sl_same(word, sl_limit_end_name((enum sl_limit_end)end)))
