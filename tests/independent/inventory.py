@@ -14,9 +14,11 @@ UNITS = {
     "mgd": 1e6 * GALLON / 86400, "cfs": 0.3048 ** 3,
     "pa": 1.0, "hpa": 100.0, "kpa": 1e3, "bar": 1e5,
     "psi": POUND_FORCE / INCH ** 2, "inhg": 3386.389,
+    "delta_c": 1.0, "delta_f": 5 / 9,
     "rpm": 1.0, "w": 1.0, "kw": 1e3, "hp": 550 * 0.3048 * POUND_FORCE,
 }
 PURE = ("discharge_minor_k", "hazen_williams_c")  # no unit at the end
+DIFFERENCES = ("temperature_addition",)  # a K of these is not a temperature
 KELVIN = {"c": lambda t: t + 273.15, "k": lambda t: t,
           "f": lambda t: (t + 459.67) / 1.8}
 CORNERS = ("typical", "adverse", "favourable")
@@ -45,10 +47,11 @@ def record(row, line):
             continue
         for unit in list(UNITS) + list(KELVIN):
             if name not in PURE and name.endswith("_" + unit):
-                value = number(text)
+                value, field = number(text), name[:-len(unit) - 1]
                 if value is not None:
-                    out[name[:-len(unit) - 1]] = (
-                        KELVIN[unit](value) if unit in KELVIN
+                    out[field] = (
+                        value if field in DIFFERENCES and unit == "k"
+                        else KELVIN[unit](value) if unit in KELVIN
                         else value * UNITS[unit])
                 break
         else:
@@ -79,32 +82,50 @@ def by_key(records, key):
     return out
 
 
-def rejected_keys(folder, name):
-    """The keys of a file's rejected records, by findings.csv."""
+def rejected_lines(folder):
+    """(file, line) of each record with an error, by findings.csv."""
     with open(os.path.join(folder, "findings.csv"), newline="",
               encoding="utf-8") as file:
-        return {row["record_id"] for row in csv.DictReader(file)
-                if row["file"] == name and row["severity"] == "error"}
+        return {(row["file"], int(row["line"]))
+                for row in csv.DictReader(file) if row["severity"] == "error"}
 
 
 class Inventory:
+    """The records that were kept, and where others were rejected."""
+
     def __init__(self, folder, out):
-        self.stations = by_key(read(folder, "stations.csv"), "station_id")
-        self.pumps = by_key(read(folder, "pumps.csv"), "pump_id")
-        self.pipes = by_key(read(folder, "suction_pipes.csv"), "pipe_id")
+        lost = rejected_lines(out)
+        self.folder = folder
+        records, rejected = {}, {}
+        for name in ("stations", "pumps", "suction_pipes", "curves",
+                     "suction_fittings", "conditions", "margin_rules"):
+            every = read(folder, name + ".csv")
+            gone = [r for r in every if (name + ".csv", r["line"]) in lost]
+            records[name] = [r for r in every if r not in gone
+                             and words(r.get("in_service", "yes")) != "no"]
+            rejected[name] = gone
+        self.stations = by_key(records["stations"], "station_id")
+        self.pumps = {
+            key: pump for key, pump in by_key(records["pumps"],
+                                              "pump_id").items()
+            if pump.get("station_id") in self.stations}
+        self.pipes = by_key(records["suction_pipes"], "pipe_id")
         self.curves = collections.defaultdict(list)
-        for point in read(folder, "curves.csv"):
-            if "curve_id" in point and "flow" in point:
-                self.curves[point["curve_id"]].append(point)
+        for point in records["curves"]:
+            self.curves[point["curve_id"]].append(point)
         self.fittings = collections.defaultdict(list)
-        for fitting in read(folder, "suction_fittings.csv"):
-            self.fittings[fitting.get("pipe_id")].append(fitting)
-        self.short_fittings = rejected_keys(out, "suction_fittings.csv")
-        self.short_curves = rejected_keys(out, "curves.csv")
-        lost = rejected_keys(out, "pumps.csv")
-        self.short_stations = {
-            row.get("station_id") for row in read(folder, "pumps.csv")
-            if row.get("pump_id", "") in lost}
+        for fitting in records["suction_fittings"]:
+            self.fittings[fitting["pipe_id"]].append(fitting)
+        self.conditions = records["conditions"]
+        self.margin_rules = records["margin_rules"]
+        self.short_fittings = {
+            r.get("pipe_id") for r in rejected["suction_fittings"]}
+        self.short_curves = {r.get("curve_id") for r in rejected["curves"]}
+        self.short_stations = {r.get("station_id") for r in rejected["pumps"]}
+
+    def of_station(self, key):
+        return [self.pumps[name] for name in sorted(self.pumps)
+                if self.pumps[name]["station_id"] == key]
 
     def path(self, pump):
         """The pipes from the pump up to the source."""
@@ -116,29 +137,81 @@ class Inventory:
 
 
 class Published:
-    """The published values, and nothing else, of the store."""
+    """The published values, and nothing else, of the store; an inventory's
+    own conditions stand in place of the shipped ones, its rules beside."""
 
-    def __init__(self, path):
+    def __init__(self, path, inventory):
         db = sqlite3.connect("file:%s?mode=ro" % path, uri=True)
         self.fitting = {words(f): k for f, *k in db.execute(
             "SELECT fitting, typical, adverse, favourable FROM fitting_k")}
         self.roughness = {words(m): e for m, *e in db.execute(
             "SELECT material, good, fair, poor FROM roughness")}
+        self.ageing = {(words(m), c): e for m, c, *e in db.execute(
+            "SELECT material, condition, typical, adverse, favourable"
+            " FROM ageing")}
         self.defaults = {(f, c): v for f, c, *v in db.execute(
             "SELECT field, circumstance, typical, adverse, favourable"
             " FROM defaults")}
-        self.rules = {r: v for r, *v in db.execute(
-            "SELECT rule, ratio, floor FROM margin_rules")}
-        self.conditions = {c: dict(zip(
-            ("level", "discharge", "pressure", "summer", "storm"), v))
-            for c, *v in db.execute(
-                "SELECT condition, level, discharge, pressure,"
-                " summer_temperature, storm_barometer FROM conditions")}
+        self.high_energy = {c: v for c, v in db.execute(
+            "SELECT circumstance, highest FROM check_limits"
+            " WHERE check_name = 'suction energy'")}
+        self.rules = {r: Rule(r, *v) for r, *v in db.execute(
+            "SELECT rule, make_up, measure, lift_limit FROM margin_rules"
+            " ORDER BY place")}
+        for rule, *tier in db.execute(
+                "SELECT rule, over, ratio, floor FROM margin_tiers"
+                " ORDER BY rule, tier"):
+            self.rules[rule].tiers.append(tuple(tier))
+        self.conditions = {
+            c: dict(zip(CONDITION_FIELDS, v)) for c, *v in db.execute(
+                "SELECT condition, level, level_addition, discharge,"
+                " pressure, summer_temperature, temperature_addition,"
+                " storm_barometer, suction_friction, discharge_friction"
+                " FROM conditions ORDER BY place")}
         db.close()
+        if inventory.conditions:
+            self.conditions = {c["condition"]: owner_condition(c)
+                               for c in inventory.conditions}
+        for own in inventory.margin_rules:
+            rule = Rule(own["rule"], None, "none", None)
+            rule.tiers.append((None, float(own["ratio"]), own["floor"]))
+            self.rules[own["rule"]] = rule
 
     def default(self, field, circumstance=""):
         found = self.defaults.get((field, circumstance))
         return found or self.defaults[(field, "")]
+
+    def largest_ratio(self):
+        return max(ratio for rule in self.rules.values()
+                   for _, ratio, _ in rule.tiers)
+
+
+class Rule:
+    def __init__(self, name, make_up, measure, lift_limit):
+        self.name, self.make_up = name, make_up
+        self.measure, self.lift_limit = measure, lift_limit
+        self.tiers = []
+
+
+CONDITION_FIELDS = (
+    "level", "level_addition", "discharge", "pressure", "summer",
+    "temperature_addition", "storm", "suction_friction", "discharge_friction")
+
+
+def owner_condition(own):
+    """What is left out takes the choice that lessens the margin."""
+    level = words(own["level_basis"])
+    return {
+        "level": {"lowest": "low", "cut out": "cut-out"}.get(level, level),
+        "level_addition": own.get("level_addition", 0.0),
+        "discharge": words(own.get("discharge_basis", "low")),
+        "pressure": words(own.get("pressure_basis", "low")),
+        "summer": words(own["temperature_basis"]) == "summer",
+        "temperature_addition": own.get("temperature_addition", 0.0),
+        "storm": words(own.get("barometer", "storm low")) == "storm low",
+        "suction_friction": words(own.get("suction_friction", "aged")),
+        "discharge_friction": words(own.get("discharge_friction", "new")),
+    }
 
 
 def pick(interval, corner):
@@ -146,3 +219,12 @@ def pick(interval, corner):
     if value is None:
         raise Unbounded
     return value
+
+
+def between(figure, corner):
+    """A figure at a corner, or a part of the way from the adverse to the
+    favourable one."""
+    if isinstance(corner, str):
+        return figure(corner)
+    worst, best = figure("adverse"), figure("favourable")
+    return worst + (best - worst) * corner

@@ -1,4 +1,6 @@
 """Water, air, friction and curves, by iapws, fluids and scipy."""
+import bisect
+import functools
 import math
 
 import fluids
@@ -10,6 +12,11 @@ from scipy.optimize import brentq
 G = 9.80665
 INCH = 0.0254
 EARTH_RADIUS = 6356766.0  # m, of the US Standard Atmosphere 1976
+
+
+@functools.lru_cache(maxsize=None)
+def water_at(kelvin, salinity):
+    return Water(kelvin, salinity)
 
 
 class Water:
@@ -57,10 +64,12 @@ def velocity_head(flow, bore):
 
 
 def factor(reynolds, relative):
+    if relative > 0.1:  # beyond Colebrook (F8)
+        return math.nan
     laminar = 64 / reynolds
     if reynolds < 2300:
         return laminar
-    turbulent = fluids.friction.Colebrook(reynolds, relative)
+    turbulent = fluids.friction.Clamond(reynolds, relative)
     return turbulent if reynolds > 4000 else max(laminar, turbulent)
 
 
@@ -87,36 +96,56 @@ class Curve:
         order = sorted(range(len(flows)), key=lambda i: flows[i])
         self.x = [flows[i] for i in order]
         self.y = [values[i] for i in order]
-        self.shape = PchipInterpolator(self.x, self.y)
+        shape = PchipInterpolator(self.x, self.y)
+        self.pieces = [tuple(float(c) for c in shape.c[:, k])
+                       for k in range(len(self.x) - 1)]
 
     def holds(self, flow):
         return self.x[0] <= flow <= self.x[-1]
 
+    def _piece(self, flow):
+        k = min(max(bisect.bisect_right(self.x, flow) - 1, 0),
+                len(self.pieces) - 1)
+        return self.pieces[k], flow - self.x[k]
+
+    def slope(self, flow):
+        (a, b, c, _), s = self._piece(min(max(flow, self.x[0]), self.x[-1]))
+        return (3 * a * s + 2 * b) * s + c
+
     def at(self, flow):
         """NaN off the points."""
-        if not self.holds(flow):
-            return math.nan
-        return float(self.shape(flow))
+        return self.carried(flow) if self.holds(flow) else math.nan
 
     def carried(self, flow):
         """Carried on straight at the end slopes."""
         inside = min(max(flow, self.x[0]), self.x[-1])
-        return (float(self.shape(inside))
-                + float(self.shape(inside, 1)) * (flow - inside))
+        (a, b, c, d), s = self._piece(inside)
+        value = ((a * s + b) * s + c) * s + d
+        if inside != flow:
+            value += self.slope(inside) * (flow - inside)
+        return value
 
 
 def operating_flow(curve, system):
-    """The crossing at the largest flow where pump and system are equal."""
+    """The crossing at the largest flow where pump and system are equal
+    (F20): 0 where the pump stands, NaN past the curve as it is carried on."""
     def excess(flow):
         return curve.carried(flow) - system(flow)
+
+    def root(low, high):
+        return brentq(excess, low, high, xtol=1e-16, rtol=1e-15)
     last = curve.x[-1]
     if excess(last) >= 0:
-        if excess(3 * last) > 0:
-            return math.nan
-        return brentq(excess, last, 3 * last, xtol=1e-15, rtol=1e-14)
-    grid = [a + (b - a) * i / 64 for a, b in zip([0.0] + curve.x, curve.x)
-            if b > a for i in range(64)] + [last]
-    for low, high in reversed(list(zip(grid, grid[1:]))):
-        if excess(low) > 0 >= excess(high):
-            return brentq(excess, low, high, xtol=1e-15, rtol=1e-14)
-    return math.nan  # it stands
+        return math.nan if excess(3 * last) > 0 else root(last, 3 * last)
+    high = last
+    for start, end in reversed(list(zip([0.0] + curve.x, curve.x))):
+        if end <= start:
+            continue
+        rises = curve.carried(start) < curve.carried(end)
+        steps = 16 if rises else 1
+        for i in reversed(range(steps)):
+            low = start + (end - start) * i / steps
+            if excess(low) > 0:
+                return root(low, high)
+            high = low
+    return 0.0

@@ -1,15 +1,16 @@
 #!/usr/bin/python3
-"""Recomputes what an audit printed, by other means, and compares.
+"""Recomputes what an audit found, by other means, and compares.
 
     recompute.py INVENTORY OUTPUT_DIR
     recompute.py INVENTORY OUTPUT_DIR --sheet STATION
 
-A second implementation of the head balance from docs/formulas.md and
-docs/inventory.md.  It shares no code with the program: it reads the
-inventory's CSV files, and from the store only the published values
-(fitting_k, roughness, defaults, margin_rules, conditions).  Properties of
-water, friction factors, curves and roots are those of iapws, fluids and
-scipy.  What OUTPUT_DIR/pumps.csv says is only compared with.
+A second implementation of docs/formulas.md and docs/inventory.md: running
+sets, flows, head balances, corners, margin rules and states.  It shares no
+code with the program: it reads the inventory's CSV files and what findings.csv
+says was rejected; from the store only the published values, and the rule and
+year of the evaluation.  Properties of water, friction factors, curves and
+roots are those of iapws, fluids and scipy.  What OUTPUT_DIR/pumps.csv and the
+store's pump_results say is only compared with.
 
 Exit status: 0 all figures agree; 1 some do not, or fewer than three stations
 could be compared; 2 usage.
@@ -17,6 +18,7 @@ could be compared; 2 usage.
 import collections
 import csv
 import os
+import sqlite3
 import sys
 
 sys.dont_write_bytecode = True
@@ -26,95 +28,151 @@ import iapws  # noqa: E402
 import scipy  # noqa: E402
 
 from corners import recompute  # noqa: E402
-from inventory import Inventory, Published  # noqa: E402
+from inventory import CORNERS, Inventory, Published  # noqa: E402
+from sets import TERMS  # noqa: E402
 
-# What is printed is rounded to 0.001 m, 0.01 L/s and 0.1 °C: half of that,
-# and a little for the two computations.
-TOLERANCE = collections.OrderedDict(
-    [("flow_l_s", 0.0051), ("temperature_c", 0.0501)]
-    + [(name, 0.00051) for name in (
-        "altitude_m",
-        "atmosphere_m", "barometer_m", "gauge_m", "elevation_m",
-        "velocity_m", "friction_m", "minor_m", "vapour_m", "gas_m",
-        "npsha_m", "npshr_m", "required_m", "margin_m", "surplus_m",
-        "npsha_adverse_m", "npshr_adverse_m", "margin_adverse_m",
-        "surplus_adverse_m", "npsha_favourable_m", "npshr_favourable_m",
-        "margin_favourable_m", "surplus_favourable_m")])
-WORDS = ("flow_basis", "off_curve", "stands", "state")
+WORDS = ("flow_basis", "off_curve", "stands", "state", "likely")
+HEADS = ("npsha", "npshr", "required", "margin", "surplus")
+# In the store heads are kept to the last bit.  Standard air differs by
+# 1.4e-8 of itself between the two (1.5e-7 m); flows by what the solvers leave.
+HEAD_TOLERANCE = 1e-6  # m
+STORED = collections.OrderedDict(
+    [("flow_" + corner, 1e-9) for corner in CORNERS]
+    + [(name, HEAD_TOLERANCE) for name in TERMS]
+    + [("%s_%s" % (head, corner), HEAD_TOLERANCE)
+       for head in HEADS for corner in CORNERS]
+    + [("altitude", 1e-3), ("temperature", 1e-9)])
+# What is printed is rounded: half of the last digit, and a little.
+PRINTED = collections.OrderedDict(
+    [("flow_l_s", 0.0051), ("temperature_c", 0.0501), ("altitude_m", 0.00051)]
+    + [(name + "_m", 0.00051) for name in TERMS + HEADS]
+    + [("%s_%s_m" % (head, corner), 0.00051)
+       for corner in CORNERS[1:]
+       for head in ("npsha", "npshr", "margin", "surplus")])
+
+
+def stored_figures(found):
+    """By the columns of pump_results."""
+    out = {"flow_" + corner: found[corner]["flow"] for corner in CORNERS}
+    out.update((name, found["typical"][name]) for name in TERMS)
+    out.update(("%s_%s" % (head, corner), found[corner][head])
+               for head in HEADS for corner in CORNERS)
+    out.update(altitude=found["altitude"], temperature=found["temperature"])
+    return out
+
+
+def printed_figures(stored):
+    """By the columns of pumps.csv."""
+    flow = stored["flow_typical"]
+    out = {"flow_l_s": None if flow is None else 1e3 * flow,
+           "temperature_c": stored["temperature"] - 273.15,
+           "altitude_m": stored["altitude"]}
+    for name in TERMS:
+        out[name + "_m"] = stored[name]
+    for head in HEADS:
+        out[head + "_m"] = stored[head + "_typical"]
+        for corner in CORNERS[1:]:
+            out["%s_%s_m" % (head, corner)] = stored[
+                "%s_%s" % (head, corner)]
+    return out
 
 
 class Comparison:
     def __init__(self):
-        self.largest = {name: (0.0, "") for name in TOLERANCE}
+        self.largest = collections.defaultdict(lambda: (0.0, ""))
         self.compared = collections.Counter()
-        self.bad, self.shared = [], set()
+        self.bad = []
         self.pumps, self.stations = set(), set()
+        self.joint = self.sets = 0
 
-    def column(self, row, name, ours):
-        where = "%s %s, %s" % (row["pump_id"], row["condition"], name)
-        printed = row[name]
-        if name not in TOLERANCE:
-            if ours != printed:
-                self.bad.append("%s: printed %s, here %s"
-                                % (where, printed, ours))
-        elif (ours is None) != (printed == ""):
-            self.bad.append("%s: printed %s, here %s" % (
-                where, printed or "unknown",
-                "unknown" if ours is None else "%.4f" % ours))
+    def column(self, where, name, ours, theirs, tolerance):
+        if (ours is None) != (theirs is None):
+            self.bad.append("%s, %s: there %s, here %s" % (
+                where, name, "unknown" if theirs is None else theirs,
+                "unknown" if ours is None else "%.9g" % ours))
         elif ours is not None:
-            difference = abs(ours - float(printed))
+            difference = abs(ours - theirs)
             self.largest[name] = max(self.largest[name], (difference, where))
-            if not difference <= TOLERANCE[name]:
-                self.bad.append("%s: printed %s, here %.4f"
-                                % (where, printed, ours))
+            if not difference <= tolerance:
+                self.bad.append("%s, %s: there %.9g, here %.9g (%.1e)" % (
+                    where, name, theirs, ours, ours - theirs))
         self.compared[name] += 1
 
-    def row(self, inventory, published, row):
-        figures, left_out = recompute(inventory, published, row)
-        for name in WORDS + tuple(TOLERANCE):
-            if name not in left_out:
-                self.column(row, name, figures[name])
-        if left_out:
-            self.shared.add(row["pump_id"])
+    def row(self, row, result, found):
+        where = "%s %s" % (row["pump_id"], row["condition"])
+        likely = found["likely"]
+        words = dict(found, off_curve="yes" if found["off_curve"] else "no",
+                     stands="yes" if found["stands"] else "no",
+                     likely="unknown" if likely == "unproven" else likely)
+        for name in WORDS:
+            if words[name] != row[name]:
+                self.bad.append("%s, %s: there %s, here %s" % (
+                    where, name, row[name], words[name]))
+            self.compared[name] += 1
+        stored = stored_figures(found)
+        for name, tolerance in STORED.items():
+            self.column(where, name, stored[name], result[name], tolerance)
+        printed = printed_figures(stored)
+        for name, tolerance in PRINTED.items():
+            text = row[name]
+            self.column(where, "pumps.csv " + name, printed[name],
+                        None if text == "" else float(text), tolerance)
         self.pumps.add(row["pump_id"])
         self.stations.add(row["station_id"])
+        self.sets += found["sets_tried"]
+        self.joint += len(found["governing"]) > 1
 
     def report(self, inventory):
-        print("%-22s %9s %12s %12s" % ("column", "compared", "tolerance",
+        print("%-28s %9s %12s %12s" % ("figure", "compared", "tolerance",
                                        "largest"))
         for name in WORDS:
-            print("%-22s %9d %12s" % (name, self.compared[name], "equal"))
-        for name, tolerance in TOLERANCE.items():
-            print("%-22s %9d %12.4f %12.6f" % (
-                name, self.compared[name], tolerance, self.largest[name][0]))
+            print("%-28s %9d %12s" % (name, self.compared[name], "equal"))
+        for prefix, columns in (("", STORED), ("pumps.csv ", PRINTED)):
+            for name, tolerance in columns.items():
+                print("%-28s %9d %12.1e %12.1e" % (
+                    prefix + name, self.compared[prefix + name], tolerance,
+                    self.largest[prefix + name][0]))
         missing = sorted(set(inventory.pumps) - self.pumps)
-        print("\n%d stations, %d pumps compared." % (
-            len(self.stations), len(self.pumps)))
-        print("%d pumps without their adverse end: others run beside them in "
-              "pipes they share, which is not recomputed." % len(self.shared))
-        print("%d pumps of the inventory are not in the output (rejected, or "
-              "out of scope): %s" % (len(missing), " ".join(missing) or "-"))
+        print("\n%d stations, %d pumps; %d running sets looked at for a pump "
+              "under a condition." % (len(self.stations), len(self.pumps),
+                                      self.sets))
+        print("Governed by a set of several pumps: %d of them." % self.joint)
+        if missing:
+            self.bad.append("not in the output: " + " ".join(missing))
         for line in self.bad:
             print("DISAGREES " + line)
         print("%d figures disagree." % len(self.bad))
 
 
-def sheet(inventory, published, rows, station):
-    """The recomputed terms of one station, a table a pump."""
+def results_of(path):
+    """(rule, year, {(pump, condition): row}) of the one evaluation."""
+    db = sqlite3.connect("file:%s?mode=ro" % path, uri=True)
+    db.row_factory = sqlite3.Row
+    number, rule, year = db.execute(
+        "SELECT evaluation, rule, year FROM evaluations"
+        " ORDER BY evaluation DESC LIMIT 1").fetchone()
+    rows = db.execute(
+        "SELECT p.pump_id, r.* FROM pump_results AS r JOIN pumps AS p"
+        " USING (pump) WHERE evaluation = ?", (number,)).fetchall()
+    db.close()
+    return rule, year, {(row["pump_id"], row["condition"]): row
+                        for row in rows}
+
+
+def sheet(rows, results, compute, station):
+    """The recomputed figures of one station, a table a pump."""
     for row in rows:
         if row["station_id"] != station:
             continue
-        figures, left_out = recompute(inventory, published, row)
-        print("%s, %s (%s)\n" % (row["pump_id"], row["condition"],
-                                 figures["flow_basis"]))
-        print("| figure | printed | recomputed |\n|---|---:|---:|")
-        for name in TOLERANCE:
-            if name in left_out:
-                continue
-            ours = figures[name]
-            print("| %s | %s | %s |" % (
-                name, row[name] or "unknown",
-                "unknown" if ours is None else "%.6f" % ours))
+        key = row["pump_id"], row["condition"]
+        found = compute(station, row["condition"])[row["pump_id"]]
+        print("%s, %s (%s; with %s)\n" % (*key, found["flow_basis"],
+                                          ", ".join(found["governing"])))
+        print("| figure | program | recomputed |\n|---|---:|---:|")
+        for name, ours in stored_figures(found).items():
+            print("| %s | %s | %s |" % (name, *(
+                "unknown" if value is None else "%.7f" % value
+                for value in (results[key][name], ours))))
         print()
 
 
@@ -123,19 +181,30 @@ def main(arguments):
             len(arguments) == 4 and arguments[2] != "--sheet"):
         print(__doc__, file=sys.stderr)
         return 2
+    store = os.path.join(arguments[1], "summerlow.db")
     inventory = Inventory(arguments[0], arguments[1])
-    published = Published(os.path.join(arguments[1], "summerlow.db"))
+    published = Published(store, inventory)
+    rule, year, results = results_of(store)
     with open(os.path.join(arguments[1], "pumps.csv"), newline="",
               encoding="utf-8") as file:
         rows = list(csv.DictReader(file))
+    cache = {}
+
+    def compute(station, condition):
+        key = station, condition
+        if key not in cache:
+            cache[key] = recompute(inventory, published, station, condition,
+                                   rule, year)
+        return cache[key]
     if len(arguments) == 4:
-        sheet(inventory, published, rows, arguments[3])
+        sheet(rows, results, compute, arguments[3])
         return 0
-    print("iapws %s, fluids %s, scipy %s\n" % (
-        iapws.__version__, fluids.__version__, scipy.__version__))
+    print("iapws %s, fluids %s, scipy %s; rule %s, year %d\n" % (
+        iapws.__version__, fluids.__version__, scipy.__version__, rule, year))
     comparison = Comparison()
     for row in rows:
-        comparison.row(inventory, published, row)
+        found = compute(row["station_id"], row["condition"])[row["pump_id"]]
+        comparison.row(row, results[row["pump_id"], row["condition"]], found)
     comparison.report(inventory)
     if len(comparison.stations) < 3:
         print("Fewer than 3 stations: nothing is shown by this.")
