@@ -193,6 +193,7 @@ class StationCase:
     # -- all sets
 
     def pump(self, pump):
+        """What is printed of a pump, over all its sets."""
         sets = running_sets(self.station, pump, self.flow_alone)
         self.sets_tried += len(sets)
         typical = [(one, self.typical(pump, one)) for one in sets]
@@ -203,7 +204,9 @@ class StationCase:
         judged = [pair for pair in runs if pair[1]["surplus"] is not None]
         governing, figures = (
             min(judged, key=lambda pair: pair[1]["surplus"]) if judged
-            else runs[0] if runs else (sets[0], NOTHING))
+            else runs[0] if runs
+            else (sets[0], self.unsolved(pump, sets[0], setting(
+                "typical", self.station.temperature("typical")), "typical")))
         most = self.station.most_running()
         out = [found["surplus"] for one, found in judged
                if len(one) == most - 1]
@@ -222,6 +225,8 @@ class StationCase:
             "stands": not runs, "flow_basis": pump.basis(),
             "governing": [one.key for one in governing],
             "one_out": min(out, default=None), "sets_tried": len(sets),
+            "cases": len(sets) + (not pump.ends_hold(self.ratio))
+            + pump.npshr_falls(),
         }
 
 
@@ -265,7 +270,8 @@ def closest(part_way, grid, choose):
     result = minimize_scalar(
         objective, bounds=(PARTS[max(i - 1, 0)], PARTS[min(i + 1, 8)]),
         method="bounded", options={"xatol": 1e-7})
-    return part_way(result.x)
+    found = part_way(result.x)
+    return found and dict(found, searched=True)
 
 
 def searched(part_way, corner):

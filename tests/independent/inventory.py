@@ -188,7 +188,8 @@ class Published:
 
 class Rule:
     def __init__(self, name, make_up, measure, lift_limit):
-        self.name, self.make_up = name, make_up
+        self.name = name
+        self.make_up = None if make_up is None else words(make_up)
         self.measure, self.lift_limit = measure, lift_limit
         self.tiers = []
 

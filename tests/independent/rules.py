@@ -61,6 +61,7 @@ def judge(rule, pump, found, corner):
                 found["surplus"] = min(
                     found["surplus"], rule.lift_limit - npshr
                     - lift(pump, found) + found["friction"] + found["minor"])
+                found["required"] = npsha - found["surplus"]
     return found
 
 

@@ -357,6 +357,10 @@ class Pump:
                        and not other.wet() for other in station.pumps))
 
     def lift(self):
+        """Whether the surface lies under the eye, or may; on a main there is
+        none."""
+        if self.station.source_kind()[0] == "main":
+            return False
         datum = self.record.get("datum_elevation")
         try:
             surface = self.station.surface("typical")
