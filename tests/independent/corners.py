@@ -2,18 +2,22 @@
 from scipy.optimize import minimize_scalar
 
 from inventory import Unbounded
+from limits import limits
 from rules import judge, state
 from sets import TERMS, RunningSet, known, running_sets, setting
+from values import Station
 
 FIGURES = ("flow", "npsha", "npshr", "required", "margin", "surplus")
 NOTHING = dict.fromkeys(FIGURES + TERMS)
+SETS_FOR_LIMITS = 64  # beyond, they take too long here
 PARTS = [i / 8 for i in range(9)]
 
 
 class StationCase:
     """All pumps of a station under one condition, judged by one rule."""
 
-    def __init__(self, station, rule):
+    def __init__(self, station, rule, with_limits=False):
+        self.with_limits = with_limits
         self.station, self.rule = station, rule
         self.typical_sets = {}
         self.ratio = station.published.largest_ratio()
@@ -207,6 +211,10 @@ class StationCase:
             else runs[0] if runs
             else (sets[0], self.unsolved(pump, sets[0], setting(
                 "typical", self.station.temperature("typical")), "typical")))
+        may_go = (limits(self, pump, governing)
+                  if self.with_limits and len(sets) <= SETS_FOR_LIMITS
+                  else None)
+        names = [one.key for one in governing]
         most = self.station.most_running()
         out = [found["surplus"] for one, found in judged
                if len(one) == most - 1]
@@ -223,8 +231,9 @@ class StationCase:
             "typical": figures, "adverse": worst, "favourable": best,
             "state": proven, "likely": likely, "off_curve": off_curve,
             "stands": not runs, "flow_basis": pump.basis(),
-            "governing": [one.key for one in governing],
+            "governing": names,
             "one_out": min(out, default=None), "sets_tried": len(sets),
+            "limits": may_go,
             "cases": len(sets) + (not pump.ends_hold(self.ratio))
             + pump.npshr_falls(),
         }
@@ -289,10 +298,11 @@ def searched(part_way, corner):
     return decide(grid + [closest(part_way, grid, choose)], corner)
 
 
-def recompute(inventory, published, station_key, condition, rule, year):
-    from values import Station
+def recompute(inventory, published, station_key, condition, rule, year,
+              with_limits=False):
+    """Every pump of the station, by key."""
     station = Station(inventory, published, station_key, condition, year)
-    case = StationCase(station, published.rules[rule])
+    case = StationCase(station, published.rules[rule], with_limits)
     return {pump.key: dict(
         case.pump(pump), altitude=known(station.altitude, "typical"),
         temperature=station.temperature("typical"))

@@ -103,6 +103,23 @@ def printed_figures(stored):
     return out
 
 
+# Columns that a store may have beside.
+BESIDE = {"one_out_surplus": HEAD_TOLERANCE, "limit_level": 1e-6,
+          "limit_temperature": 1e-5, "limit_flow": 1e-8}
+BESIDE_WORDS = ("running", "limit_level_end",
+                "limit_temperature_end", "limit_flow_end")
+
+
+def beside(found):
+    """By the columns of pump_results."""
+    out = {"one_out_surplus": found["one_out"],
+           "running": len(found["governing"])}
+    for name, (end, value) in (found["limits"] or {}).items():
+        out["limit_" + name] = value
+        out["limit_%s_end" % name] = end
+    return out
+
+
 class Comparison:
     def __init__(self):
         self.largest = collections.defaultdict(lambda: (0.0, ""))
@@ -152,6 +169,16 @@ class Comparison:
             text = row[name]
             self.column(where, "pumps.csv " + name, printed[name],
                         None if text == "" else float(text), tolerance)
+        here = beside(found)
+        for name in set(here) & set(result.keys()):
+            if name in BESIDE:
+                self.column(where, name, here[name], result[name],
+                            BESIDE[name])
+            else:
+                self.compared[name] += 1
+                if here[name] != result[name]:
+                    self.bad.append("%s, %s: there %s, here %s" % (
+                        where, name, result[name], here[name]))
         self.pumps.add(row["pump_id"])
         self.stations.add(row["station_id"])
         self.sets += found["sets_tried"]
@@ -167,6 +194,11 @@ class Comparison:
                 print("%-28s %9d %12.1e %12.1e" % (
                     prefix + name, self.compared[prefix + name], tolerance,
                     self.largest[prefix + name][0]))
+        for name in BESIDE_WORDS + tuple(BESIDE):
+            if self.compared[name]:
+                print("%-28s %9d %12s" % (name, self.compared[name], (
+                    "%.1e %12.1e" % (BESIDE[name], self.largest[name][0]))
+                    if name in BESIDE else "equal"))
         missing = sorted(set(inventory.pumps) - self.pumps)
         print("\n%d stations, %d pumps; %d running sets looked at for a pump "
               "under a condition." % (len(self.stations), len(self.pumps),
@@ -226,13 +258,14 @@ def main(arguments):
     with open(os.path.join(arguments[1], "pumps.csv"), newline="",
               encoding="utf-8") as file:
         rows = list(csv.DictReader(file))
+    with_limits = any("limit_level" in row.keys() for row in results.values())
     cache = {}
 
     def compute(station, condition):
         key = station, condition
         if key not in cache:
             cache[key] = recompute(inventory, published, station, condition,
-                                   rule, year)
+                                   rule, year, with_limits)
         return cache[key]
     if len(arguments) == 4:
         sheet(rows, results, compute, arguments[3])

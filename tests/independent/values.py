@@ -28,6 +28,7 @@ class Station:
         self.inventory, self.published, self.year = inventory, published, year
         self.record = inventory.stations[key]
         self.key = key
+        self.shift = 0.0  # of the source level, while a limit is sought
         self.condition = published.conditions[condition]
         self.service = words(self.record.get("service", ""))
         self.installation = words(self.record.get("installation", ""))
@@ -145,8 +146,9 @@ class Station:
         if self.source_kind()[0] == "main":
             if "source_pressure_elevation" not in self.record:
                 raise Unbounded
-            return self.record["source_pressure_elevation"]
-        return between(self.level, corner) + self.condition["level_addition"]
+            return self.record["source_pressure_elevation"] + self.shift
+        return (between(self.level, corner)
+                + self.condition["level_addition"] + self.shift)
 
     def pressure_at(self, corner):
         kind, known = self.source_kind()
