@@ -42,7 +42,8 @@ void sl_layout_make(struct sl_layout *layout, const struct sl_dossier *dossier,
                     const struct sl_margin_rule *rule, bool apart,
                     struct sl_arena *arena);
 
-/* Whether two classes draw through a pipe that both use. */
+/* Whether pumps of two classes, or two pumps of one, draw through a pipe that
+ * both use. */
 bool sl_classes_share(const struct sl_class *a, const struct sl_class *b);
 
 /* The sets to try, one after another. */

@@ -180,8 +180,7 @@ static bool beside_unsure(const struct governing *all, size_t class,
         if (all->sets->counts[c] <= (c == class) || !other->unsure)
             continue;
         unsure = true;
-        *sharing = *sharing || c == class ||
-                   sl_classes_share(other, &layout->classes[class]);
+        *sharing = *sharing || sl_classes_share(other, &layout->classes[class]);
     }
     return unsure;
 }

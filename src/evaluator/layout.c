@@ -88,6 +88,8 @@ static bool same_plan(const struct sl_plan *a, const struct sl_plan *b)
 
 bool sl_classes_share(const struct sl_class *a, const struct sl_class *b)
 {
+    if (a == b)
+        return a->plan->path_count > 0 && a->plan->path[0].shared;
     /* The suction is a tree: ways that meet anywhere meet at its root. */
     return a->plan->path_count > 0 && b->plan->path_count > 0 &&
            a->plan->path[0].pipe == b->plan->path[0].pipe;
