@@ -34,6 +34,17 @@ static int put_pipe(struct sl_joint *joint, const struct sl_dossier_pipe *of,
     return (int)place;
 }
 
+/* A gauge on a main lies on the first pipe of the records.  The network sees
+ * it on the first pipe it is given, which may be another or a bell: there its
+ * V²/2g is taken back. */
+static double no_gauge_here(const struct sl_plan *plan,
+                            const struct sl_path_pipe *place, int draws_from)
+{
+    bool first = place && place == &plan->path[0];
+
+    return plan->source_kind == SL_MAIN && draws_from < 0 && !first ? 1 : 0;
+}
+
 static int add_pipe(struct sl_joint *joint, const struct sl_setting *setting,
                     const struct sl_path_pipe *place, int draws_from, bool own)
 {
@@ -45,7 +56,8 @@ static int add_pipe(struct sl_joint *joint, const struct sl_setting *setting,
         .length = full ? record->length.value : 0,
         .bore = record->bore.value,
         .hazen_williams_c = NAN,
-        .minor_k = wall_of(setting, own, SL_IN_SUCTION_MINOR, &place->minor_k),
+        .minor_k = wall_of(setting, own, SL_IN_SUCTION_MINOR, &place->minor_k) +
+                   no_gauge_here(setting->plan, place, draws_from),
     };
 
     if (place->hazen_williams)
@@ -103,7 +115,8 @@ static int add_inlet(struct sl_joint *joint, const struct sl_setting *setting,
         .bore = plan->inlet_diameter,
         .hazen_williams_c = NAN,
         .minor_k = wall_of(setting, own, SL_IN_SUCTION_MINOR,
-                           &plan->inputs[SL_IN_SUCTION_MINOR].value),
+                           &plan->inputs[SL_IN_SUCTION_MINOR].value) +
+                   no_gauge_here(plan, NULL, -1),
     };
 
     return put_pipe(joint, NULL, &inlet);
