@@ -210,22 +210,25 @@ static void set_discharge(struct sl_joint *joint, const struct sl_plan *plan)
         sl_setting_blend(&setting, SL_IN_DISCHARGE_LOSS, &delivery->minor_k);
 }
 
-/* Flow of each pipe, by the units that draw through it. */
+static bool solved(const struct sl_joint *joint)
+{
+    return joint->end == SL_NETWORK_SOLVED || joint->end == SL_NETWORK_AT_JUMP;
+}
+
+/* Flow of each pipe, by the units that draw through it; none without a
+ * solution. */
 static void sum_pipes(struct sl_joint *joint)
 {
     for (size_t i = 0; i < joint->network.pipe_count; i++)
-        joint->pipe_flow[i] = 0;
+        joint->pipe_flow[i] = solved(joint) ? 0 : NAN;
+    if (!solved(joint))
+        return;
     for (size_t u = 0; u < joint->network.unit_count; u++)
         for (int i = joint->units[u].pipe; i >= 0;
              i = joint->pipes[i].draws_from)
             joint->pipe_flow[i] +=
                 joint->flows[u].flow *
                 (joint->pipes[i].own ? 1 : joint->units[u].count);
-}
-
-static bool solved(const struct sl_joint *joint)
-{
-    return joint->end == SL_NETWORK_SOLVED || joint->end == SL_NETWORK_AT_JUMP;
 }
 
 void sl_joint_solve(struct sl_joint *joint, const struct sl_joint_case *of)
@@ -248,8 +251,7 @@ void sl_joint_solve(struct sl_joint *joint, const struct sl_joint_case *of)
     joint->end = joint->overfull
                      ? SL_NETWORK_BAD_INPUT
                      : sl_network_solve(&joint->network, NULL, joint->flows);
-    if (solved(joint))
-        sum_pipes(joint);
+    sum_pipes(joint);
 }
 
 const struct sl_unit_flow *sl_joint_unit(const struct sl_joint *joint,
