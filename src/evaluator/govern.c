@@ -28,14 +28,36 @@ static void take(const struct governing *all, struct sl_tried *into,
     into->outcome = *outcome;
 }
 
-/* Less surplus; without an NPSHR, less NPSHA.  A figure before none. */
-static bool worse(const struct sl_case *a, const struct sl_case *b)
+/* Sets this near to each other, m, are equal: a pump that stands in one and
+ * is not in the other changes the last digits alone. */
+#define TIE 1e-9
+
+/* Of two figures the lesser; of equal ones that of the smaller set, then of
+ * the lesser flow. */
+static bool below(double a, double b, const struct sl_case *figures,
+                  int running, const struct sl_tried *kept)
 {
+    if (isnan(a) != isnan(b))
+        return isnan(b);
+    if (fabs(a - b) > TIE)
+        return a < b;
+    if (running != kept->running)
+        return running < kept->running;
+    return figures->flow < kept->outcome.figures.flow - TIE;
+}
+
+/* Less surplus; without an NPSHR, less NPSHA.  A figure before none; strict:
+ * none before a figure. */
+static bool worse(const struct sl_case *a, int running,
+                  const struct sl_tried *kept, bool strict)
+{
+    const struct sl_case *b = &kept->outcome.figures;
+
     if (isnan(a->surplus) != isnan(b->surplus))
-        return isnan(b->surplus);
+        return isnan(b->surplus) != strict;
     if (isnan(a->surplus))
-        return a->terms.npsha < b->terms.npsha;
-    return a->surplus < b->surplus;
+        return below(a->terms.npsha, b->terms.npsha, a, running, kept);
+    return below(a->surplus, b->surplus, a, running, kept);
 }
 
 /* The lesser of two; strict: none where one has none. */
@@ -64,19 +86,13 @@ static void fold_rules(const struct governing *all,
 static void take_worst(const struct governing *all, struct sl_tried *kept,
                        const struct sl_outcome *outcome, bool strict)
 {
-    bool replace = !kept->counts;
     struct sl_outcome before;
 
-    if (!replace && strict)
-        replace = !isnan(kept->outcome.figures.surplus) &&
-                  !(kept->outcome.figures.surplus <= outcome->figures.surplus);
-    else if (!replace)
-        replace = worse(&outcome->figures, &kept->outcome.figures);
     if (!kept->counts) {
         take(all, kept, outcome);
         return;
     }
-    if (!replace) {
+    if (!worse(&outcome->figures, all->sets->running, kept, strict)) {
         fold_rules(all, outcome, &kept->outcome, strict);
         return;
     }
@@ -160,9 +176,10 @@ static void note_typical(const struct governing *all, struct sl_tally *tally,
         take_worst(all, &tally->one_out, outcome, false);
 }
 
+/* Without an adverse end alone, it has none in any set. */
 static bool no_adverse(const struct sl_tally *tally)
 {
-    return tally->adverse.counts &&
+    return tally->adverse.counts && tally->adverse.running == 1 &&
            isnan(tally->adverse.outcome.figures.surplus);
 }
 

@@ -360,10 +360,10 @@ static void the_worst_set_governs(void **state)
         a = with_sets(f, (size_t)pump);
         for (size_t i = 0; i < a->set_count; i++)
             least = fmin(least, a->sets[i].figures.surplus);
-        check_close("least", a->cases[SL_TYPICAL].surplus, least, 0, 0);
-        check_close("set", a->governing.figures.surplus, least, 0, 0);
+        check_close("least", a->cases[SL_TYPICAL].surplus, least, 0, 1e-9);
+        check_close("set", a->governing.figures.surplus, least, 0, 1e-9);
         check_close("named", set_named(a, a->governing.words)->figures.surplus,
-                    least, 0, 0);
+                    least, 0, 1e-9);
     }
 }
 
