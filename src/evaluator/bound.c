@@ -9,6 +9,8 @@
 /* Golden sections of an interval: to 0.618^18, 0.0002 of it. */
 #define SECTIONS 18
 #define GOLDEN 0.6180339887498949
+/* Of the water's temperature, K: 0.4 mm of vapour pressure. */
+#define WARMTH_STEP 0.02
 
 struct search {
     const struct sl_bound_case *of;
@@ -335,6 +337,12 @@ struct grid {
     double reached[AIMS];
 };
 
+static void clear(struct grid *grid)
+{
+    for (int aim = 0; aim < AIMS; aim++)
+        grid->reached[aim] = NAN;
+}
+
 static void note(const struct search *search, struct grid *grid,
                  struct spot spot, const struct sl_outcome *here)
 {
@@ -368,8 +376,7 @@ static void over_blends(struct search *search, const struct sl_ends *ends,
     int rules = (int)search->of->layout->plans[0].tables->rule_count;
     struct grid grid;
 
-    for (int aim = 0; aim < AIMS; aim++)
-        grid.reached[aim] = NAN;
+    clear(&grid);
     for (int s = 0; s <= suction_steps; s++)
         for (int d = 0; d <= discharge_steps; d++) {
             struct spot spot = {suction_steps ? (double)s / suction_steps : 0,
@@ -411,10 +418,10 @@ static void at_temperature(struct search *search, double kelvin,
 
 /* Warm water boils sooner, cold water loses more: the surplus bends down on
  * both sides, so the best may lie between. */
-static void between_temperatures(struct search *search, double low, double high,
-                                 struct sl_joint *joint)
+static void between_temperatures(struct search *search, int aim, double low,
+                                 double high, struct sl_joint *joint)
 {
-    for (int i = 0; i < SECTIONS && high - low > 0.05; i++) {
+    for (int i = 0; i < SECTIONS && high - low > WARMTH_STEP; i++) {
         double left = high - GOLDEN * (high - low);
         double right = low + GOLDEN * (high - low);
         struct sl_outcome *all = search->best, at_left, at_right;
@@ -427,12 +434,12 @@ static void between_temperatures(struct search *search, double low, double high,
         at_temperature(search, right, joint);
         search->best = all;
         search->any = true;
-        keep(search, &at_left);
-        keep(search, &at_right);
-        if (weight_of(search, &at_left) > weight_of(search, &at_right))
+        if (aimed_at(search, &at_left, aim) > aimed_at(search, &at_right, aim))
             high = right;
         else
             low = left;
+        keep(search, &at_left); /* to keep is to fold */
+        keep(search, &at_right);
     }
 }
 
@@ -442,10 +449,12 @@ static void over_temperatures(struct search *search,
 {
     double coldest = fmin(warmth->adverse, warmth->favourable);
     double warmest = fmax(warmth->adverse, warmth->favourable);
-    double cold, middle;
+    int rules = (int)search->of->layout->plans[0].tables->rule_count;
+    struct grid cold;
 
     at_temperature(search, coldest, joint);
-    cold = weight_of(search, search->best);
+    clear(&cold);
+    note(search, &cold, (struct spot){0, 0}, search->best);
     at_temperature(search, warmest, joint);
     at_temperature(search, warmth->typical, joint);
     if (isnan(warmth->adverse) || isnan(warmth->favourable)) {
@@ -455,10 +464,11 @@ static void over_temperatures(struct search *search,
     if (search->of->sense != SL_FAVOURABLE)
         return;
     /* Most often the coldest is the best, and a little warmer is worse. */
-    at_temperature(search, coldest + 0.05, joint);
-    middle = weight_of(search, search->best);
-    if (middle > cold)
-        between_temperatures(search, coldest, warmest, joint);
+    at_temperature(search, coldest + WARMTH_STEP, joint);
+    for (int aim = 0; aim < AIMS; aim++)
+        if (is_new(&cold, aim, rules) &&
+            aimed_at(search, search->best, aim) > cold.reached[aim])
+            between_temperatures(search, aim, coldest, warmest, joint);
 }
 
 static void over_all(struct search *search, struct sl_joint *joint)
