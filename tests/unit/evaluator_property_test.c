@@ -8,31 +8,12 @@
 
 #include <cmocka.h>
 
-#include "unit/evaluator_fixture.h"
+#include "unit/random_station.h"
 
-enum { STATIONS = 2500 };
-
-/* xorshift64* (Vigna 2016, ACM Trans. Math. Softw. 42, 30), in [0, 1). */
-static double random_part(uint64_t *seed)
-{
-    *seed ^= *seed >> 12;
-    *seed ^= *seed << 25;
-    *seed ^= *seed >> 27;
-    return (double)((*seed * 2685821657736338717u) >> 11) / 9007199254740992.0;
-}
-
-static double between(uint64_t *seed, double low, double high)
-{
-    return low + (high - low) * random_part(seed);
-}
-
-static bool chance(uint64_t *seed, double part)
-{
-    return random_part(seed) < part;
-}
+enum { STATIONS = 1200 };
 
 /* A curve of this size: the fixture's, stretched. */
-static void random_curve(struct fixture *f, uint64_t *seed, double flow)
+static void random_size_curve(struct fixture *f, uint64_t *seed, double flow)
 {
     double head = between(seed, 0.6, 2.3), npshr = between(seed, 0.7, 1.7);
 
@@ -49,13 +30,13 @@ static void random_curve(struct fixture *f, uint64_t *seed, double flow)
 }
 
 /* All recorded; two or three pumps on a header or on pipes of their own. */
-static void random_station(struct fixture *f, uint64_t *seed)
+static void make_random(struct fixture *f, uint64_t *seed)
 {
     struct sl_station *station = &f->dossier.record;
     double flow = between(seed, 0.4, 4.7), level;
 
     fixture_make(f);
-    random_curve(f, seed, flow);
+    random_size_curve(f, seed, flow);
     station->service = 1 + (int)between(seed, 0, 6);
     station->site_elevation = known(between(seed, -20, 2300));
     station->cut_out_level = known(between(seed, 297.6, 299.1));
@@ -165,7 +146,7 @@ for_each_pump(uint64_t seed, void (*make)(struct fixture *f, uint64_t *seed),
 
 static void make_bounded(struct fixture *f, uint64_t *seed)
 {
-    random_station(f, seed);
+    make_random(f, seed);
     forget_bounded(f, seed);
 }
 
