@@ -30,8 +30,20 @@ void sl_judge_alike(const struct sl_judging *judging,
                     const struct sl_pump_result *first,
                     struct sl_pump_result *result);
 
-/* Parts of it: what every margin rule says; the companion checks; how far
+/* Not known exactly, so that finding it out could change the verdict.  What
+ * is derived and has no figure at all lacks it for want of others. */
+bool sl_input_is_open(const struct sl_input *input);
+/* No honest figure at its adverse end.  By its pipe the main's loss has one
+ * at any flow: where the pump has none, it is the flow that lacks. */
+bool sl_input_lacks_bound(const struct sl_input *input);
+
+/* Parts of it: each unknown's worth; the sentence that gives the reason;
+ * what every margin rule says; the companion checks; how far
  * level, temperature and flow may go. */
+void sl_weigh_unknowns(const struct sl_judging *judging,
+                       struct sl_pump_result *result);
+void sl_give_reason(const struct sl_judging *judging,
+                    struct sl_pump_result *result);
 void sl_judge_rules(const struct sl_judging *judging,
                     struct sl_pump_result *result);
 void sl_check_companions(const struct sl_judging *judging,

@@ -3,179 +3,6 @@
 #include <math.h>
 #include <string.h>
 
-struct governing {
-    const struct sl_layout *layout;
-    struct sl_sets *sets;
-    struct sl_arena *arena;
-    struct sl_tally *tallies;
-    bool list_sets;
-};
-
-static const int *copy_counts(const struct governing *all)
-{
-    size_t bytes = all->layout->class_count;
-    int *counts = sl_arena_new(all->arena, bytes, sizeof *counts);
-
-    memcpy(counts, all->sets->counts, bytes * sizeof *counts);
-    return counts;
-}
-
-static void take(const struct governing *all, struct sl_tried *into,
-                 const struct sl_outcome *outcome)
-{
-    into->counts = copy_counts(all);
-    into->running = all->sets->running;
-    into->outcome = *outcome;
-}
-
-/* Sets this near to each other, m, are equal: a pump that stands in one and
- * is not in the other changes the last digits alone. */
-#define TIE 1e-9
-
-/* Of two figures the lesser; of equal ones that of the smaller set, then of
- * the lesser flow. */
-static bool below(double a, double b, const struct sl_case *figures,
-                  int running, const struct sl_tried *kept)
-{
-    if (isnan(a) != isnan(b))
-        return isnan(b);
-    if (fabs(a - b) > TIE)
-        return a < b;
-    if (running != kept->running)
-        return running < kept->running;
-    return figures->flow < kept->outcome.figures.flow - TIE;
-}
-
-/* Less surplus; without an NPSHR, less NPSHA.  A figure before none; strict:
- * none before a figure. */
-static bool worse(const struct sl_case *a, int running,
-                  const struct sl_tried *kept, bool strict)
-{
-    const struct sl_case *b = &kept->outcome.figures;
-
-    if (isnan(a->surplus) != isnan(b->surplus))
-        return isnan(b->surplus) != strict;
-    if (isnan(a->surplus))
-        return below(a->terms.npsha, b->terms.npsha, a, running, kept);
-    return below(a->surplus, b->surplus, a, running, kept);
-}
-
-/* The lesser of two; strict: none where one has none. */
-static bool is_least(double a, double b, bool strict)
-{
-    return strict ? isnan(a) || a <= b : isnan(b) || a <= b;
-}
-
-/* Margin and each rule's surplus: the least over the sets. */
-static void fold_rules(const struct governing *all,
-                       const struct sl_outcome *other, struct sl_outcome *into,
-                       bool strict)
-{
-    size_t rules = all->layout->plans[0].tables->rule_count;
-
-    if (!is_least(into->margin, other->margin, strict))
-        into->margin = other->margin;
-    for (size_t i = 0; i < rules; i++) {
-        if (is_least(into->surplus[i], other->surplus[i], strict))
-            continue;
-        into->surplus[i] = other->surplus[i];
-        into->required[i] = other->required[i];
-    }
-}
-
-static void take_worst(const struct governing *all, struct sl_tried *kept,
-                       const struct sl_outcome *outcome, bool strict)
-{
-    struct sl_outcome before;
-
-    if (!kept->counts) {
-        take(all, kept, outcome);
-        return;
-    }
-    if (!worse(&outcome->figures, all->sets->running, kept, strict)) {
-        fold_rules(all, outcome, &kept->outcome, strict);
-        return;
-    }
-    before = kept->outcome;
-    take(all, kept, outcome);
-    fold_rules(all, &before, &kept->outcome, strict);
-}
-
-static void list_set(const struct governing *all, struct sl_tally *tally,
-                     const struct sl_outcome *outcome)
-{
-    if (!all->list_sets)
-        return;
-    if (tally->list_count == tally->list_room) {
-        size_t room = tally->list_room ? 2 * tally->list_room : 8;
-        struct sl_tried *list = sl_arena_new(all->arena, room, sizeof *list);
-
-        if (tally->list_count)
-            memcpy(list, tally->list, tally->list_count * sizeof *list);
-        tally->list = list;
-        tally->list_room = room;
-    }
-    take(all, &tally->list[tally->list_count++], outcome);
-}
-
-/* Keeps the sets of least surplus, in order. */
-static void note_least(const struct governing *all, struct sl_tally *tally,
-                       double surplus)
-{
-    size_t place = tally->least_count;
-
-    while (place > 0 &&
-           (isnan(surplus) ? !isnan(tally->least[place - 1].surplus)
-                           : surplus < tally->least[place - 1].surplus)) {
-        if (place < SL_LEAST_SETS)
-            tally->least[place] = tally->least[place - 1];
-        place--;
-    }
-    if (place == SL_LEAST_SETS)
-        return;
-    tally->least[place] = (struct sl_least){copy_counts(all), surplus};
-    if (tally->least_count < SL_LEAST_SETS)
-        tally->least_count++;
-}
-
-static void note_extremes(struct sl_tally *tally,
-                          const struct sl_outcome *outcome)
-{
-    double flow = outcome->figures.flow;
-
-    tally->least_flow = fmin(tally->least_flow, flow);
-    tally->most_flow = fmax(tally->most_flow, flow);
-    tally->most_velocity =
-        fmax(tally->most_velocity, outcome->suction_velocity);
-    tally->least_pressure =
-        fmin(tally->least_pressure, outcome->flange_pressure);
-    tally->two_crossings = tally->two_crossings || outcome->two_crossings;
-}
-
-static void note_typical(const struct governing *all, struct sl_tally *tally,
-                         const struct sl_outcome *outcome)
-{
-    tally->sets++;
-    list_set(all, tally, outcome);
-    if (outcome->stands) {
-        if (!tally->stands.counts)
-            take(all, &tally->stands, outcome);
-        if (!tally->typical.counts)
-            take(all, &tally->typical, outcome);
-        return;
-    }
-    if (!tally->runs)
-        tally->typical.counts = NULL; /* what only stood does not count */
-    tally->runs = true;
-    note_extremes(tally, outcome);
-    note_least(all, tally, outcome->figures.surplus);
-    if (outcome->position != SL_ON_CURVE && !tally->off_curve.counts)
-        take(all, &tally->off_curve, outcome);
-    take_worst(all, &tally->typical, outcome, false);
-    if (all->sets->running == all->layout->at_once - 1)
-        take_worst(all, &tally->one_out, outcome, false);
-}
-
 /* Without an adverse end alone, it has none in any set. */
 static bool no_adverse(const struct sl_tally *tally)
 {
@@ -184,7 +11,7 @@ static bool no_adverse(const struct sl_tally *tally)
 }
 
 /* A set in which what some other pump draws has no bound. */
-static bool beside_unsure(const struct governing *all, size_t class,
+static bool beside_unsure(const struct sl_governing *all, size_t class,
                           bool *sharing)
 {
     const struct sl_layout *layout = all->layout;
@@ -203,7 +30,7 @@ static bool beside_unsure(const struct governing *all, size_t class,
 }
 
 /* The largest flow on record is one it may run at again. */
-static void at_recorded_flow(const struct governing *all, size_t class,
+static void at_recorded_flow(const struct sl_governing *all, size_t class,
                              struct sl_outcome *worst)
 {
     const struct sl_class *of = &all->layout->classes[class];
@@ -242,7 +69,8 @@ static void leave_unbounded(struct sl_outcome *outcome)
         outcome->surplus[i] = NAN;
 }
 
-static void note_adverse(const struct governing *all, size_t class, bool stands)
+static void note_adverse(const struct sl_governing *all, size_t class,
+                         bool stands)
 {
     struct sl_tally *tally = &all->tallies[class];
     struct sl_bound_case of = {.layout = all->layout,
@@ -267,10 +95,10 @@ static void note_adverse(const struct governing *all, size_t class, bool stands)
         (all->layout->neighbour_unknown && self->plan->path_count > 0))
         leave_unbounded(&outcome);
     at_recorded_flow(all, class, &outcome);
-    take_worst(all, &tally->adverse, &outcome, true);
+    sl_tally_worst(all, &tally->adverse, &outcome, true);
 }
 
-static void try_set(const struct governing *all)
+static void try_set(const struct sl_governing *all)
 {
     const struct sl_layout *layout = all->layout;
     const struct sl_interval *warmth =
@@ -292,7 +120,7 @@ static void try_set(const struct governing *all)
         if (!all->sets->counts[c] || (!all->sets->all && c != all->sets->about))
             continue;
         sl_joint_outcome(&joint, c, &outcome);
-        note_typical(all, &all->tallies[c], &outcome);
+        sl_tally_typical(all, &all->tallies[c], &outcome);
         note_adverse(all, c, outcome.stands);
     }
 }
@@ -305,7 +133,7 @@ static void alone(const struct sl_layout *layout, size_t class, int *counts)
 
 /* The set whose best can prove a pump short: the one that governs, where it
  * is sure to occur and its flows are the station's own; else alone. */
-static void favourable_set(const struct governing *all, size_t class,
+static void favourable_set(const struct sl_governing *all, size_t class,
                            int *counts)
 {
     const struct sl_tally *tally = &all->tallies[class];
@@ -324,7 +152,7 @@ static void favourable_set(const struct governing *all, size_t class,
 
 /* Whether in some station of the records the pump stands in the set: with
  * the least head at its eye, the most asked and the others drawing most. */
-static bool may_stand(const struct governing *all, size_t class,
+static bool may_stand(const struct sl_governing *all, size_t class,
                       const int *counts)
 {
     const struct sl_layout *layout = all->layout;
@@ -356,7 +184,7 @@ static bool better(const struct sl_outcome *a, const struct sl_outcome *b)
     return !(a->figures.surplus <= b->figures.surplus);
 }
 
-static void take_best(const struct governing *all, struct sl_tried *kept,
+static void take_best(const struct sl_governing *all, struct sl_tried *kept,
                       const struct sl_outcome *outcome)
 {
     size_t rules = all->layout->plans[0].tables->rule_count;
@@ -364,7 +192,7 @@ static void take_best(const struct governing *all, struct sl_tried *kept,
     bool replace = better(outcome, &before);
 
     if (replace)
-        take(all, kept, outcome);
+        sl_tally_take(all, kept, outcome);
     else
         before = *outcome;
     kept->outcome.margin = fmax(kept->outcome.margin, before.margin);
@@ -373,7 +201,7 @@ static void take_best(const struct governing *all, struct sl_tried *kept,
             fmax(kept->outcome.surplus[i], before.surplus[i]);
 }
 
-static void find_favourable(struct governing *all, size_t class)
+static void find_favourable(struct sl_governing *all, size_t class)
 {
     struct sl_tally *tally = &all->tallies[class];
     struct sl_sets one = *all->sets;
@@ -390,7 +218,7 @@ static void find_favourable(struct governing *all, size_t class)
         one.running += one.counts[c];
     all->sets = &one;
     sl_bound(&of, &outcome);
-    take(all, &tally->favourable, &outcome);
+    sl_tally_take(all, &tally->favourable, &outcome);
     if (one.running == 1 || !may_stand(all, class, one.counts))
         return;
     /* Where it stands in that set it is judged by the others: at best alone. */
@@ -437,7 +265,7 @@ void sl_govern(const struct sl_layout *layout, bool list_sets,
                struct sl_arena *arena, struct sl_tally *tallies)
 {
     struct sl_sets sets;
-    struct governing all = {layout, &sets, arena, tallies, list_sets};
+    struct sl_governing all = {layout, &sets, arena, tallies, list_sets};
 
     for (size_t c = 0; c < layout->class_count; c++)
         tallies[c] =

@@ -34,163 +34,10 @@ static enum sl_state drawn(const struct sl_tally *tally)
     return SL_UNPROVEN;
 }
 
-/* Not known exactly, so that finding it out could change the verdict.  What
- * is derived and has no figure at all lacks it for want of others. */
-static bool open_input(const struct sl_input *input)
-{
-    const struct sl_interval *value = &input->value;
-
-    if (!input->applies || input->provenance == SL_RECORDED)
-        return false;
-    if (input->provenance != SL_DERIVED)
-        return true;
-    if (isnan(value->typical) && isnan(value->adverse) &&
-        isnan(value->favourable))
-        return false;
-    return !(value->adverse == value->favourable);
-}
-
-/* No honest figure at its adverse end.  By its pipe the main's loss has one
- * at any flow: where the pump has none, it is the flow that lacks. */
-static bool lacks_bound(const struct sl_input *input)
-{
-    return isnan(input->value.adverse) && (input->id != SL_IN_DISCHARGE_LOSS ||
-                                           input->provenance == SL_UNKNOWN);
-}
-
-/* The surplus with one input at an end of its own, all others at `rest`, in
- * the set that governs there. */
-static double surplus_with(const struct sl_judging *judging,
-                           enum sl_corner rest, enum sl_input_id id,
-                           enum sl_corner end)
-{
-    const struct sl_tally *tally = judging->tally;
-    const struct sl_tried *tried[] = {&tally->typical, &tally->adverse,
-                                      &tally->favourable};
-    struct sl_bound_case of = {.layout = judging->layout,
-                               .counts = tried[rest]->counts,
-                               .class = judging->class,
-                               .ends = sl_ends_all(rest),
-                               .sense = rest == SL_TYPICAL ? end : rest};
-    struct sl_outcome outcome;
-
-    if (!of.counts)
-        of.counts = tally->typical.counts;
-    of.ends.of[id] = end;
-    sl_bound(&of, &outcome);
-    return outcome.figures.surplus;
-}
-
-/* Whether some other open input lacks an honest figure at its adverse end:
- * then this one alone settles nothing. */
-static bool another_is_unbounded(const struct sl_pump_result *result,
-                                 enum sl_input_id id)
-{
-    for (int i = 0; i < SL_INPUT_COUNT; i++) {
-        const struct sl_input *input = &result->inputs[i];
-
-        if (i != (int)id && open_input(input) && lacks_bound(input))
-            return true;
-    }
-    return false;
-}
-
-/* The surplus with no other pump running. */
-static double lone_surplus(const struct sl_judging *judging,
-                           enum sl_corner corner)
-{
-    const struct sl_layout *layout = judging->layout;
-    int *counts =
-        sl_arena_new(judging->arena, layout->class_count, sizeof *counts);
-    struct sl_bound_case of = {.layout = layout,
-                               .counts = counts,
-                               .class = judging->class,
-                               .ends = sl_ends_all(corner),
-                               .sense = corner};
-    struct sl_outcome outcome;
-
-    counts[judging->class] = 1;
-    sl_bound(&of, &outcome);
-    return outcome.figures.surplus;
-}
-
-/* How much one pump at a time would better it, and whether it would do. */
-static void weigh_together(const struct sl_judging *judging,
-                           const struct sl_pump_result *result,
-                           struct sl_input *input)
-{
-    input->settles = !another_is_unbounded(result, input->id) &&
-                     lone_surplus(judging, SL_ADVERSE) >= 0;
-    input->swing = lone_surplus(judging, SL_TYPICAL) -
-                   judging->tally->typical.outcome.figures.surplus;
-}
-
-static bool unbounded(const struct sl_pump_result *result, enum sl_input_id id)
-{
-    const struct sl_input *input = &result->inputs[id];
-
-    return open_input(input) && lacks_bound(input);
-}
-
-static void weigh(const struct sl_judging *judging,
-                  struct sl_pump_result *result, struct sl_input *input)
-{
-    enum sl_input_id id = input->id;
-    double worst, best;
-
-    if (id == SL_IN_RUNNING_TOGETHER) {
-        weigh_together(judging, result, input);
-        return;
-    }
-    worst = surplus_with(judging, SL_TYPICAL, id, SL_ADVERSE);
-    best = surplus_with(judging, SL_TYPICAL, id, SL_FAVOURABLE);
-    input->swing = best - worst;
-    if (isnan(input->value.favourable)) {
-        input->settles = !another_is_unbounded(result, id);
-        return;
-    }
-    input->settles =
-        surplus_with(judging, SL_FAVOURABLE, id, SL_ADVERSE) < 0 ||
-        (!unbounded(result, SL_IN_RUNNING_TOGETHER) &&
-         surplus_with(judging, SL_ADVERSE, id, SL_FAVOURABLE) >= 0);
-}
-
-/* Settling first, then without bound, then by swing, then by place. */
-static bool matters_more(const struct sl_input *a, const struct sl_input *b)
-{
-    bool a_unbounded, b_unbounded;
-
-    if (!b)
-        return true;
-    if (a->settles != b->settles)
-        return a->settles;
-    /* Not by the swing: that is NaN too where another input has no figure. */
-    a_unbounded = lacks_bound(a);
-    b_unbounded = lacks_bound(b);
-    if (a_unbounded != b_unbounded)
-        return a_unbounded;
-    return a->swing > b->swing;
-}
-
-static void weigh_unknowns(const struct sl_judging *judging,
-                           struct sl_pump_result *result)
-{
-    for (int i = 0; i < SL_INPUT_COUNT; i++) {
-        struct sl_input *input = &result->inputs[i];
-
-        if (!open_input(input))
-            continue;
-        input->open = true;
-        weigh(judging, result, input);
-        if (matters_more(input, result->leading_unknown))
-            result->leading_unknown = input;
-    }
-}
-
 /* A stand-in without a bound is counted as unknown, whatever it stands on. */
 static enum sl_provenance how_known(const struct sl_input *input)
 {
-    if (open_input(input) && lacks_bound(input))
+    if (sl_input_is_open(input) && sl_input_lacks_bound(input))
         return SL_UNKNOWN;
     return input->provenance;
 }
@@ -200,102 +47,6 @@ static void count_inputs(struct sl_pump_result *result)
     for (int i = 0; i < SL_INPUT_COUNT; i++)
         if (result->inputs[i].applies)
             result->counts[how_known(&result->inputs[i])]++;
-}
-
-/* What running off its curve, or standing, makes unknown is told as such;
- * and an NPSHR that only lost its bounds has its own reason. */
-static bool told_otherwise(const struct sl_pump_result *result,
-                           const struct sl_input *input)
-{
-    if (input->id == SL_IN_NPSHR)
-        return result->off_curve || !isnan(result->cases[SL_TYPICAL].npshr);
-    return result->stands && input->id == SL_IN_FLOW;
-}
-
-/* "a, b and c are not known" over the inputs without any likely figure. */
-static void name_missing(const struct sl_pump_result *result,
-                         struct sl_text *text)
-{
-    const char *names[SL_INPUT_COUNT];
-    size_t count = 0;
-
-    for (int i = 0; i < SL_INPUT_COUNT; i++) {
-        const struct sl_input *input = &result->inputs[i];
-
-        if (input->applies && input->provenance == SL_UNKNOWN &&
-            isnan(input->value.typical) && !told_otherwise(result, input))
-            names[count++] = sl_input_words(input->id);
-    }
-    for (size_t i = 0; i < count; i++)
-        sl_text_addf(text, "%s%s",
-                     i == 0           ? ""
-                     : i + 1 == count ? " and "
-                                      : ", ",
-                     names[i]);
-    if (count)
-        sl_text_addf(text, " %s not known", count == 1 ? "is" : "are");
-}
-
-static const char *curve_end(enum sl_curve_position position)
-{
-    return position == SL_BEFORE_START ? "runs before the first point of its "
-                                         "published curve"
-                                       : "runs past the end of its published "
-                                         "curve";
-}
-
-static void add_off_curve(const struct sl_pump_result *result,
-                          struct sl_text *text)
-{
-    sl_text_addf(text, "%s it %s",
-                 strcmp(result->off_curve_set.words, "alone") == 0
-                     ? "running alone"
-                     : result->off_curve_set.words,
-                 curve_end(result->off_curve_set.position));
-}
-
-static void reason_unproven(const struct sl_judging *judging,
-                            const struct sl_pump_result *result,
-                            struct sl_text *text)
-{
-    const struct sl_input *leading = result->leading_unknown;
-    const struct sl_outcome *adverse = &judging->tally->adverse.outcome;
-
-    name_missing(result, text);
-    if (text->length)
-        return;
-    if (result->stands)
-        sl_text_add_string(text, "its curve does not reach the discharge "
-                                 "level: check curve, speed and levels");
-    else if (result->off_curve)
-        add_off_curve(result, text);
-    else if (leading && lacks_bound(leading) && leading->rule[0])
-        sl_text_addf(text, "%s: %s", sl_input_words(leading->id),
-                     leading->rule);
-    else if (judging->tally->adverse.counts && adverse->position != SL_ON_CURVE)
-        sl_text_addf(text, "at the adverse end of what is assumed it %s",
-                     curve_end(adverse->position));
-    else if (leading)
-        sl_text_addf(text, "what is assumed decides, %s most",
-                     sl_input_words(leading->id));
-    else
-        sl_text_add_string(text, "its figures allow no verdict");
-}
-
-static void explain(const struct sl_judging *judging,
-                    struct sl_pump_result *result)
-{
-    struct sl_text text = {0};
-
-    if (result->state == SL_UNPROVEN) {
-        reason_unproven(judging, result, &text);
-    } else if (result->off_curve) {
-        sl_text_add_string(&text, "at least: ");
-        add_off_curve(result, &text);
-    }
-    result->reason =
-        sl_arena_text(judging->arena, sl_text_string(&text), text.length);
-    sl_text_release(&text);
 }
 
 /* Off its published curve a pump's NPSHR is not known, and where it stands
@@ -465,8 +216,8 @@ void sl_judge(const struct sl_judging *judging, struct sl_pump_result *result)
     mark_what_the_curve_lacks(result);
     count_inputs(result);
     if (result->state == SL_UNPROVEN)
-        weigh_unknowns(judging, result);
-    explain(judging, result);
+        sl_weigh_unknowns(judging, result);
+    sl_give_reason(judging, result);
     sl_judge_rules(judging, result);
     sl_check_companions(judging, result);
     sl_find_limits(judging, result);
@@ -506,6 +257,6 @@ void sl_judge_alike(const struct sl_judging *judging,
     if (first->leading_unknown)
         result->leading_unknown = &result->inputs[first->leading_unknown->id];
     take_sets(judging, result);
-    explain(judging, result);
+    sl_give_reason(judging, result);
     rename_losses(judging, plan, result);
 }
