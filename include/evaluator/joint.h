@@ -43,6 +43,7 @@ struct sl_outcome {
     bool stands;
     bool two_crossings;
     enum sl_curve_position position;
+    const char *solution; /* NULL: solved */
     double suction_velocity; /* in the pipe at the pump, m/s; NaN: none */
     double flange_pressure;  /* gauge, at the suction flange, Pa */
     double required[SL_RULES_MOST];

@@ -65,6 +65,8 @@ struct sl_set_case {
     enum sl_curve_position position;
     bool stands;        /* it cannot reach the header's head in this set */
     bool two_crossings; /* its head meets the system's at a lesser flow too */
+    /* How the set's flows ended, in words; NULL: solved, or on record. */
+    const char *solution;
 };
 
 /* What a margin rule says of a pump, over all its sets. */

@@ -22,8 +22,11 @@ static const char *from_memory(char trust, const char *source)
 static void check_figures(const struct sl_sheet *sheet,
                           const struct sl_check *check)
 {
+    double shown = !isnan(check->value)    ? check->value
+                   : !isnan(check->lowest) ? check->lowest
+                                           : check->highest;
     int decimals = check->quantity == SL_PURE
-                       ? sl_digits_decimals(check->value)
+                       ? sl_digits_decimals(shown)
                        : sl_sheet_decimals(check->quantity);
     char room[SL_FIGURE_ROOM];
 

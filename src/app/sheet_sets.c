@@ -31,6 +31,15 @@ static void mark(const struct sl_sheet *sheet, bool yes, const char *words)
         fputs(words, sheet->stream);
 }
 
+/* Of many pumps the words may be those of another set too. */
+static bool same_set(const struct sl_set_case *a, const struct sl_set_case *b)
+{
+    return b->words && sl_same(a->words, b->words) &&
+           a->running == b->running &&
+           (a->figures.surplus == b->figures.surplus ||
+            isnan(a->figures.surplus));
+}
+
 static void set_line(const struct sl_sheet *sheet,
                      const struct sl_pump_result *pump,
                      const struct sl_set_case *set)
@@ -46,14 +55,16 @@ static void set_line(const struct sl_sheet *sheet,
             sl_sheet_figure(sheet, SL_LENGTH, figures->margin, 2, margin),
             sl_sheet_figure(sheet, SL_LENGTH, figures->surplus, 2, surplus));
     sl_print_safely(sheet->stream, set->words);
-    mark(sheet, sl_same(set->words, pump->governing.words), "; governs");
-    mark(sheet, sl_same(set->words, pump->one_out.words), "; one pump less");
+    mark(sheet, same_set(set, &pump->governing), "; governs");
+    mark(sheet, same_set(set, &pump->one_out), "; one pump less");
     if (set->position != SL_ON_CURVE)
         fprintf(sheet->stream, "; %s of the curve",
                 set->position == SL_PAST_END ? "past the end"
                                              : "before the start");
     mark(sheet, set->stands, "; it delivers nothing");
     mark(sheet, set->two_crossings, "; its head meets the system's twice");
+    if (set->solution)
+        fprintf(sheet->stream, "; flows: %s", set->solution);
     putc('\n', sheet->stream);
 }
 

@@ -123,7 +123,8 @@ static struct sl_set_case set_case(const struct sl_judging *judging,
                                 .figures = tried->outcome.figures,
                                 .position = tried->outcome.position,
                                 .stands = tried->outcome.stands,
-                                .two_crossings = tried->outcome.two_crossings};
+                                .two_crossings = tried->outcome.two_crossings,
+        .solution = tried->outcome.solution};
 }
 
 static void list_sets(const struct sl_judging *judging,

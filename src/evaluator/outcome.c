@@ -130,6 +130,11 @@ void sl_joint_outcome(const struct sl_joint *joint, size_t class,
                                    .flange_pressure = NAN};
     if (joint->end == SL_NETWORK_BEYOND)
         outcome->position = SL_PAST_END;
+    if (joint->overfull)
+        outcome->solution = "more unlike pumps or pipes than can be solved at "
+                            "once";
+    else if (joint->end != SL_NETWORK_SOLVED)
+        outcome->solution = sl_network_end_name(joint->end);
     if (unit)
         note_end(unit, outcome);
     figures->flow = flow;

@@ -78,6 +78,8 @@ static void reason_unproven(const struct sl_judging *judging,
     else if (judging->tally->adverse.counts && adverse->position != SL_ON_CURVE)
         sl_text_addf(text, "at the adverse end of what is assumed it %s",
                      curve_end(adverse->position));
+    else if (judging->tally->adverse.counts && adverse->solution)
+        sl_text_addf(text, "%s: %s", result->adverse_set, adverse->solution);
     else if (leading)
         sl_text_addf(text, "what is assumed decides, %s most",
                      sl_input_words(leading->id));

@@ -133,26 +133,50 @@ static void add_class(struct sl_text *text, const struct sl_layout *layout,
     }
 }
 
+/* How many of a class run beside one pump. */
+static int others_of(const struct sl_class *class, int running, size_t self)
+{
+    for (int i = 0; i < class->count; i++)
+        if (class->pumps[i] == self)
+            return running - 1;
+    return running;
+}
+
+static void add_classes(struct sl_text *text, const struct sl_layout *layout,
+                        const int *counts, size_t self, int others)
+{
+    int told = 0;
+
+    for (size_t c = 0; c < layout->class_count; c++) {
+        int running =
+            counts[c] > 0 ? others_of(&layout->classes[c], counts[c], self) : 0;
+
+        if (running == 0)
+            continue;
+        if (told >= NAMES_LISTED && others - told > 1) {
+            sl_text_addf(text, " and %d more", others - told);
+            return;
+        }
+        add_class(text, layout, &layout->classes[c], running, self, told == 0);
+        told += running;
+    }
+}
+
 const char *sl_set_words(const struct sl_layout *layout, const int *counts,
                          size_t pump, struct sl_arena *arena)
 {
     struct sl_text text = {0};
     const char *words;
-    bool first = true;
+    int others = -1; /* the pump itself */
 
-    for (size_t c = 0; c < layout->class_count; c++) {
-        const struct sl_class *class = &layout->classes[c];
-        int running = counts[c];
-
-        for (int i = 0; i < class->count; i++)
-            running -= class->pumps[i] == pump && counts[c] > 0;
-        if (running <= 0)
-            continue;
-        add_class(&text, layout, class, running, pump, first);
-        first = false;
-    }
-    if (first)
+    for (size_t c = 0; c < layout->class_count; c++)
+        others += counts[c];
+    if (others <= 0)
         sl_text_add_string(&text, "alone");
+    else if (others > NAMES_LISTED && others + 1 == (int)layout->pump_count)
+        sl_text_addf(&text, "with all %d others", others);
+    else
+        add_classes(&text, layout, counts, pump, others);
     words = sl_arena_text(arena, sl_text_string(&text), text.length);
     sl_text_release(&text);
     return words;

@@ -368,8 +368,8 @@ static void a_result_comes_back_whole(void **state)
 /* Every set, check, rule and limit told, each with a value of its own. */
 static void fill_sets(struct fixture *f, struct sl_pump_result *result)
 {
-    result->governing = (struct sl_set_case){
-        "with P-2, P-3", 3, {.flow = 1}, SL_ON_CURVE, false, false};
+    result->governing =
+        (struct sl_set_case){.words = "with P-2, P-3", .running = 3};
     result->one_out =
         (struct sl_set_case){.words = "with any 1 of P-2, P-3",
                              .running = 2,
