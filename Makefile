@@ -49,7 +49,7 @@ NEEDED_TO_TEST := $(NEEDED_TO_BUILD) libcmocka-dev sqlite3
 
 .DELETE_ON_ERROR:
 .SUFFIXES:
-.PHONY: all help demo test check unit cli examples recompute compare \
+.PHONY: all help demo test check unit cli examples recompute bench compare \
         clean install uninstall tidy sample needed-to-build needed-to-test
 
 all: needed-to-build ## build the program (the default)
@@ -145,9 +145,17 @@ examples: $(OUT)/summerlow ## published worked examples, CSV in, CSV out
 # A second implementation on general-purpose libraries; see
 # docs/verification.md.
 NEEDED_TO_RECOMPUTE := python3 python3-iapws python3-fluids python3-scipy
+
 recompute: all ## work every pump out anew by other libraries, and compare
 	@$(call need,$(NEEDED_TO_RECOMPUTE))
 	@sh tests/independent/recompute.sh $(OUT)/summerlow build/recompute
+
+# How much work an evaluation is; see docs/performance.md.
+NEEDED_TO_BENCH := $(NEEDED_TO_RECOMPUTE) valgrind
+
+bench: all ## measure the evaluation against the second implementation
+	@$(call need,$(NEEDED_TO_BENCH))
+	@/usr/bin/python3 tests/bench/bench.py $(OUT)/summerlow build/bench
 
 # The hydraulics alone against such libraries, over whole ranges.
 NEEDED_TO_COMPARE := $(NEEDED_TO_RECOMPUTE) python3-gsw

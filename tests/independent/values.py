@@ -365,7 +365,7 @@ class Pump:
             return False
         datum = self.record.get("datum_elevation")
         try:
-            surface = self.station.surface("typical")
+            surface = self.station.surface("typical") - self.station.shift
         except Unbounded:
             return True
         return datum is None or surface < datum
