@@ -46,7 +46,7 @@ class StationCase:
         if flow == 0 and pump.solved:
             return None
         found = dict(solved.terms(), flow=flow, kelvin=at.kelvin,
-                     flows=solved.flows)
+                     flows=solved.flows, past=solved.past == pump.key)
         terms = [found[name] for name in TERMS]
         found["npsha"] = None if None in terms else sum(terms)
         found["npshr"] = (None if flow is None
@@ -89,11 +89,11 @@ class StationCase:
                 + (b.get(one.key) or 0.0) * part
                 for one in pumps if one is not pump}
 
-    def has_adverse_suction(self, pump, own):
+    def has_adverse_suction(self, pump, own, pumps):
         def corner(key):
             return "typical" if key in own.pipe_keys else "adverse"
         try:
-            pump.ways(corner, True)
+            pump.ways(corner, pumps)
             return True
         except Unbounded:
             return False
@@ -107,7 +107,7 @@ class StationCase:
                 return [self.lone_adverse(pump, pumps, at)]
             return [self.figures(pump, pumps, at, corner)]
         there = tuple(one for one in pumps if one is pump
-                      or self.has_adverse_suction(one, pump))
+                      or self.has_adverse_suction(one, pump, pumps))
         ends = [self.figures(pump, there, at._replace(others="adverse"),
                              corner),
                 self.figures(pump, pumps, at._replace(others="favourable"),
@@ -202,8 +202,8 @@ class StationCase:
         self.sets_tried += len(sets)
         typical = [(one, self.typical(pump, one)) for one in sets]
         runs = [(one, found) for one, found in typical if found is not None]
-        off_curve = any(found["flow"] is not None
-                        and pump.off_curve(found["flow"])
+        off_curve = any(found.get("past") or (
+            found["flow"] is not None and pump.off_curve(found["flow"]))
                         for _, found in runs)
         judged = [pair for pair in runs if pair[1]["surplus"] is not None]
         governing, figures = (

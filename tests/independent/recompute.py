@@ -59,9 +59,10 @@ def undecided(found):
     """Figures of which the documents do not say from which case they are: of
     a corner that has no surplus, where there were several cases.  They are
     compared, and a difference is counted, but is none of ours."""
-    return {"%s_%s" % (name, corner) for corner in CORNERS[1:]
-            for name in SEARCHED if name != "margin"
-            and found[corner]["surplus"] is None and found["cases"] > 1}
+    out = {"%s_%s" % (name, corner) for corner in CORNERS
+           for name in SEARCHED if name != "margin"
+           and found[corner]["surplus"] is None and found["cases"] > 1}
+    return out | set(TERMS if "flow_typical" in out else ())
 
 
 def differ(ours, theirs, tolerance):

@@ -77,6 +77,8 @@ def state(typical, adverse, favourable, off_curve):
         proven = "clear"
     else:
         proven = "unproven"
+    if proven in ("short", "thin"):
+        return proven, proven
     if typical["surplus"] is None:
         return proven, "unproven"
     if typical["margin"] < 0:

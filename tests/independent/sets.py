@@ -44,7 +44,7 @@ class RunningSet:
         self.static = None
         self.ways = {}
         imposed = imposed or {}
-        self.flows, self.failed = {}, set()
+        self.flows, self.past = {}, None
         free = []
         for pump in pumps:
             if pump.key in imposed:
@@ -78,7 +78,7 @@ class RunningSet:
     def way(self, pump):
         if pump.key not in self.ways:
             self.ways[pump.key] = pump.ways(self.corner_of(pump),
-                                            pump is self.own)
+                                            self.pumps)
         return self.ways[pump.key]
 
     def through(self, pipe_key):
@@ -104,6 +104,8 @@ class RunningSet:
         if self.station.source_kind()[0] != "main" or not pump.path:
             return 0.0
         first = pump.path[-1]
+        if "bore" not in first:
+            raise Unbounded
         return velocity_head(self.through(first["pipe_id"]), first["bore"])
 
     # -- flows
@@ -150,6 +152,7 @@ class RunningSet:
                 self.flows.update((pump.key, float("nan")) for pump in free)
         for pump in free:
             if self.flows[pump.key] != self.flows[pump.key]:
+                self.past = pump.key
                 self.flows.update((one.key, None) for one in free)
                 return
 

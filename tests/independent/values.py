@@ -348,15 +348,16 @@ class Pump:
 
     # -- suction
 
-    def without_adverse_suction(self):
-        """Beside a pump that may draw through the same pipes."""
+    def without_adverse_suction(self, pumps):
+        """Beside a pump that may draw through the same pipes: one of the set
+        whose suction is not on record, or one that was rejected."""
         station = self.station
         most = station.record.get("pumps_running_max")
         if not self.path or (most is not None and int(most) <= 1):
             return False
         return (station.key in station.inventory.short_stations
                 or any(other is not self and not other.path
-                       and not other.wet() for other in station.pumps))
+                       and not other.wet() for other in pumps))
 
     def lift(self):
         """Whether the surface lies under the eye, or may; on a main there is
@@ -370,7 +371,7 @@ class Pump:
             return True
         return datum is None or surface < datum
 
-    def ways(self, corner, own):
+    def ways(self, corner, beside=()):
         """The parts of its suction: a list of (pipe key, length, bore,
         roughness, C, K), constant friction, constant minor loss, and the
         bell's (bore, K).  `corner` is a function of a pipe key (None for
@@ -412,7 +413,7 @@ class Pump:
                 rough = between(lambda e: station.pipe_roughness(pipe, e), end)
             parts.append((pipe["pipe_id"], length, pipe["bore"], rough,
                           float(pipe.get("hazen_williams_c", 0)), k))
-        if own and self.without_adverse_suction() and not (
+        if self.without_adverse_suction(beside) and not (
                 corner(None) in ("typical", "favourable")):
             raise Unbounded
         return parts, friction, 0.0, None
