@@ -12,6 +12,9 @@ struct sl_bound_case {
     /* Which way to look over what has no one end: the water's temperature,
      * other pumps' suctions, and for some curves the pump's own. */
     enum sl_corner sense;
+    /* The set solved with all unknowns typical, if it is at hand. */
+    const struct sl_joint *typical;
+    const double *start; /* flows near by, by class; NULL: none */
 };
 
 /* Solves it.  At the typical sense there is one case.  Else:

@@ -22,6 +22,8 @@ struct sl_joint_case {
     /* The others' flows, by class, in place of solving them; NULL: solved. */
     const double *given;
     double imposed; /* flow of the focus, m³/s; NaN: solved */
+    /* Flows to start from, by class; NULL: none. */
+    const double *start;
 };
 
 struct sl_joint {
@@ -43,7 +45,7 @@ struct sl_outcome {
     bool stands;
     bool two_crossings;
     enum sl_curve_position position;
-    const char *solution; /* NULL: solved */
+    const char *solution;    /* NULL: solved */
     double suction_velocity; /* in the pipe at the pump, m/s; NaN: none */
     double flange_pressure;  /* gauge, at the suction flange, Pa */
     double required[SL_RULES_MOST];
@@ -62,6 +64,14 @@ void sl_joint_solve(struct sl_joint *joint, const struct sl_joint_case *of);
  * class.  `ends` are those of its balance; the flows are as solved. */
 void sl_joint_outcome(const struct sl_joint *joint, size_t class,
                       struct sl_outcome *outcome);
+
+/* The same with the balance's unknowns at other ends, where the flows do not
+ * change with them. */
+void sl_joint_outcome_at(const struct sl_joint *joint, size_t class,
+                         const struct sl_ends *ends,
+                         struct sl_outcome *outcome);
+/* The flow of one pump of each class in the set, to start from elsewhere. */
+void sl_joint_flows(const struct sl_joint *joint, double *flows);
 
 /* The setting of a plan of the set: its ends and its water. */
 struct sl_setting sl_joint_setting(const struct sl_joint *joint,

@@ -31,7 +31,7 @@ struct sl_layout {
     /* No honest bound on what others draw from the pipes of one of these. */
     bool neighbour_unknown;
     /* Room for the flows of each class, for whoever solves a set. */
-    double *worst_flows, *best_flows, *flows;
+    double *worst_flows, *best_flows, *flows, *start;
 };
 
 /* Makes the plans of all pumps under a condition, and the classes of them.

@@ -13,8 +13,9 @@ struct sl_search {
     struct sl_outcome *best;
     bool any;
     struct sl_liquid liquid;
-    double imposed;  /* flow of the pump; NaN: solved */
-    bool stood, ran; /* in some case */
+    double imposed;      /* flow of the pump; NaN: solved */
+    bool stood, ran;     /* in some case */
+    const double *start; /* flows of the last case, by class; NULL: none */
 };
 
 /* What the furthest is sought of: each rule of the tables, by its place, and

@@ -16,7 +16,8 @@ struct sl_tried {
 
 struct sl_least {
     const int *counts;
-    double surplus; /* typical; NaN comes before all figures */
+    const double *flows; /* typical, by class, m³/s */
+    double surplus;      /* typical; NaN comes before all figures */
 };
 
 /* What was found over the sets that a class runs in. */
@@ -46,6 +47,7 @@ struct sl_governing {
     struct sl_arena *arena;
     struct sl_tally *tallies; /* one a class */
     bool list_sets;
+    double *flows; /* typical, by class, of the present set */
 };
 
 /* Keep the present set with an outcome. */

@@ -70,14 +70,16 @@ static void leave_unbounded(struct sl_outcome *outcome)
 }
 
 static void note_adverse(const struct sl_governing *all, size_t class,
-                         bool stands)
+                         const struct sl_joint *typical, bool stands)
 {
     struct sl_tally *tally = &all->tallies[class];
     struct sl_bound_case of = {.layout = all->layout,
                                .counts = all->sets->counts,
                                .class = class,
                                .ends = sl_ends_all(SL_ADVERSE),
-                               .sense = SL_ADVERSE};
+                               .sense = SL_ADVERSE,
+                               .typical = typical,
+                               .start = all->flows};
     const struct sl_class *self = &all->layout->classes[class];
     struct sl_outcome outcome;
     bool sharing, unsure;
@@ -113,6 +115,7 @@ static void try_set(const struct sl_governing *all)
     struct sl_joint joint;
 
     sl_joint_solve(&joint, &typical);
+    sl_joint_flows(&joint, all->flows);
     for (size_t c = 0; c < layout->class_count; c++) {
         struct sl_outcome outcome;
 
@@ -121,7 +124,7 @@ static void try_set(const struct sl_governing *all)
             continue;
         sl_joint_outcome(&joint, c, &outcome);
         sl_tally_typical(all, &all->tallies[c], &outcome);
-        note_adverse(all, c, outcome.stands);
+        note_adverse(all, c, &joint, outcome.stands);
     }
 }
 
@@ -265,7 +268,10 @@ void sl_govern(const struct sl_layout *layout, bool list_sets,
                struct sl_arena *arena, struct sl_tally *tallies)
 {
     struct sl_sets sets;
-    struct sl_governing all = {layout, &sets, arena, tallies, list_sets};
+    struct sl_governing all = {
+        layout,    &sets,
+        arena,     tallies,
+        list_sets, sl_arena_new(arena, layout->class_count, sizeof(double))};
 
     for (size_t c = 0; c < layout->class_count; c++)
         tallies[c] =
@@ -285,26 +291,34 @@ void sl_govern(const struct sl_layout *layout, bool list_sets,
     }
 }
 
+/* NaN where it has no figure; plus infinity where it delivers nothing. */
+static double surplus_in(const struct sl_layout *layout, size_t class,
+                         const struct sl_least *set, const struct sl_ends *ends)
+{
+    struct sl_bound_case of = {.layout = layout,
+                               .counts = set->counts,
+                               .class = class,
+                               .ends = *ends,
+                               .sense = SL_TYPICAL,
+                               .start = set->flows};
+    struct sl_outcome outcome;
+
+    sl_bound(&of, &outcome);
+    return outcome.stands ? INFINITY : outcome.figures.surplus;
+}
+
 double sl_least_surplus(const struct sl_layout *layout, size_t class,
                         const struct sl_tally *tally,
-                        const struct sl_ends *ends)
+                        const struct sl_ends *ends, size_t sets)
 {
-    double least = NAN;
+    double least = INFINITY;
 
-    for (size_t i = 0; i < tally->least_count; i++) {
-        struct sl_bound_case of = {.layout = layout,
-                                   .counts = tally->least[i].counts,
-                                   .class = class,
-                                   .ends = *ends,
-                                   .sense = SL_TYPICAL};
-        struct sl_outcome outcome;
+    for (size_t i = 0; i < sets && i < tally->least_count; i++) {
+        double surplus = surplus_in(layout, class, &tally->least[i], ends);
 
-        sl_bound(&of, &outcome);
-        if (outcome.stands)
-            continue;
-        if (isnan(outcome.figures.surplus))
+        if (isnan(surplus))
             return NAN;
-        least = fmin(least, outcome.figures.surplus);
+        least = fmin(least, surplus);
     }
-    return least;
+    return isinf(least) ? NAN : least;
 }

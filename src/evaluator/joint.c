@@ -235,6 +235,7 @@ void sl_joint_solve(struct sl_joint *joint, const struct sl_joint_case *of)
 {
     const struct sl_plan *plan = delivering(of);
     const struct sl_plan *any = plan;
+    double start[SL_NETWORK_UNITS];
 
     joint->of = *of;
     joint->overfull = false;
@@ -248,9 +249,12 @@ void sl_joint_solve(struct sl_joint *joint, const struct sl_joint_case *of)
     add_units(joint);
     if (plan)
         set_discharge(joint, plan);
+    for (size_t u = 0; of->start && u < joint->network.unit_count; u++)
+        start[u] = of->start[joint->class_of[u]];
     joint->end = joint->overfull
                      ? SL_NETWORK_BAD_INPUT
-                     : sl_network_solve(&joint->network, NULL, joint->flows);
+                     : sl_network_solve(&joint->network,
+                                        of->start ? start : NULL, joint->flows);
     sum_pipes(joint);
 }
 
@@ -303,4 +307,10 @@ void sl_joint_losses(const struct sl_joint *joint, size_t class,
         losses[i] =
             sl_pipe_loss_at(&setting, &plan->path[i],
                             sl_joint_pipe_flow(joint, &plan->path[i], own));
+}
+
+void sl_joint_flows(const struct sl_joint *joint, double *flows)
+{
+    for (size_t u = 0; u < joint->network.unit_count; u++)
+        flows[joint->class_of[u]] = solved(joint) ? joint->flows[u].flow : NAN;
 }

@@ -124,7 +124,7 @@ static struct sl_set_case set_case(const struct sl_judging *judging,
                                 .position = tried->outcome.position,
                                 .stands = tried->outcome.stands,
                                 .two_crossings = tried->outcome.two_crossings,
-        .solution = tried->outcome.solution};
+                                .solution = tried->outcome.solution};
 }
 
 static void list_sets(const struct sl_judging *judging,

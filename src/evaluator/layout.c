@@ -221,6 +221,7 @@ void sl_layout_make(struct sl_layout *layout, const struct sl_dossier *dossier,
         .worst_flows = sl_arena_new(arena, count, sizeof(double)),
         .best_flows = sl_arena_new(arena, count, sizeof(double)),
         .flows = sl_arena_new(arena, count, sizeof(double)),
+        .start = sl_arena_new(arena, count, sizeof(double)),
     };
     for (size_t p = 0; p < count; p++)
         sl_plan_make(&layout->plans[p], dossier, &dossier->pumps[p], condition,

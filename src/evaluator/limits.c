@@ -10,13 +10,13 @@
 #define STEPS_MOST 60
 /* Steps in which the range of flows is looked at, from the largest. */
 #define FLOW_STEPS 32
-/* Level and temperature are looked at in steps from where they are, each
- * twice as far as the one before: the first is this part of the range. */
+/* The first of the steps in a level or temperature, of the range. */
 #define FIRST_STEP (1.0 / 32)
 
 struct limit_search {
     const struct sl_judging *judging;
     enum sl_limit_id id;
+    size_t sets; /* of the least surplus, that are solved */
 };
 
 /* The surplus in the governing set with this pump at an imposed flow. */
@@ -55,7 +55,7 @@ static double surplus_at(const struct limit_search *search, double value)
         else
             ends.temperature = value;
         surplus = sl_least_surplus(judging->layout, judging->class,
-                                   judging->tally, &ends);
+                                   judging->tally, &ends, search->sets);
     }
     return isnan(surplus) ? -INFINITY : surplus;
 }
@@ -103,14 +103,13 @@ static struct sl_limit boundary(const struct limit_search *search,
                              met.value};
 }
 
-/* From where it is, toward `worse` while the rule is met, else toward
- * `better` until it is. */
-static struct sl_limit search_limit(const struct limit_search *search,
-                                    double here, double worse, double better)
+/* Where the far end has no figure: in steps from where it is, each twice as
+ * far as the one before. */
+static struct sl_limit search_steps(const struct limit_search *search,
+                                    struct place last, double end)
 {
-    struct place last = look(search, here);
-    bool met = last.surplus >= 0, figures = true;
-    double end = met ? worse : better;
+    double here = last.value;
+    bool met = last.surplus >= 0;
 
     for (double part = FIRST_STEP; part <= 1; part *= 2) {
         struct place next = look(search, here + part * (end - here));
@@ -118,17 +117,49 @@ static struct sl_limit search_limit(const struct limit_search *search,
         if ((next.surplus >= 0) != met)
             return met ? boundary(search, last, next, LIMIT_TOLERANCE)
                        : boundary(search, next, last, LIMIT_TOLERANCE);
-        figures = figures && isfinite(next.surplus);
         last = next;
     }
+    return (struct sl_limit){SL_LIMIT_UNKNOWN, NAN};
+}
+
+/* From where it is, toward `worse` where the rule is met, else toward
+ * `better`. */
+static struct sl_limit search_range(const struct limit_search *search,
+                                    double here, double worse, double better)
+{
+    struct place now = look(search, here);
+    bool met = now.surplus >= 0;
+    struct place far = look(search, met ? worse : better);
+
+    if (!isfinite(far.surplus))
+        return search_steps(search, now, far.value);
     if (met)
-        return (struct sl_limit){SL_LIMIT_ALWAYS, NAN};
-    return (struct sl_limit){figures ? SL_LIMIT_NONE : SL_LIMIT_UNKNOWN, NAN};
+        return far.surplus >= 0 ? (struct sl_limit){SL_LIMIT_ALWAYS, NAN}
+                                : boundary(search, now, far, LIMIT_TOLERANCE);
+    return far.surplus >= 0 ? boundary(search, far, now, LIMIT_TOLERANCE)
+                            : (struct sl_limit){SL_LIMIT_NONE, NAN};
+}
+
+/* In the set of least surplus first; where another is worse at the limit
+ * found, in all of them. */
+static struct sl_limit search_limit(struct limit_search *search, double here,
+                                    double worse, double better)
+{
+    struct sl_limit limit;
+    double at;
+
+    search->sets = 1;
+    limit = search_range(search, here, worse, better);
+    at = limit.end == SL_LIMIT_ALWAYS ? worse : limit.value;
+    search->sets = SL_LEAST_SETS;
+    if (isnan(at) || surplus_at(search, at) >= -LIMIT_TOLERANCE)
+        return limit;
+    return search_range(search, here, worse, better);
 }
 
 static struct sl_limit level_limit(const struct sl_judging *judging)
 {
-    struct limit_search search = {judging, SL_LIMIT_LEVEL};
+    struct limit_search search = {judging, SL_LIMIT_LEVEL, 0};
     const struct sl_plan *plan = &judging->layout->plans[judging->pump];
     const struct sl_input *surface =
         &plan->inputs[plan->source_kind == SL_MAIN
@@ -143,7 +174,7 @@ static struct sl_limit level_limit(const struct sl_judging *judging)
 
 static struct sl_limit temperature_limit(const struct sl_judging *judging)
 {
-    struct limit_search search = {judging, SL_LIMIT_TEMPERATURE};
+    struct limit_search search = {judging, SL_LIMIT_TEMPERATURE, 0};
     const struct sl_plan *plan = &judging->layout->plans[judging->pump];
     double warmest =
         plan->salinity > 0 ? SL_LIMIT_WARMEST_SEAWATER : SL_LIMIT_WARMEST;
@@ -156,7 +187,7 @@ static struct sl_limit temperature_limit(const struct sl_judging *judging)
  * published NPSHR down. */
 static struct sl_limit flow_limit(const struct sl_judging *judging)
 {
-    struct limit_search search = {judging, SL_LIMIT_FLOW};
+    struct limit_search search = {judging, SL_LIMIT_FLOW, 0};
     const struct sl_curve_view *npshr =
         &judging->layout->plans[judging->pump].npshr;
     struct place missed;

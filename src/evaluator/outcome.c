@@ -116,11 +116,11 @@ static void note_end(const struct sl_unit_flow *unit,
         outcome->position = SL_BEFORE_START;
 }
 
-void sl_joint_outcome(const struct sl_joint *joint, size_t class,
-                      struct sl_outcome *outcome)
+void sl_joint_outcome_at(const struct sl_joint *joint, size_t class,
+                         const struct sl_ends *ends, struct sl_outcome *outcome)
 {
     const struct sl_plan *plan = joint->of.layout->classes[class].plan;
-    struct sl_setting setting = sl_joint_setting(joint, plan);
+    struct sl_setting setting = {plan, ends, joint->of.liquid};
     const struct sl_unit_flow *unit = sl_joint_unit(joint, class);
     struct sl_case *figures = &outcome->figures;
     double flow = unit && unit->end != SL_UNIT_STANDS ? unit->flow : NAN;
@@ -144,4 +144,10 @@ void sl_joint_outcome(const struct sl_joint *joint, size_t class,
     figures->margin = figures->terms.npsha - figures->npshr;
     outcome->margin = figures->margin;
     apply_rules(&setting, outcome);
+}
+
+void sl_joint_outcome(const struct sl_joint *joint, size_t class,
+                      struct sl_outcome *outcome)
+{
+    sl_joint_outcome_at(joint, class, &joint->of.ends, outcome);
 }

@@ -2,6 +2,10 @@
 
 #include <math.h>
 
+/* Of the interval: how near to an end it is looked which way a function
+ * goes from there. */
+#define NEAR_END 0.002
+
 /* Whether one outcome lies further toward an end than another; the one
  * without a figure does, at either end. */
 static bool further(enum sl_corner sense, const struct sl_case *tried,
@@ -81,10 +85,14 @@ static double attempt(struct sl_search *search, const struct sl_ends *ends,
                                 .ends = *ends,
                                 .liquid = search->liquid,
                                 .given = given,
-                                .imposed = search->imposed};
+                                .imposed = search->imposed,
+                                .start = search->start};
     struct sl_outcome outcome;
 
     sl_joint_solve(joint, &one);
+    /* The next case lies near by. */
+    sl_joint_flows(joint, search->of->layout->start);
+    search->start = search->of->layout->start;
     sl_joint_outcome(joint, search->of->class, &outcome);
     search->stood = search->stood || outcome.stands;
     search->ran = search->ran || !outcome.stands;
@@ -146,6 +154,20 @@ static double between(struct sl_search *search, const struct sl_ends *ends,
     return attempt(search, ends, layout->flows, joint);
 }
 
+/* Whether a little way in from its better end a function that bends one way
+ * is no further: then it is nowhere. */
+static bool furthest_at_end(struct sl_search *search,
+                            const struct sl_ends *ends, double worst,
+                            double best, struct sl_joint *joint)
+{
+    double sign = search->of->sense == SL_FAVOURABLE ? 1 : -1;
+    bool at_best = sign * best >= sign * worst;
+    double near_end =
+        between(search, ends, at_best ? 1 - NEAR_END : NEAR_END, joint);
+
+    return sign * near_end <= sign * (at_best ? best : worst);
+}
+
 /* The furthest of a function that bends one way. */
 static void section(struct sl_search *search, const struct sl_ends *ends,
                     struct sl_joint *joint)
@@ -203,7 +225,8 @@ void sl_search_others(struct sl_search *search, const struct sl_ends *ends,
     }
     at.others = SL_FAVOURABLE;
     if (of->sense == SL_FAVOURABLE) {
-        section(search, &at, joint);
+        if (!(bounded && furthest_at_end(search, &at, worst, best, joint)))
+            section(search, &at, joint);
         return;
     }
     middle = bounded ? between(search, &at, 0.5, joint) < fmin(worst, best)

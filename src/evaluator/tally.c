@@ -12,6 +12,15 @@ static const int *copy_counts(const struct sl_governing *all)
     return counts;
 }
 
+static const double *copy_flows(const struct sl_governing *all)
+{
+    size_t classes = all->layout->class_count;
+    double *flows = sl_arena_new(all->arena, classes, sizeof *flows);
+
+    memcpy(flows, all->flows, classes * sizeof *flows);
+    return flows;
+}
+
 void sl_tally_take(const struct sl_governing *all, struct sl_tried *into,
                    const struct sl_outcome *outcome)
 {
@@ -125,7 +134,8 @@ static void note_least(const struct sl_governing *all, struct sl_tally *tally,
     }
     if (place == SL_LEAST_SETS)
         return;
-    tally->least[place] = (struct sl_least){copy_counts(all), surplus};
+    tally->least[place] =
+        (struct sl_least){copy_counts(all), copy_flows(all), surplus};
     if (tally->least_count < SL_LEAST_SETS)
         tally->least_count++;
 }
