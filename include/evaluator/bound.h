@@ -18,9 +18,9 @@ struct sl_bound_case {
 };
 
 /* Solves it.  At the typical sense there is one case.  Else:
- * - Water temperature, where it is an unknown not taken as typical: all
- *   three of its values are tried, and for the best also those between, for
- *   cold water on a long pipe loses more by friction.
+ * - Water temperature, where it is an unknown not taken as typical: both
+ *   ends are tried, and for the best also those between, for cold water on a
+ *   long pipe loses more by friction.
  * - What other pumps lose in suctions of their own can help or harm: both
  *   ends are tried and, through the flows they run at, what lies between.
  * - Source and suction are at their end where the pump's head falls faster

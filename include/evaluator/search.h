@@ -31,7 +31,8 @@ void sl_search_keep(struct sl_search *search, struct sl_outcome *tried);
 double sl_search_aimed(const struct sl_search *search,
                        const struct sl_outcome *outcome, int aim);
 
-/* The others' suctions: both ends, and the flows between.  Where they have
+/* The others' suctions: where no pipe is shared the end at which they draw
+ * least is the worst; else both ends, and the flows between.  Where they have
  * no adverse end they may draw nothing at all: for the worst that is the set
  * without them, which is tried too; for the best it bounds the flows. */
 void sl_search_others(struct sl_search *search, const struct sl_ends *ends,

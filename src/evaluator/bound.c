@@ -226,13 +226,13 @@ static void over_temperatures(struct sl_search *search,
     clear(&cold);
     note(search, &cold, (struct spot){0, 0}, search->best);
     at_temperature(search, warmest, joint);
-    at_temperature(search, warmth->typical, joint);
     if (isnan(warmth->adverse) || isnan(warmth->favourable)) {
         at_temperature(search, NAN, joint);
         return;
     }
     if (search->of->sense != SL_FAVOURABLE)
-        return;
+        return; /* it bends down: the worst is at an end */
+    at_temperature(search, warmth->typical, joint);
     /* Most often the coldest is the best, and a little warmer is worse. */
     at_temperature(search, coldest + WARMTH_STEP, joint);
     for (int aim = 0; aim < AIMS; aim++)

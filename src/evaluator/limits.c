@@ -8,6 +8,8 @@
 /* To this in level (m) and temperature (K), and of the range in flow. */
 #define LIMIT_TOLERANCE 1e-7
 #define STEPS_MOST 60
+/* A surplus that is nought, m: what flows are solved to. */
+#define JUST_MET 1e-9
 /* Steps in which the range of flows is looked at, from the largest. */
 #define FLOW_STEPS 32
 /* The first of the steps in a level or temperature, of the range. */
@@ -16,7 +18,8 @@
 struct limit_search {
     const struct sl_judging *judging;
     enum sl_limit_id id;
-    size_t sets; /* of the least surplus, that are solved */
+    size_t sets;      /* of the least surplus, that are solved */
+    double here, now; /* its value, and the typical surplus there */
 };
 
 /* The surplus in the governing set with this pump at an imposed flow. */
@@ -86,10 +89,10 @@ static struct sl_limit boundary(const struct limit_search *search,
         if (!isfinite(missed.surplus) || i % 8 == 7)
             part = 0.5;
         next = look(search, met.value + part * (missed.value - met.value));
+        if (fabs(next.surplus) < JUST_MET)
+            return (struct sl_limit){SL_LIMIT_FOUND, next.value};
         if (next.surplus >= 0) {
             met = next;
-            if (next.surplus < tolerance * 1e-3)
-                break;
             missed.surplus /= side == 1 ? 2 : 1;
             side = 1;
         } else {
@@ -125,9 +128,9 @@ static struct sl_limit search_steps(const struct limit_search *search,
 /* From where it is, toward `worse` where the rule is met, else toward
  * `better`. */
 static struct sl_limit search_range(const struct limit_search *search,
-                                    double here, double worse, double better)
+                                    double worse, double better)
 {
-    struct place now = look(search, here);
+    struct place now = {search->here, search->now};
     bool met = now.surplus >= 0;
     struct place far = look(search, met ? worse : better);
 
@@ -142,31 +145,32 @@ static struct sl_limit search_range(const struct limit_search *search,
 
 /* In the set of least surplus first; where another is worse at the limit
  * found, in all of them. */
-static struct sl_limit search_limit(struct limit_search *search, double here,
+static struct sl_limit search_limit(const struct sl_judging *judging,
+                                    enum sl_limit_id id, double here,
                                     double worse, double better)
 {
-    struct sl_limit limit;
-    double at;
+    struct limit_search search = {judging, id, 1, here,
+                                  judging->tally->least[0].surplus};
+    struct sl_limit limit = search_range(&search, worse, better);
+    double at = limit.end == SL_LIMIT_ALWAYS ? worse : limit.value;
 
-    search->sets = 1;
-    limit = search_range(search, here, worse, better);
-    at = limit.end == SL_LIMIT_ALWAYS ? worse : limit.value;
-    search->sets = SL_LEAST_SETS;
-    if (isnan(at) || surplus_at(search, at) >= -LIMIT_TOLERANCE)
+    if (isnan(at) || judging->tally->least_count == 1)
         return limit;
-    return search_range(search, here, worse, better);
+    search.sets = SL_LEAST_SETS;
+    return surplus_at(&search, at) >= -LIMIT_TOLERANCE
+               ? limit
+               : search_range(&search, worse, better);
 }
 
 static struct sl_limit level_limit(const struct sl_judging *judging)
 {
-    struct limit_search search = {judging, SL_LIMIT_LEVEL, 0};
     const struct sl_plan *plan = &judging->layout->plans[judging->pump];
     const struct sl_input *surface =
         &plan->inputs[plan->source_kind == SL_MAIN
                           ? SL_IN_SOURCE_PRESSURE_ELEVATION
                           : SL_IN_SOURCE_LEVEL];
-    struct sl_limit limit =
-        search_limit(&search, 0, -SL_LIMIT_REACH, SL_LIMIT_REACH);
+    struct sl_limit limit = search_limit(judging, SL_LIMIT_LEVEL, 0,
+                                         -SL_LIMIT_REACH, SL_LIMIT_REACH);
 
     limit.value += surface->value.typical;
     return limit;
@@ -174,20 +178,20 @@ static struct sl_limit level_limit(const struct sl_judging *judging)
 
 static struct sl_limit temperature_limit(const struct sl_judging *judging)
 {
-    struct limit_search search = {judging, SL_LIMIT_TEMPERATURE, 0};
     const struct sl_plan *plan = &judging->layout->plans[judging->pump];
     double warmest =
         plan->salinity > 0 ? SL_LIMIT_WARMEST_SEAWATER : SL_LIMIT_WARMEST;
     double here = plan->inputs[SL_IN_TEMPERATURE].value.typical;
 
-    return search_limit(&search, here, fmax(warmest, here), SL_LIMIT_COLDEST);
+    return search_limit(judging, SL_LIMIT_TEMPERATURE, here,
+                        fmax(warmest, here), SL_LIMIT_COLDEST);
 }
 
 /* The largest flow at which it is met, looked for from the end of the
  * published NPSHR down. */
 static struct sl_limit flow_limit(const struct sl_judging *judging)
 {
-    struct limit_search search = {judging, SL_LIMIT_FLOW, 0};
+    struct limit_search search = {judging, SL_LIMIT_FLOW, 1, NAN, NAN};
     const struct sl_curve_view *npshr =
         &judging->layout->plans[judging->pump].npshr;
     struct place missed;

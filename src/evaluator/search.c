@@ -195,6 +195,18 @@ static void section(struct sl_search *search, const struct sl_ends *ends,
     }
 }
 
+/* Whether a pump beside it draws through a pipe of its way. */
+static bool shares(const struct sl_bound_case *of)
+{
+    const struct sl_layout *layout = of->layout;
+
+    for (size_t c = 0; c < layout->class_count; c++)
+        if (beside(of, c) > 0 &&
+            sl_classes_share(&layout->classes[c], &layout->classes[of->class]))
+            return true;
+    return false;
+}
+
 void sl_search_others(struct sl_search *search, const struct sl_ends *ends,
                       struct sl_joint *joint)
 {
@@ -210,6 +222,13 @@ void sl_search_others(struct sl_search *search, const struct sl_ends *ends,
         if (beside(of, c) > 0)
             sl_search_suction(of->layout->classes[c].plan, &bounded, &exact);
     if (of->ends.others == SL_TYPICAL || exact) {
+        attempt(search, &at, NULL, joint);
+        return;
+    }
+    if (self->npshr_rises && !shares(of)) {
+        /* The less they draw, the further out this one runs. */
+        at.others =
+            of->sense == SL_ADVERSE && bounded ? SL_ADVERSE : SL_FAVOURABLE;
         attempt(search, &at, NULL, joint);
         return;
     }
