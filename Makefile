@@ -155,7 +155,13 @@ NEEDED_TO_BENCH := $(NEEDED_TO_RECOMPUTE) valgrind
 
 bench: all ## measure the evaluation against the second implementation
 	@$(call need,$(NEEDED_TO_BENCH))
-	@/usr/bin/python3 tests/bench/bench.py $(OUT)/summerlow build/bench
+	@$(MAKE) --no-print-directory $(OUT)/evaluate_bench
+	@/usr/bin/python3 tests/bench/bench.py $(OUT)/summerlow \
+	    $(OUT)/evaluate_bench build/bench
+
+$(OUT)/evaluate_bench: $(OUT)/tests/bench/evaluate_bench.o $(LIBRARY_OBJECTS)
+	@echo "ld $@"
+	@$(CC) $(LINKING) -o $@ $^ $(LIBRARIES)
 
 # The hydraulics alone against such libraries, over whole ranges.
 NEEDED_TO_COMPARE := $(NEEDED_TO_RECOMPUTE) python3-gsw

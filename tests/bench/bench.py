@@ -2,11 +2,13 @@
 """How much work an evaluation is: ratios, not times, so that machines differ
 less.
 
-    bench.py SUMMERLOW WORK_DIR
+    bench.py SUMMERLOW EVALUATE_BENCH WORK_DIR
 
-1. `summerlow evaluate` on the sample inventory many times over, and the second
-   implementation (tests/independent) on some of its stations: processor time
-   a pump under a condition, the ratio, and whether both found the same.
+1. The program's evaluation of the sample inventory, many rounds of it, and the
+   second implementation's (tests/independent) of some of its stations, both
+   without reading and storing: processor time a pump under a condition, the
+   ratio, and whether both found the same. Beside it the whole of `summerlow
+   evaluate` on the sample many times over.
 2. Instructions of the program's evaluation a running set, counted by
    callgrind on tests/bench/fixed-case.
 
@@ -31,6 +33,7 @@ from inventory import CORNERS, Inventory, Published  # noqa: E402
 
 YEAR = 2026
 COPIES = 20
+ROUNDS = 20
 EVERY = 6  # of the sample's stations, for the slow implementation
 TOLERANCE = 1e-6  # m
 KEYS = ("station_id", "pump_id", "pipe_id", "draws_from", "suction_pipe_id")
@@ -128,7 +131,15 @@ def ready(program, folder, work, name):
     return inventory, Published(os.path.join(out, "summerlow.db"), inventory)
 
 
-def against_the_other(program, work):
+def evaluation_alone(evaluate_bench, store):
+    """Processor time a pump under a condition, s."""
+    done = subprocess.run([evaluate_bench, store, str(YEAR), str(ROUNDS)],
+                          stdout=subprocess.PIPE, text=True, check=True)
+    count, seconds = done.stdout.split()
+    return float(seconds) / int(count)
+
+
+def against_the_other(program, evaluate_bench, work):
     many = os.path.join(work, "inventory")
     multiply("sample-inventory", many, COPIES)
     store, seconds = evaluated(program, many, work, "many")
@@ -138,11 +149,11 @@ def against_the_other(program, work):
     stations = sorted(inventory.stations)[::EVERY]
     found, slow = second_implementation(inventory, published, stations)
     difference, count = largest_difference(small, found)
-    fast, slow = seconds / results, slow / len(found)
-    print("program: %d pumps under a condition, %.2f s, %.1f µs each, reading "
-          "and storing included" % (results, seconds, 1e6 * fast))
-    print("second implementation: %d of them, %.1f ms each"
-          % (len(found), 1e3 * slow))
+    fast, slow = evaluation_alone(evaluate_bench, small), slow / len(found)
+    print("program: %.1f µs a pump under a condition; %.1f with reading and "
+          "storing" % (1e6 * fast, 1e6 * seconds / results))
+    print("second implementation: %.1f ms, of %d of them"
+          % (1e3 * slow, len(found)))
     print("ratio: %.0f" % (slow / fast))
     print("largest difference of %d margins and surpluses: %.1e m"
           % (count, difference))
@@ -178,13 +189,13 @@ def instructions(program, work):
 
 
 def main(arguments):
-    if len(arguments) != 2:
+    if len(arguments) != 3:
         print(__doc__, file=sys.stderr)
         return 2
-    program, work = arguments
+    program, evaluate_bench, work = arguments
     shutil.rmtree(work, ignore_errors=True)
     os.makedirs(work)
-    agree = against_the_other(program, work)
+    agree = against_the_other(program, evaluate_bench, work)
     agree = instructions(program, work) and agree
     if not agree:
         print("The two implementations do not agree: the ratio says nothing.")
