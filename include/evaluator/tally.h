@@ -58,6 +58,9 @@ void sl_tally_take(const struct sl_governing *all, struct sl_tried *into,
  * counts for nothing. */
 void sl_tally_worst(const struct sl_governing *all, struct sl_tried *kept,
                     const struct sl_outcome *outcome, bool strict);
+/* The worse of two outcomes in the present set, strictly, into the first. */
+void sl_tally_fold(const struct sl_governing *all, struct sl_outcome *worst,
+                   const struct sl_outcome *other);
 /* All that is kept of a class's typical outcome in the present set. */
 void sl_tally_typical(const struct sl_governing *all, struct sl_tally *tally,
                       const struct sl_outcome *outcome);

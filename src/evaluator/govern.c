@@ -29,34 +29,45 @@ static bool beside_unsure(const struct sl_governing *all, size_t class,
     return unsure;
 }
 
-/* The largest flow on record is one it may run at again. */
+/* A case at the adverse end with a lone pump at a flow, NaN: solved. */
+static void adverse_at(const struct sl_governing *all, size_t class,
+                       double kelvin, double flow, struct sl_outcome *outcome)
+{
+    const struct sl_plan *plan = all->layout->classes[class].plan;
+    struct sl_joint_case one = {.layout = all->layout,
+                                .counts = all->sets->counts,
+                                .focus = class,
+                                .ends = sl_ends_all(SL_ADVERSE),
+                                .liquid = sl_liquid_at(plan->salinity, kelvin),
+                                .imposed = flow};
+    struct sl_joint joint;
+
+    sl_joint_solve(&joint, &one);
+    sl_joint_outcome(&joint, class, outcome);
+}
+
+/* The largest flow on record is one it may run at again: where it would not
+ * run out to it with most loss, it is judged at it. */
 static void at_recorded_flow(const struct sl_governing *all, size_t class,
                              struct sl_outcome *worst)
 {
     const struct sl_class *of = &all->layout->classes[class];
     const struct sl_number *largest =
         &of->plan->pump->record.largest_recorded_flow;
-    struct sl_joint_case imposed = {.layout = all->layout,
-                                    .counts = all->sets->counts,
-                                    .focus = class,
-                                    .ends = sl_ends_all(SL_ADVERSE),
-                                    .imposed = largest->value};
     const struct sl_interval *warmth =
         &of->plan->inputs[SL_IN_TEMPERATURE].value;
-    struct sl_outcome outcome;
-    struct sl_joint joint;
 
-    if (all->sets->running > 1 || of->given || !largest->known ||
-        !(worst->figures.flow < largest->value))
+    if (all->sets->running > 1 || of->given || !largest->known)
         return;
     for (int corner = 0; corner < SL_CORNER_COUNT; corner++) {
-        imposed.liquid = sl_liquid_at(
-            of->plan->salinity, sl_interval_at(warmth, (enum sl_corner)corner));
-        sl_joint_solve(&joint, &imposed);
-        sl_joint_outcome(&joint, class, &outcome);
-        if (isnan(outcome.figures.surplus) ||
-            outcome.figures.surplus < worst->figures.surplus)
-            *worst = outcome;
+        double kelvin = sl_interval_at(warmth, (enum sl_corner)corner);
+        struct sl_outcome outcome;
+
+        adverse_at(all, class, kelvin, NAN, &outcome);
+        if (outcome.figures.flow >= largest->value)
+            continue;
+        adverse_at(all, class, kelvin, largest->value, &outcome);
+        sl_tally_fold(all, worst, &outcome);
     }
 }
 
@@ -142,7 +153,8 @@ static void favourable_set(const struct sl_governing *all, size_t class,
     const struct sl_tally *tally = &all->tallies[class];
     const struct sl_layout *layout = all->layout;
     bool known = layout->plans[0].dossier->record.pumps_running_max.known;
-    bool sure = tally->runs && (known || tally->typical.running == 1);
+    bool sure = tally->runs && !layout->classes[class].given &&
+                (known || tally->typical.running == 1);
 
     for (size_t c = 0; c < layout->class_count; c++) {
         counts[c] = tally->typical.counts[c];

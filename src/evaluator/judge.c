@@ -27,9 +27,7 @@ static enum sl_state drawn(const struct sl_tally *tally)
         return best;
     /* Off its curve in any set, there is no NPSHR that the adverse end could
      * bound. */
-    if (state_of(&tally->adverse) == SL_CLEAR &&
-        !isnan(tally->typical.outcome.figures.surplus) &&
-        !tally->off_curve.counts)
+    if (state_of(&tally->adverse) == SL_CLEAR && !tally->off_curve.counts)
         return SL_CLEAR;
     return SL_UNPROVEN;
 }

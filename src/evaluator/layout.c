@@ -106,14 +106,37 @@ static size_t users_of(const struct sl_layout *layout,
     return users;
 }
 
-/* What stands in for fittings that no record has lies on the pipe at the
- * pump; where that is a pipe of others too, all ways must agree on it. */
-static void agree(struct sl_layout *layout, const struct sl_path_pipe *place)
+static double most(double a, double b)
 {
+    return isnan(a) || isnan(b) ? NAN : fmax(a, b);
+}
+
+static struct sl_interval wider(const struct sl_interval *a,
+                                const struct sl_interval *b)
+{
+    return (struct sl_interval){most(a->typical, b->typical),
+                                most(a->adverse, b->adverse),
+                                fmin(a->favourable, b->favourable)};
+}
+
+/* What stands in for fittings that no record has lies on the pipe at the
+ * pump; where that is a pipe of others too, all ways must agree on it: of the
+ * pumps at it on the most at the typical and the adverse end, on the least at
+ * the favourable. */
+static void agree(struct sl_layout *layout, const struct sl_dossier_pipe *pipe)
+{
+    struct sl_interval k = {0, 0, INFINITY};
+
+    for (size_t p = 0; p < layout->pump_count; p++) {
+        const struct sl_plan *plan = &layout->plans[p];
+
+        if (plan->path_count && plan->path[plan->path_count - 1].pipe == pipe)
+            k = wider(&k, &plan->path[plan->path_count - 1].minor_k);
+    }
     for (size_t p = 0; p < layout->pump_count; p++)
         for (size_t i = 0; i < layout->plans[p].path_count; i++)
-            if (layout->plans[p].path[i].pipe == place->pipe)
-                layout->plans[p].path[i] = *place;
+            if (layout->plans[p].path[i].pipe == pipe)
+                layout->plans[p].path[i].minor_k = k;
 }
 
 static void mark_shared(struct sl_layout *layout)
@@ -130,7 +153,7 @@ static void mark_shared(struct sl_layout *layout)
             plan->path_count ? &plan->path[plan->path_count - 1] : NULL;
 
         if (last && last->shared)
-            agree(layout, last);
+            agree(layout, last->pipe);
     }
 }
 

@@ -80,9 +80,13 @@ double sl_setting_surface(const struct sl_setting *setting)
 
 double sl_setting_source_head(const struct sl_setting *setting)
 {
+    /* Of what kind it is not known, nor is its pressure. */
+    double doubt = sl_setting_value(setting, SL_IN_SOURCE_KIND) * 0;
+
     return sl_setting_surface(setting) +
            sl_setting_value(setting, SL_IN_SOURCE_PRESSURE) /
-               (setting->liquid.density * SL_GRAVITY);
+               (setting->liquid.density * SL_GRAVITY) +
+           doubt;
 }
 
 struct sl_liquid sl_liquid_at(double salinity, double kelvin)

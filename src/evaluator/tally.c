@@ -177,3 +177,16 @@ void sl_tally_typical(const struct sl_governing *all, struct sl_tally *tally,
     if (all->sets->running == all->layout->at_once - 1)
         sl_tally_worst(all, &tally->one_out, outcome, false);
 }
+
+void sl_tally_fold(const struct sl_governing *all, struct sl_outcome *worst,
+                   const struct sl_outcome *other)
+{
+    struct sl_outcome before = *worst;
+    double a = other->figures.surplus, b = worst->figures.surplus;
+
+    if (!isnan(b) && !(b <= a))
+        *worst = *other;
+    else
+        before = *other;
+    fold_rules(all, &before, worst, true);
+}
