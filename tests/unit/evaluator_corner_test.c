@@ -12,7 +12,11 @@
 
 #include "unit/random_station.h"
 
+#ifdef __SANITIZE_ADDRESS__ /* several times slower */
+enum { STATIONS = 600, POINTS_EACH = 20 };
+#else
 enum { STATIONS = 3000, POINTS_EACH = 20 };
+#endif
 
 /* Of heads, m. */
 #define ALLOWED 0.001
