@@ -16,6 +16,7 @@ struct sl_tried {
 
 struct sl_least {
     const int *counts;
+    int running;
     const double *flows; /* typical, by class, m³/s */
     double surplus;      /* typical; NaN comes before all figures */
 };

@@ -157,7 +157,7 @@ static struct sl_limit search_limit(const struct sl_judging *judging,
     if (isnan(at) || judging->tally->least_count == 1)
         return limit;
     search.sets = SL_LEAST_SETS;
-    return surplus_at(&search, at) >= -LIMIT_TOLERANCE
+    return surplus_at(&search, at) >= -10 * JUST_MET
                ? limit
                : search_range(&search, worse, better);
 }

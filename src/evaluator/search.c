@@ -154,7 +154,7 @@ static double between(struct sl_search *search, const struct sl_ends *ends,
     return attempt(search, ends, layout->flows, joint);
 }
 
-/* Whether a little way in from its better end a function that bends one way
+/* Whether a little way in from its further end a function that bends one way
  * is no further: then it is nowhere. */
 static bool furthest_at_end(struct sl_search *search,
                             const struct sl_ends *ends, double worst,
@@ -215,7 +215,6 @@ void sl_search_others(struct sl_search *search, const struct sl_ends *ends,
     const struct sl_plan *self = layout->classes[of->class].plan;
     struct sl_ends at = *ends;
     bool bounded = true, exact = true;
-    bool middle;
     double worst = NAN, best;
 
     for (size_t c = 0; c < of->layout->class_count; c++)
@@ -243,13 +242,8 @@ void sl_search_others(struct sl_search *search, const struct sl_ends *ends,
         others_at(search, joint, layout->worst_flows);
     }
     at.others = SL_FAVOURABLE;
-    if (of->sense == SL_FAVOURABLE) {
-        if (!(bounded && furthest_at_end(search, &at, worst, best, joint)))
-            section(search, &at, joint);
-        return;
-    }
-    middle = bounded ? between(search, &at, 0.5, joint) < fmin(worst, best)
-                     : !self->npshr_rises || !self->head_is_steep;
-    if (middle)
+    if (bounded ? !furthest_at_end(search, &at, worst, best, joint)
+                : of->sense == SL_FAVOURABLE || !self->npshr_rises ||
+                      !self->head_is_steep)
         section(search, &at, joint);
 }

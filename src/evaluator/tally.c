@@ -87,7 +87,7 @@ static void fold_rules(const struct sl_governing *all,
 void sl_tally_worst(const struct sl_governing *all, struct sl_tried *kept,
                     const struct sl_outcome *outcome, bool strict)
 {
-    struct sl_outcome before;
+    struct sl_outcome former;
 
     if (!kept->counts) {
         sl_tally_take(all, kept, outcome);
@@ -97,9 +97,9 @@ void sl_tally_worst(const struct sl_governing *all, struct sl_tried *kept,
         fold_rules(all, outcome, &kept->outcome, strict);
         return;
     }
-    before = kept->outcome;
+    former = kept->outcome;
     sl_tally_take(all, kept, outcome);
-    fold_rules(all, &before, &kept->outcome, strict);
+    fold_rules(all, &former, &kept->outcome, strict);
 }
 
 static void list_set(const struct sl_governing *all, struct sl_tally *tally,
@@ -119,6 +119,16 @@ static void list_set(const struct sl_governing *all, struct sl_tally *tally,
     sl_tally_take(all, &tally->list[tally->list_count++], outcome);
 }
 
+/* None before a figure; of equal ones the smaller set first. */
+static bool before(double surplus, int running, const struct sl_least *kept)
+{
+    if (isnan(surplus) || isnan(kept->surplus))
+        return isnan(surplus) && !isnan(kept->surplus);
+    if (fabs(surplus - kept->surplus) > TIE)
+        return surplus < kept->surplus;
+    return running < kept->running;
+}
+
 /* Keeps the sets of least surplus, in order. */
 static void note_least(const struct sl_governing *all, struct sl_tally *tally,
                        double surplus)
@@ -126,16 +136,15 @@ static void note_least(const struct sl_governing *all, struct sl_tally *tally,
     size_t place = tally->least_count;
 
     while (place > 0 &&
-           (isnan(surplus) ? !isnan(tally->least[place - 1].surplus)
-                           : surplus < tally->least[place - 1].surplus)) {
+           before(surplus, all->sets->running, &tally->least[place - 1])) {
         if (place < SL_LEAST_SETS)
             tally->least[place] = tally->least[place - 1];
         place--;
     }
     if (place == SL_LEAST_SETS)
         return;
-    tally->least[place] =
-        (struct sl_least){copy_counts(all), copy_flows(all), surplus};
+    tally->least[place] = (struct sl_least){
+        copy_counts(all), all->sets->running, copy_flows(all), surplus};
     if (tally->least_count < SL_LEAST_SETS)
         tally->least_count++;
 }
@@ -181,12 +190,12 @@ void sl_tally_typical(const struct sl_governing *all, struct sl_tally *tally,
 void sl_tally_fold(const struct sl_governing *all, struct sl_outcome *worst,
                    const struct sl_outcome *other)
 {
-    struct sl_outcome before = *worst;
+    struct sl_outcome gone = *worst;
     double a = other->figures.surplus, b = worst->figures.surplus;
 
     if (!isnan(b) && !(b <= a))
         *worst = *other;
     else
-        before = *other;
-    fold_rules(all, &before, worst, true);
+        gone = *other;
+    fold_rules(all, &gone, worst, true);
 }
