@@ -51,6 +51,7 @@ struct sl_plan {
 
     struct sl_delivery delivery;
     enum sl_flow_basis flow_basis;
+    enum sl_npshr_basis npshr_basis;
     double speed_ratio;         /* its speed over that of its curve's test */
     double rated_ratio;         /* its speed over that of its rated point */
     struct sl_curve_view head;  /* at the speed it runs at; empty: unknown */

@@ -153,6 +153,15 @@ enum sl_flow_basis {
 };
 const char *sl_flow_basis_name(enum sl_flow_basis basis);
 
+/* Where NPSHR comes from. */
+enum sl_npshr_basis {
+    SL_NPSHR_CURVE,    /* the maker's, at the flow */
+    SL_NPSHR_RATED,    /* the rated point's, at any flow */
+    SL_NPSHR_ESTIMATE, /* by suction specific speed (F13) */
+    SL_NPSHR_NONE
+};
+const char *sl_npshr_basis_name(enum sl_npshr_basis basis);
+
 /* Which level, pressure or grade was used for the source. */
 enum sl_source_basis {
     SL_SOURCE_CUT_OUT,
@@ -237,6 +246,7 @@ struct sl_pump_result {
     const char *reason;
     enum sl_flow_basis flow_basis;
     enum sl_source_basis source_basis;
+    enum sl_npshr_basis npshr_basis;
     /* In some set, at the typical values. */
     bool off_curve; /* the flow lies past an end of the NPSHR curve */
     bool stands;    /* its curve cannot reach the header's head: no set runs */

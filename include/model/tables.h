@@ -139,6 +139,9 @@ struct sl_tables {
     struct sl_check_limit *limits;
     size_t limit_count;
     int year; /* of the audit: pipes are as old as that makes them */
+    /* Of the inventory's own that were not kept: what they ask for is not
+     * known, so nothing is clear. */
+    long long rejected_conditions;
     struct sl_vocabularies vocabularies;
 };
 

@@ -204,7 +204,9 @@ static void from_flows(const struct looking *at)
     bell(at);
     if (from_surface(at))
         hold_to_row(at, SL_CHECK_SUCTION_LIFT,
-                    0 - at->result->cases[SL_TYPICAL].terms.elevation, "");
+                    0 - at->result->cases[SL_TYPICAL].terms.elevation -
+                        at->result->cases[SL_TYPICAL].terms.gauge,
+                    "");
     else
         hold_to_row(at, SL_CHECK_BOOSTER_PRESSURE, at->tally->least_pressure,
                     "");

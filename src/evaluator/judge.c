@@ -204,10 +204,14 @@ void sl_judge(const struct sl_judging *judging, struct sl_pump_result *result)
 
     *result = (struct sl_pump_result){.pump = plan->pump,
                                       .flow_basis = plan->flow_basis,
-                                      .source_basis = plan->source_basis};
+                                      .source_basis = plan->source_basis,
+                                      .npshr_basis = plan->npshr_basis};
     memcpy(result->inputs, plan->inputs, sizeof result->inputs);
     take_sets(judging, result);
     result->state = drawn(judging->tally);
+    /* Nobody knows what a condition that was rejected would have asked. */
+    if (result->state == SL_CLEAR && plan->tables->rejected_conditions)
+        result->state = SL_UNPROVEN;
     result->likely = result->state == SL_UNPROVEN
                          ? state_of(&judging->tally->typical)
                          : result->state;

@@ -178,6 +178,7 @@ static void estimated_npshr(struct sl_plan *plan)
     if (row)
         guess = sl_estimated_npshr(plan->inputs[SL_IN_SPEED].value.typical,
                                    flow / eyes, row->value.typical);
+    plan->npshr_basis = isnan(guess) ? SL_NPSHR_NONE : SL_NPSHR_ESTIMATE;
     if (isnan(guess)) {
         sl_plan_set(plan, SL_IN_NPSHR, SL_UNKNOWN, sl_no_figure(),
                     "not recorded, and nothing bounds it");
@@ -205,6 +206,7 @@ static void npshr(struct sl_plan *plan)
         input->kind = SL_KIND_CURVE;
         input->line = first_npshr_line(plan->pump->curve);
     } else if (!isnan(plan->rated_npshr)) {
+        plan->npshr_basis = SL_NPSHR_RATED;
         input = sl_plan_set(
             plan, SL_IN_NPSHR, SL_DERIVED,
             (struct sl_interval){plan->rated_npshr, NAN, plan->rated_npshr},

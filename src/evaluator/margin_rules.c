@@ -21,7 +21,9 @@ double sl_rule_measure(const struct sl_margin_rule *rule,
         return plan->suction_specific_speed;
     case SL_MEASURE_SUCTION_LIFT:
         /* On a main there is no surface to lift from. */
-        return plan->source_kind == SL_MAIN ? 0 : 0 - figures->terms.elevation;
+        return plan->source_kind == SL_MAIN
+                   ? 0
+                   : 0 - figures->terms.elevation - figures->terms.gauge;
     case SL_MEASURE_NONE:
         break;
     }

@@ -133,7 +133,9 @@ void sl_joint_outcome_at(const struct sl_joint *joint, size_t class,
     if (joint->overfull)
         outcome->solution = "more unlike pumps or pipes than can be solved at "
                             "once";
-    else if (joint->end != SL_NETWORK_SOLVED)
+    else if (joint->end == SL_NETWORK_AT_JUMP ||
+             joint->end == SL_NETWORK_BEYOND ||
+             joint->end == SL_NETWORK_NOT_FOUND)
         outcome->solution = sl_network_end_name(joint->end);
     if (unit)
         note_end(unit, outcome);

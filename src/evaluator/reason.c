@@ -57,24 +57,49 @@ static void add_off_curve(const struct sl_pump_result *result,
                  curve_end(result->off_curve_set.position));
 }
 
+/* An unknown without a bound that has a rule to tell: the leading one, else
+ * the first. */
+static const struct sl_input *
+first_unbounded(const struct sl_pump_result *result)
+{
+    const struct sl_input *leading = result->leading_unknown;
+
+    if (leading && sl_input_lacks_bound(leading) && leading->rule[0])
+        return leading;
+    for (int i = 0; i < SL_INPUT_COUNT; i++) {
+        const struct sl_input *input = &result->inputs[i];
+
+        if (sl_input_is_open(input) && sl_input_lacks_bound(input) &&
+            input->rule[0])
+            return input;
+    }
+    return NULL;
+}
+
 static void reason_unproven(const struct sl_judging *judging,
                             const struct sl_pump_result *result,
                             struct sl_text *text)
 {
     const struct sl_input *leading = result->leading_unknown;
+    const struct sl_input *unbounded = first_unbounded(result);
+    const struct sl_plan *plan = &judging->layout->plans[judging->pump];
     const struct sl_outcome *adverse = &judging->tally->adverse.outcome;
 
     name_missing(result, text);
     if (text->length)
         return;
-    if (result->stands)
+    if (plan->tables->rejected_conditions && result->likely == SL_CLEAR &&
+        !unbounded)
+        sl_text_add_string(text, "a condition to audit was rejected (see "
+                                 "findings.csv); what it asks is not known");
+    else if (result->stands)
         sl_text_add_string(text, "its curve does not reach the discharge "
                                  "level: check curve, speed and levels");
     else if (result->off_curve)
         add_off_curve(result, text);
-    else if (leading && sl_input_lacks_bound(leading) && leading->rule[0])
-        sl_text_addf(text, "%s: %s", sl_input_words(leading->id),
-                     leading->rule);
+    else if (unbounded)
+        sl_text_addf(text, "%s: %s", sl_input_words(unbounded->id),
+                     unbounded->rule);
     else if (judging->tally->adverse.counts && adverse->position != SL_ON_CURVE)
         sl_text_addf(text, "at the adverse end of what is assumed it %s",
                      curve_end(adverse->position));

@@ -62,14 +62,21 @@ static bool exact(const struct sl_interval *value)
     return value->adverse == value->favourable;
 }
 
+/* A year after the audit's is a slip, and tells nothing. */
+static bool laid_by_then(const struct sl_plan *plan,
+                         const struct sl_number *year_laid)
+{
+    return year_laid->known && year_laid->value <= plan->tables->year;
+}
+
 static struct sl_interval years_since(const struct sl_plan *plan,
                                       const struct sl_number *year_laid)
 {
     const struct sl_default *row =
         sl_default_find(plan->tables, "pipe_age", "");
 
-    if (year_laid->known)
-        return sl_exactly(fmax(0, plan->tables->year - year_laid->value));
+    if (laid_by_then(plan, year_laid))
+        return sl_exactly(plan->tables->year - year_laid->value);
     return row ? row->value : sl_no_figure();
 }
 
@@ -104,7 +111,8 @@ struct sl_interval sl_plan_roughness(const struct sl_plan *plan, int material,
     if (state == SL_FRICTION_NEW || !ageing || ageing->rate.adverse == 0)
         return laid;
     years = years_since(plan, year_laid);
-    *assumed = *assumed || !year_laid->known || !exact(&ageing->rate);
+    *assumed =
+        *assumed || !laid_by_then(plan, year_laid) || !exact(&ageing->rate);
     return (struct sl_interval){
         aged(laid.typical, ageing->rate.typical, years.typical, bore),
         aged(laid.adverse, ageing->rate.adverse, years.adverse, bore),
@@ -290,12 +298,13 @@ static void fittings(struct sl_plan *plan)
                   plan->inputs[SL_IN_DATUM].value.typical);
     struct sl_interval *at_pump = &plan->path[plan->path_count - 1].minor_k;
     size_t recorded = 0;
-    bool rejected = false;
+    bool rejected = false, bare = false;
 
     for (size_t i = 0; i < plan->path_count; i++) {
         struct sl_path_pipe *place = &plan->path[i];
 
         recorded += place->pipe->fitting_count;
+        bare = bare || place->pipe->fitting_count == 0;
         rejected = rejected || place->pipe->rejected_fittings > 0;
         provenance = weaker(provenance, fittings_of(plan, place));
         sum.typical += place->minor_k.typical;
@@ -303,8 +312,12 @@ static void fittings(struct sl_plan *plan)
         sum.favourable += place->minor_k.favourable;
     }
     if (recorded)
-        sl_plan_set(plan, SL_IN_SUCTION_MINOR, provenance, sum,
-                    "the sum of K over the path's fittings");
+        sl_plan_set(plan, SL_IN_SUCTION_MINOR,
+                    bare && provenance == SL_RECORDED ? SL_DERIVED : provenance,
+                    sum,
+                    bare ? "the sum of K over the path's fittings; one of its "
+                           "pipes has none on record, and none counts there"
+                         : "the sum of K over the path's fittings");
     else
         *at_pump = sl_plan_default(plan, SL_IN_SUCTION_MINOR, "suction_minor_k",
                                    lift ? "suction lift" : "")

@@ -56,5 +56,7 @@ void sl_judge_rules(const struct sl_judging *judging,
                 none ? NAN : tried[corner]->outcome.surplus[i];
         }
         verdict->state = verdict_of(verdict, tally);
+        if (verdict->state == SL_CLEAR && tables->rejected_conditions)
+            verdict->state = SL_UNPROVEN;
     }
 }

@@ -23,6 +23,14 @@ const char *sl_flow_basis_name(enum sl_flow_basis basis)
     return basis <= SL_FLOW_NONE ? names[basis] : "?";
 }
 
+const char *sl_npshr_basis_name(enum sl_npshr_basis basis)
+{
+    static const char *const names[] = {"curve", "rated point", "estimate",
+                                        "unknown"};
+
+    return basis <= SL_NPSHR_NONE ? names[basis] : "?";
+}
+
 const char *sl_source_basis_name(enum sl_source_basis basis)
 {
     static const char *const names[] = {
