@@ -1,6 +1,5 @@
 #include "ranker/set_cells.h"
 
-#include <math.h>
 
 #include "ranker/words.h"
 
@@ -64,7 +63,7 @@ void sl_cells_limits(struct sl_cells *cells, const struct sl_pump_row *row)
         const struct sl_limit *limit = &row->limits[id];
 
         sl_cell_number(cells, limits[id].name, limits[id].quantity,
-                       limit->end == SL_LIMIT_FOUND ? limit->value : NAN);
+                       sl_limit_value(limit));
         sl_cell_text(cells, limits[id].end, sl_words_limit_end(limit->end));
     }
 }

@@ -55,7 +55,7 @@ static void bind_limits(struct sl_statement *statement,
         const struct sl_limit *limit = &pump->limits[id];
 
         sl_bind_number(statement, limit_columns[id].value,
-                       limit->end == SL_LIMIT_FOUND ? limit->value : NAN);
+                       sl_limit_value(limit));
         sl_bind_text(statement, limit_columns[id].end,
                      sl_limit_end_name(limit->end));
     }

@@ -205,6 +205,20 @@ static void test_no_figure_where_none_was_found(void **state)
     free(table);
 }
 
+/* Where figures end the value is how far the rule is met. */
+static void test_a_figure_where_figures_end(void **state)
+{
+    struct sl_pump_row row = pump_with_sets();
+    char *table = NULL;
+
+    (void)state;
+    row.limits[SL_LIMIT_LEVEL] =
+        (struct sl_limit){SL_LIMIT_FIGURES_END, 77.125};
+    table = pumps_table(&row, SL_SI);
+    assert_in(table, ",77.125,as far as there are figures,");
+    free(table);
+}
+
 /* --- the page ------------------------------------------------------------ */
 
 static char *page_of(const struct sl_pump_row *row, struct sl_summary *summary)
@@ -303,6 +317,7 @@ int main(void)
         cmocka_unit_test(test_pumps_table_tells_the_sets),
         cmocka_unit_test(test_pumps_table_in_us_units),
         cmocka_unit_test(test_no_figure_where_none_was_found),
+        cmocka_unit_test(test_a_figure_where_figures_end),
         cmocka_unit_test(test_a_balance_tells_what_stands_beside_it),
         cmocka_unit_test(test_rules_stand_side_by_side),
         cmocka_unit_test(test_an_older_evaluation_says_so),

@@ -387,7 +387,8 @@ static void fill_sets(struct fixture *f, struct sl_pump_result *result)
     result->limits[SL_LIMIT_LEVEL] = (struct sl_limit){SL_LIMIT_FOUND, 1204.37};
     result->limits[SL_LIMIT_TEMPERATURE] =
         (struct sl_limit){SL_LIMIT_NONE, 300.5};
-    result->limits[SL_LIMIT_FLOW] = (struct sl_limit){SL_LIMIT_ALWAYS, NAN};
+    result->limits[SL_LIMIT_FLOW] =
+        (struct sl_limit){SL_LIMIT_FIGURES_END, 0.0734};
     result->rule_count = f->tables.rule_count;
     result->rules =
         sl_arena_new(&f->arena, result->rule_count, sizeof *result->rules);
@@ -436,7 +437,7 @@ static void the_sets_come_back_whole(void **state)
         "unknown nan|unknown nan|unknown nan\n"
         "with P-2, P-3|3|6|1|with P-3|with any 1 of P-2, P-3|1.31|-0.19|"
         "past its end|alone|with P-2|1|submergence; two crossings|STUC-T|"
-        "found 1204.37|none nan|always nan\n");
+        "found 1204.37|none nan|figures end 0.07\n");
     sl_text_release(&text);
 }
 
