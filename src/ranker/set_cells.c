@@ -1,6 +1,5 @@
 #include "ranker/set_cells.h"
 
-
 #include "ranker/words.h"
 
 /* Empty where it was not kept: none of these counts can be 0. */
