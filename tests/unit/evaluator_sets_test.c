@@ -150,10 +150,46 @@ static void too_many_pumps_are_tried_in_part(void **state)
     /* Alone, and with one, two and three of those that flow most. */
     assert_int_equal(first->sets_tried, 4);
     assert_string_equal(first->governing.words, "alone");
+    /* One that was not tried may be worse. */
+    assert_true(first->cases[SL_ADVERSE].surplus >= 0);
+    check_state("in part", first, SL_UNPROVEN, SL_CLEAR);
+    assert_non_null(strstr(first->reason, "in the 4 running sets"));
+    assert_int_equal(first->rules[0].state, SL_UNPROVEN);
+    f->dossier.record.pumps_running_max = known(1);
+    first = summer(f);
+    assert_true(first->sets_all);
+    check_state("one at a time", first, SL_CLEAR, SL_CLEAR);
+    f->dossier.record.pumps_running_max = known(4);
     f->dossier.pump_count = MANY - 1;
     first = summer(f);
     assert_true(first->sets_all);
     assert_int_equal(first->sets_tried, 1 + 15 + 105 + 455);
+}
+
+/* Equal ones differ by how many run, which is soon tried. */
+static void many_equal_pumps_are_tried_in_full(void **state)
+{
+    static struct sl_dossier_pump many[MANY];
+    static struct sl_dossier_pipe pipes[MANY];
+    struct fixture *f = *state;
+    const struct sl_pump_result *first;
+
+    for (int i = 0; i < MANY; i++) {
+        pipes[i] = f->pipes[0];
+        many[i] = f->pumps[0];
+        many[i].suction = &pipes[i];
+    }
+    f->dossier.pumps = many;
+    f->dossier.pump_count = MANY;
+    f->dossier.pipes = pipes;
+    f->dossier.pipe_count = MANY;
+    f->dossier.record.pumps_running_max = known(MANY);
+    f->dossier.record.discharge_loss_head = known(0.01);
+    first = summer(f);
+    assert_true(first->sets_all);
+    assert_int_equal(first->sets_tried, MANY);
+    assert_int_equal(first->one_out.running, MANY - 1);
+    check_state("all", first, SL_CLEAR, SL_CLEAR);
 }
 
 static void a_set_in_which_a_pump_stands_is_told(void **state)
@@ -781,6 +817,7 @@ int main(void)
         TEST(one_fewer_than_all_may_govern),
         TEST(an_unknown_maximum_is_named),
         TEST(too_many_pumps_are_tried_in_part),
+        TEST(many_equal_pumps_are_tried_in_full),
         TEST(a_set_in_which_a_pump_stands_is_told),
         TEST(two_crossings_are_told),
         TEST(a_given_neighbour_denies_every_rule_its_end),
