@@ -76,6 +76,16 @@ first_unbounded(const struct sl_pump_result *result)
     return NULL;
 }
 
+/* Whether the water is colder or warmer than its properties are known for. */
+static bool water_is_out_of_range(const struct sl_judging *judging)
+{
+    const struct sl_plan *plan = &judging->layout->plans[judging->pump];
+    double kelvin = plan->inputs[SL_IN_TEMPERATURE].value.typical;
+
+    return !isnan(kelvin) && !isnan(plan->salinity) &&
+           isnan(sl_liquid_at(plan->salinity, kelvin).vapour_pressure);
+}
+
 static void reason_unproven(const struct sl_judging *judging,
                             const struct sl_pump_result *result,
                             struct sl_text *text)
@@ -88,8 +98,12 @@ static void reason_unproven(const struct sl_judging *judging,
     name_missing(result, text);
     if (text->length)
         return;
-    if (plan->tables->rejected_conditions && result->likely == SL_CLEAR &&
-        !unbounded)
+    if (water_is_out_of_range(judging))
+        sl_text_add_string(text, "the water is colder or warmer, with what "
+                                 "the condition adds, than its properties "
+                                 "are known for");
+    else if (plan->tables->rejected_conditions && result->likely == SL_CLEAR &&
+             !unbounded)
         sl_text_add_string(text, "a condition to audit was rejected (see "
                                  "findings.csv); what it asks is not known");
     else if (result->stands)

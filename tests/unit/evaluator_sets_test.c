@@ -758,6 +758,22 @@ static void a_condition_warms_the_water(void **state)
     check_interval("by default", &warmth->value, 299.85, 310.85, 289.45);
 }
 
+static void water_below_freezing_is_told(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *a =
+        under(f, (struct sl_condition){.condition = "own",
+                                       .summer_temperature = 1,
+                                       .temperature_addition = -29.3});
+
+    check_state("frozen", a, SL_UNPROVEN, SL_UNPROVEN);
+    assert_non_null(strstr(a->reason, "the water is colder or warmer"));
+    a = under(f, (struct sl_condition){.condition = "own",
+                                       .summer_temperature = 1,
+                                       .temperature_addition = -21.7});
+    assert_null(strstr(a->reason, "the water is colder or warmer"));
+}
+
 static struct sl_interval wall_of(struct fixture *f,
                                   enum sl_friction_state friction)
 {
@@ -843,6 +859,7 @@ int main(void)
         TEST(a_limit_may_be_nowhere_or_everywhere),
         TEST(a_condition_names_its_level),
         TEST(a_condition_warms_the_water),
+        TEST(water_below_freezing_is_told),
         TEST(an_aged_wall_is_rougher_by_its_years),
     };
 
