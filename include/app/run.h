@@ -27,6 +27,8 @@ enum sl_status sl_run_open(struct sl_run *run, const char *path,
 /* The tables as they hold for the run's vintage, and the year of the audit:
  * the one asked for, else that of the import. */
 enum sl_status sl_run_use_vintage(struct sl_run *run, struct sl_error *error);
+/* The year of the import of the run's vintage. */
+int sl_run_import_year(const struct sl_run *run);
 /* The newest vintage with its tables, and (where `evaluated`) its newest
  * evaluation, by the rule and of the year asked for if any. */
 enum sl_status sl_run_find_newest(struct sl_run *run, bool evaluated,

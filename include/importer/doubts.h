@@ -13,10 +13,11 @@ struct sl_doubt {
     const char *remedy;
 };
 
-#define SL_DOUBTS_MOST 4
+#define SL_DOUBTS_MOST 5
 
-/* The doubts about a record of a kind; how many there are. */
-size_t sl_doubts_find(enum sl_kind kind, const void *record,
+/* The doubts about a record of a kind, read in `year`; how many there
+ * are. */
+size_t sl_doubts_find(enum sl_kind kind, const void *record, int year,
                       struct sl_doubt doubts[SL_DOUBTS_MOST]);
 
 #endif

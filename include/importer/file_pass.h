@@ -9,6 +9,7 @@ struct sl_file_pass {
     enum sl_kind kind;
     const struct sl_columns *columns;
     const struct sl_vocabularies *vocabularies;
+    int year; /* of the import; later ones are doubted */
     struct sl_input_file *file;
     const struct sl_sink *sink;
     struct sl_file_sum *sum;

@@ -53,11 +53,11 @@ void sl_inventory_close(struct sl_inventory *inventory);
  * reason when it is not an inventory. */
 enum sl_status sl_inventory_read_headers(struct sl_inventory *inventory,
                                          struct sl_error *error);
-/* All records, their words by these vocabularies.  Afterwards the sums are
- * final. */
+/* All records, their words by these vocabularies; a year later than `year`,
+ * that of the import, is a doubt.  Afterwards the sums are final. */
 enum sl_status sl_inventory_read(struct sl_inventory *inventory,
                                  const struct sl_vocabularies *vocabularies,
-                                 const struct sl_sink *sink,
+                                 int year, const struct sl_sink *sink,
                                  struct sl_error *error);
 
 const struct sl_file_sum *sl_inventory_sum(const struct sl_inventory *,

@@ -14,6 +14,11 @@ enum sl_status sl_read_conditions(struct sl_store *store, long long vintage,
                                   struct sl_tables *tables,
                                   struct sl_error *error);
 
+/* How many of the vintage's own conditions were rejected. */
+enum sl_status sl_count_rejected_conditions(struct sl_store *store,
+                                            long long vintage, long long *count,
+                                            struct sl_error *error);
+
 /* The rules of the vintage, or only the one named; none is no failure. */
 enum sl_status sl_read_rules(struct sl_store *store, long long vintage,
                              const char *name, struct sl_arena *arena,

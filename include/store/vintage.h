@@ -63,6 +63,21 @@ enum sl_status sl_store_each_unused(
     enum sl_status (*each)(void *context, const char *file, long line,
                            const char *id, struct sl_error *error),
     void *context, struct sl_error *error);
+/* An owner's margin rule beside those it may be taken for. */
+struct sl_rule_name {
+    const char *rule;
+    long line;
+    const char *shipped; /* the shipped one of its name, letter case aside */
+    long first_line;     /* of the owner's of its name, letter case aside */
+};
+/* Calls `each` with every margin rule of the owner's, by line; `shipped` is
+ * "" where there is none.  Letters are those of ASCII.  Texts live for the
+ * call. */
+enum sl_status sl_store_each_rule_name(
+    struct sl_store *store, long long vintage,
+    enum sl_status (*each)(void *context, const struct sl_rule_name *name,
+                           struct sl_error *error),
+    void *context, struct sl_error *error);
 enum sl_status sl_store_read_files(struct sl_store *store, long long vintage,
                                    struct sl_file_sum sums[SL_KIND_COUNT],
                                    struct sl_error *error);

@@ -112,6 +112,15 @@ enum sl_status sl_command_evaluate(struct sl_run *run, struct sl_error *error)
     return status ? status : sl_print_states(run, error);
 }
 
+/* All that is printed comes before the files are written, so that a full
+ * disk there still leaves the answer on the screen. */
+static enum sl_status print_and_rank(struct sl_run *run, struct sl_error *error)
+{
+    enum sl_status status = sl_print_states(run, error);
+
+    return status ? status : sl_run_rank(run, run->options->out, error);
+}
+
 enum sl_status sl_command_rank(struct sl_run *run, struct sl_error *error)
 {
     enum sl_status status = check_out(run->options->out, error);
@@ -120,18 +129,7 @@ enum sl_status sl_command_rank(struct sl_run *run, struct sl_error *error)
         status = sl_run_open(run, run->options->store, SL_STORE_READ, error);
     if (!status)
         status = sl_run_find_newest(run, true, error);
-    return status ? status : sl_run_rank(run, run->options->out, error);
-}
-
-/* All that is printed comes before the files are written, so that a full
- * disk there still leaves the answer on the screen. */
-static enum sl_status print_and_rank(struct sl_run *run, struct sl_error *error)
-{
-    enum sl_status status = sl_print_records(run, error);
-
-    if (!status)
-        status = sl_print_states(run, error);
-    return status ? status : sl_run_rank(run, run->options->out, error);
+    return status ? status : print_and_rank(run, error);
 }
 
 enum sl_status sl_command_audit(struct sl_run *run, struct sl_error *error)
@@ -152,6 +150,8 @@ enum sl_status sl_command_audit(struct sl_run *run, struct sl_error *error)
     else
         sl_text_addf(&path, "%s/summerlow.db", options->out);
     status = import_into(run, path.bytes, inventory, true, error);
+    if (!status)
+        status = sl_print_records(run, error);
     if (!status)
         status = print_and_rank(run, error);
     if (!status)

@@ -1,14 +1,14 @@
 /* The import step: records from the importer into the store. */
-#define _POSIX_C_SOURCE 200809L /* gmtime_r */
+#define _XOPEN_SOURCE 700 /* gmtime_r, realpath */
 
 #include <stdlib.h>
 #include <string.h>
 #include <time.h>
 
+#include "app/notes.h"
 #include "app/run.h"
 #include "app/terminal.h"
 #include "importer/inventory.h"
-#include "model/fields.h"
 
 /* Findings shown on the terminal; the rest are counted, and all of them are
  * in the store and in findings.csv. */
@@ -130,49 +130,6 @@ static enum sl_status keep_column(void *context,
                                use, error);
 }
 
-/* A key with a slip in it makes two: one that is missing somewhere, and one
- * that nothing refers to. */
-static enum sl_status note_unused(void *context, const char *file, long line,
-                                  const char *id, struct sl_error *error)
-{
-    bool curve = sl_same(file, sl_record_kind(SL_KIND_CURVE)->file);
-    struct sl_finding finding = {
-        .code = "nothing-refers",
-        .severity = SL_NOTE,
-        .file = file,
-        .line = line,
-        .column = curve ? "curve_id" : "pipe_id",
-        .record_id = id,
-        .value = id,
-        .reason = curve ? "no pump that was kept runs on this curve"
-                        : "no pump and no pipe that was kept draws from it",
-        .remedy = "if one does, make the two keys the same",
-    };
-
-    return keep_finding(context, &finding, error);
-}
-
-/* An owner who wrote conditions is told when none of them is audited. */
-static enum sl_status note_shipped_conditions(struct intake *intake,
-                                              const struct sl_file_sum *sum,
-                                              struct sl_error *error)
-{
-    struct sl_finding finding = {
-        .code = "shipped-conditions",
-        .severity = SL_NOTE,
-        .file = sum->file,
-        .column = "",
-        .record_id = "",
-        .value = "",
-        .reason = "no condition of it is kept; the shipped ones are audited",
-        .remedy = "mend it, or take the file out",
-    };
-
-    return sum->present && sum->kept == 0
-               ? keep_finding(intake, &finding, error)
-               : SL_OK;
-}
-
 static bool progress(void *context, long long done, long long all)
 {
     (void)context;
@@ -194,17 +151,17 @@ static const char *import_time(struct sl_arena *arena)
     return sl_arena_text(arena, text, strlen(text));
 }
 
-/* The last part of the folder's path. */
+/* The folder's own name, whatever way to it was given: "." has one too. */
 static const char *folder_name(struct sl_arena *arena, const char *folder)
 {
-    size_t length = strlen(folder), start;
+    char *real = realpath(folder, NULL);
+    const char *path = real ? real : folder;
+    const char *slash = strrchr(path, '/');
+    const char *name = slash && slash[1] ? slash + 1 : path;
+    const char *copy = sl_arena_text(arena, name, strlen(name));
 
-    while (length > 1 && folder[length - 1] == '/')
-        length--;
-    start = length;
-    while (start > 0 && folder[start - 1] != '/')
-        start--;
-    return sl_arena_text(arena, folder + start, length - start);
+    free(real);
+    return copy;
 }
 
 static enum sl_status keep_sums(struct sl_run *run,
@@ -235,14 +192,10 @@ static enum sl_status read_records(struct sl_run *run,
     run->vintage.imported_at = import_time(&run->arena);
     status = sl_store_add_vintage(run->store, &run->vintage, error);
     if (!status)
-        status = sl_inventory_read(inventory, &run->tables.vocabularies, &sink,
-                                   error);
+        status = sl_inventory_read(inventory, &run->tables.vocabularies,
+                                   sl_run_import_year(run), &sink, error);
     if (!status)
-        status = sl_store_each_unused(run->store, run->vintage.vintage,
-                                      note_unused, &intake, error);
-    if (!status)
-        status = note_shipped_conditions(
-            &intake, sl_inventory_sum(inventory, SL_KIND_CONDITION), error);
+        status = sl_notes_tell(run, inventory, &sink, error);
     if (!status)
         status = keep_sums(run, inventory, error);
     sl_progress_end();

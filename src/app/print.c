@@ -73,6 +73,41 @@ static long long count_stations(const struct sl_summary *summary)
     return count;
 }
 
+static const char *known_how(char trust)
+{
+    if (trust == 'O')
+        return " (the owner's own)";
+    return trust == 'M' ? " (from memory)" : "";
+}
+
+static void print_counts(const struct sl_summary *summary)
+{
+    struct sl_text head = {0};
+
+    sl_text_addf(&head,
+                 "Stations by state, by the rule \"%s\"%s, year %d (each by "
+                 "its worst pump and condition):",
+                 summary->rule.rule, known_how(summary->rule.trust),
+                 summary->year);
+    sl_print_safely(stdout, sl_text_string(&head));
+    putchar('\n');
+    sl_text_release(&head);
+    for (int state = 0; state < SL_STATE_COUNT; state++)
+        printf("  %-9s %6lld\n", sl_state_name((enum sl_state)state),
+               summary->stations_by_state[state]);
+    if (summary->stations_without_pumps)
+        printf("  (%lld of the unproven have no pump on record)\n",
+               summary->stations_without_pumps);
+}
+
+static void print_rejected_conditions(long long count)
+{
+    if (count)
+        printf("%lld condition%s of conditions.csv %s rejected: no pump is "
+               "called clear; see findings.csv\n",
+               count, count == 1 ? "" : "s", count == 1 ? "was" : "were");
+}
+
 enum sl_status sl_print_states(struct sl_run *run, struct sl_error *error)
 {
     struct worst worst = {.units = run->options->units};
@@ -86,13 +121,8 @@ enum sl_status sl_print_states(struct sl_run *run, struct sl_error *error)
         puts("No station was kept: there is nothing to judge.");
         return SL_OK;
     }
-    puts("Stations by state (each by its worst pump and condition):");
-    for (int state = 0; state < SL_STATE_COUNT; state++)
-        printf("  %-9s %6lld\n", sl_state_name((enum sl_state)state),
-               summary.stations_by_state[state]);
-    if (summary.stations_without_pumps)
-        printf("  (%lld of the unproven have no pump on record)\n",
-               summary.stations_without_pumps);
+    print_counts(&summary);
+    print_rejected_conditions(run->tables.rejected_conditions);
     if (summary.stations_by_state[SL_SHORT] +
             summary.stations_by_state[SL_THIN] ==
         0) {

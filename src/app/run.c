@@ -1,6 +1,12 @@
 #include "app/run.h"
 
+#include <stdio.h>
+#include <stdlib.h>
+
 #include "base/text.h"
+
+/* An audit further from its import than this is a slip, more likely. */
+#define FAR_YEARS 100
 
 enum sl_status sl_run_open(struct sl_run *run, const char *path,
                            enum sl_store_mode mode, struct sl_error *error)
@@ -23,12 +29,28 @@ static int year_of(const char *time)
     return year;
 }
 
+int sl_run_import_year(const struct sl_run *run)
+{
+    return year_of(run->vintage.imported_at);
+}
+
+/* A slip in --year ages every pipe by it. */
+static void note_far_year(int year, int import_year)
+{
+    if (abs(year - import_year) > FAR_YEARS)
+        fprintf(stderr,
+                "note: --year %d lies more than %d years from the import's, "
+                "%d; is it meant?\n",
+                year, FAR_YEARS, import_year);
+}
+
 enum sl_status sl_run_use_vintage(struct sl_run *run, struct sl_error *error)
 {
     const struct sl_options *options = run->options;
+    int import_year = sl_run_import_year(run);
 
-    run->tables.year =
-        options->year ? options->year : year_of(run->vintage.imported_at);
+    run->tables.year = options->year ? options->year : import_year;
+    note_far_year(run->tables.year, import_year);
     return sl_store_read_tables(run->store, run->vintage.vintage, &run->arena,
                                 &run->tables, error);
 }

@@ -84,8 +84,7 @@ const char *sl_number_advice(enum sl_number_outcome outcome)
         return "something follows the number; write the number alone, the "
                "unit belongs in the header";
     case SL_NUMBER_NOT_ONE:
-        return "this is not a number; write digits with a decimal point, or "
-               "leave the cell empty where the value is unknown";
+        return "this is not a number; write digits with a decimal point";
     case SL_NUMBER_TOO_LARGE:
         return "the number is too large; check its unit and exponent";
     }

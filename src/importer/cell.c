@@ -62,6 +62,30 @@ static void add_figure(struct sl_text *text, double value)
     sl_text_addf(text, fabs(value) < 1e6 ? "%.6g" : "%.0f", value);
 }
 
+/* What an empty cell says: of a sum's addition that there is none, else that
+ * the value is unknown; in a required column it says nothing. */
+static const char *leave_empty(const struct sl_field *field)
+{
+    static const char addition[] = "_addition";
+    size_t length = strlen(field->name), ending = sizeof addition - 1;
+
+    if (field->required)
+        return NULL;
+    return length > ending && sl_same(field->name + length - ending, addition)
+               ? "leave the cell empty for none"
+               : "leave the cell empty where the value is unknown";
+}
+
+/* Go on with the remedy, where leaving the cell empty is one. */
+static void or_leave_empty(const struct sl_column *column, const char *between,
+                           struct sl_problem *problem)
+{
+    const char *advice = leave_empty(column->field);
+
+    if (advice)
+        sl_text_addf(&problem->remedy, "%s%s", between, advice);
+}
+
 static void tell_range(const struct sl_column *column,
                        struct sl_problem *problem)
 {
@@ -73,9 +97,10 @@ static void tell_range(const struct sl_column *column,
         high = sl_from_si(column->unit, high);
     }
     sl_problem_set(problem, "out-of-range",
-                   "check the value and the unit in the header; leave the "
-                   "cell empty where the value is unknown",
+                   column->unit ? "check the value and the unit in the header"
+                                : "check the value",
                    "it is outside ");
+    or_leave_empty(column, "; ", problem);
     add_figure(&problem->reason, low);
     sl_text_add_string(&problem->reason, " to ");
     add_figure(&problem->reason, high);
@@ -84,7 +109,8 @@ static void tell_range(const struct sl_column *column,
 }
 
 /* The advice says why and, behind a semicolon, what to do. */
-static void tell_number(enum sl_number_outcome outcome,
+static void tell_number(const struct sl_column *column,
+                        enum sl_number_outcome outcome,
                         struct sl_problem *problem)
 {
     const char *advice = sl_number_advice(outcome);
@@ -93,6 +119,8 @@ static void tell_number(enum sl_number_outcome outcome,
     sl_problem_set(problem, "number-form", remedy ? remedy + 2 : "", "%.*s",
                    (int)(remedy ? (size_t)(remedy - advice) : strlen(advice)),
                    advice);
+    if (outcome == SL_NUMBER_NOT_ONE)
+        or_leave_empty(column, ", or ", problem);
 }
 
 static bool take_number(const struct sl_column *column, const char *text,
@@ -103,14 +131,13 @@ static bool take_number(const struct sl_column *column, const char *text,
     enum sl_number_outcome outcome = sl_number_parse(text, length, &value);
 
     if (outcome != SL_NUMBER_OK) {
-        tell_number(outcome, problem);
+        tell_number(column, outcome, problem);
         return false;
     }
     if (column->field->type == SL_FIELD_WHOLE && value != floor(value)) {
-        sl_problem_set(problem, "not-whole",
-                       "write a whole number, or leave the cell empty where "
-                       "it is unknown",
+        sl_problem_set(problem, "not-whole", "write a whole number",
                        "it has a fraction; this column holds whole numbers");
+        or_leave_empty(column, ", or ", problem);
         return false;
     }
     if (column->unit)

@@ -183,7 +183,8 @@ static enum sl_status tell_doubts(struct pass *pass, struct sl_error *error)
 {
     const struct sl_columns *columns = pass->as->columns;
     struct sl_doubt doubts[SL_DOUBTS_MOST];
-    size_t count = sl_doubts_find(pass->as->kind, &pass->record, doubts);
+    size_t count =
+        sl_doubts_find(pass->as->kind, &pass->record, pass->as->year, doubts);
 
     for (size_t i = 0; i < count; i++) {
         const struct sl_field *field = sl_field_by_name(

@@ -189,10 +189,11 @@ enum sl_status sl_inventory_read_headers(struct sl_inventory *inventory,
 
 enum sl_status sl_inventory_read(struct sl_inventory *inventory,
                                  const struct sl_vocabularies *vocabularies,
-                                 const struct sl_sink *sink,
+                                 int year, const struct sl_sink *sink,
                                  struct sl_error *error)
 {
-    struct sl_file_pass pass = {.vocabularies = vocabularies, .sink = sink};
+    struct sl_file_pass pass = {
+        .vocabularies = vocabularies, .year = year, .sink = sink};
     enum sl_status status = SL_OK;
 
     for (int i = 0; i < SL_KIND_COUNT; i++)

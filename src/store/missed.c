@@ -102,3 +102,31 @@ enum sl_status sl_store_each_unused(
     }
     return status;
 }
+
+enum sl_status sl_store_each_rule_name(
+    struct sl_store *store, long long vintage,
+    enum sl_status (*each)(void *context, const struct sl_rule_name *name,
+                           struct sl_error *error),
+    void *context, struct sl_error *error)
+{
+    struct sl_statement *statement = NULL;
+    bool row = false;
+    enum sl_status status =
+        sl_statement_use_for(store, SL_QUERY_OWNER_RULE_NAMES, "vintage",
+                             vintage, &statement, error);
+
+    while (!status && !(status = sl_statement_step(statement, &row, error)) &&
+           row) {
+        struct sl_rule_name name = {
+            .rule = sl_read_text(statement, "rule"),
+            .line = (long)sl_read_whole(statement, "line"),
+            .shipped = sl_read_text(statement, "shipped"),
+            .first_line = (long)sl_read_whole(statement, "first_line"),
+        };
+
+        status = each(context, &name, error);
+        if (status)
+            return sl_statement_leave(statement, status);
+    }
+    return status;
+}

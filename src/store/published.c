@@ -219,6 +219,9 @@ enum sl_status sl_store_read_tables(struct sl_store *store, long long vintage,
     if (!status)
         status = sl_read_conditions(store, vintage, arena, &read, error);
     if (!status)
+        status = sl_count_rejected_conditions(store, vintage,
+                                              &read.rejected_conditions, error);
+    if (!status)
         status = sl_read_rules(store, vintage, NULL, arena, &read.rules,
                                &read.rule_count, error);
     if (!status)

@@ -3,6 +3,7 @@
 #include <string.h>
 
 #include "base/text.h"
+#include "model/fields.h"
 #include "store/statement.h"
 
 /* The place of the row's word among `words`; the first when it is none of
@@ -96,6 +97,25 @@ enum sl_status sl_read_conditions(struct sl_store *store, long long vintage,
                        &tables->conditions[tables->condition_count++]);
     }
     return status;
+}
+
+enum sl_status sl_count_rejected_conditions(struct sl_store *store,
+                                            long long vintage, long long *count,
+                                            struct sl_error *error)
+{
+    struct sl_statement *statement = NULL;
+    bool row = false;
+    enum sl_status status = sl_statement_use_for(
+        store, SL_QUERY_COUNT_REJECTED, "vintage", vintage, &statement, error);
+
+    if (status)
+        return status;
+    sl_bind_text(statement, "file", sl_record_kind(SL_KIND_CONDITION)->file);
+    status = sl_statement_step(statement, &row, error);
+    if (status || !row)
+        return status;
+    *count = sl_read_whole(statement, "records");
+    return sl_statement_end(statement, error);
 }
 
 static int make_up_of(struct sl_statement *row)

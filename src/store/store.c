@@ -1,7 +1,11 @@
+#define _POSIX_C_SOURCE 200809L /* access */
+
 #include "store/store.h"
 
+#include <errno.h>
 #include <stdlib.h>
 #include <string.h>
+#include <unistd.h>
 
 #include "store/statement.h"
 
@@ -26,6 +30,21 @@ static enum sl_status configure(struct sl_store *store, struct sl_error *error)
     sqlite3_db_config(store->database, SQLITE_DBCONFIG_DQS_DML, 0, (int *)NULL);
     sqlite3_db_config(store->database, SQLITE_DBCONFIG_DQS_DDL, 0, (int *)NULL);
     return sl_store_execute(store, settings, error);
+}
+
+static enum sl_status not_opened(const struct sl_store *store, const char *path,
+                                 enum sl_store_mode mode,
+                                 struct sl_error *error)
+{
+    if (mode != SL_STORE_CREATE && access(path, F_OK) != 0 && errno == ENOENT)
+        return sl_error_set(error, SL_STORE,
+                            "there is no store \"%s\"; summerlow import makes "
+                            "one",
+                            path);
+    return sl_error_set(error, SL_STORE,
+                        "the store \"%s\" cannot be opened: %s; check its "
+                        "name and who may read it",
+                        path, sqlite3_errmsg(store->database));
 }
 
 enum sl_status sl_store_open(const char *path, enum sl_store_mode mode,
@@ -53,11 +72,7 @@ enum sl_status sl_store_open(const char *path, enum sl_store_mode mode,
     if (sqlite3_open_v2(path, &opened->database,
                         flags_of[mode] | SQLITE_OPEN_NOMUTEX,
                         NULL) != SQLITE_OK) {
-        status =
-            sl_error_set(error, SL_STORE,
-                         "the store \"%s\" cannot be opened: %s; check its "
-                         "name and who may read it",
-                         path, sqlite3_errmsg(opened->database));
+        status = not_opened(opened, path, mode, error);
         goto done;
     }
     status = configure(opened, error);

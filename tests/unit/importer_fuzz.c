@@ -187,7 +187,7 @@ static void read_folder(void)
     must(status == SL_OK || (status == SL_REFUSED && *error.message),
          "headers are read or refused");
     if (status == SL_OK) {
-        status = sl_inventory_read(inventory, &words, &sink, &error);
+        status = sl_inventory_read(inventory, &words, 2026, &sink, &error);
         must(status == SL_OK, "records are read");
         check_sums(inventory, &counts);
     }

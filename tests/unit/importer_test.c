@@ -84,7 +84,8 @@ static enum sl_status import(const char *path, struct listener *listener,
     if (status)
         assert_int_equal(listener->heard.length, 0);
     if (!status)
-        status = sl_inventory_read(inventory, &words, &sink, error);
+        status =
+            sl_inventory_read(inventory, &words, IMPORT_YEAR, &sink, error);
     if (!status)
         listener_sums(listener, inventory);
     sl_inventory_close(inventory);
@@ -443,8 +444,9 @@ static void a_file_overwritten_in_place_is_told(void **state)
     fseek(stream, 17, SEEK_SET);
     fputc('9', stream);
     fclose(stream);
-    assert_int_equal(sl_inventory_read(inventory, &words, &sink, &error),
-                     SL_FILE);
+    assert_int_equal(
+        sl_inventory_read(inventory, &words, IMPORT_YEAR, &sink, &error),
+        SL_FILE);
     assert_non_null(strstr(error.message, "changed while it was read"));
     sl_inventory_close(inventory);
     folder_remove(&folder);
@@ -677,9 +679,11 @@ static void levels_in_order_raise_no_doubt(void **state)
     };
 
     (void)state;
-    assert_int_equal(sl_doubts_find(SL_KIND_STATION, &station, doubts), 0);
+    assert_int_equal(
+        sl_doubts_find(SL_KIND_STATION, &station, IMPORT_YEAR, doubts), 0);
     station.cut_out_level.value = 2.375;
-    assert_int_equal(sl_doubts_find(SL_KIND_STATION, &station, doubts), 1);
+    assert_int_equal(
+        sl_doubts_find(SL_KIND_STATION, &station, IMPORT_YEAR, doubts), 1);
     assert_string_equal(doubts[0].code, "level-order");
 }
 
