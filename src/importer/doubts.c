@@ -30,8 +30,11 @@ static const struct sl_doubt retired_ahead = {"year-ahead", "year_retired",
                                               AHEAD, "check the year"};
 static const struct sl_doubt discharge_ahead = {"year-ahead", "discharge_year",
                                                 AHEAD, NO_AGE};
-static const struct sl_doubt installed_ahead = {"year-ahead", "year_installed",
-                                                AHEAD, NO_AGE};
+/* No age of a machine is used. */
+static const struct sl_doubt machine_ahead = {"year-ahead", "year_installed",
+                                              AHEAD, "check the year"};
+static const struct sl_doubt laid_ahead = {"year-ahead", "year_installed",
+                                           AHEAD, NO_AGE};
 
 static bool is_ahead(struct sl_number of, int year)
 {
@@ -72,7 +75,7 @@ static size_t pump_doubts(const struct sl_pump *pump, int year,
     if (pump->rated_head.known && !pump->rated_flow.known)
         doubts[count++] = head_without_flow;
     if (is_ahead(pump->year_installed, year))
-        doubts[count++] = installed_ahead;
+        doubts[count++] = machine_ahead;
     return count;
 }
 
@@ -81,7 +84,7 @@ static size_t pipe_doubts(const struct sl_pipe *pipe, int year,
 {
     if (!is_ahead(pipe->year_installed, year))
         return 0;
-    doubts[0] = installed_ahead;
+    doubts[0] = laid_ahead;
     return 1;
 }
 

@@ -191,6 +191,14 @@ static void what_is_out_of_service_is_out_of_scope(void **state)
     check_case("scope", &listener);
 }
 
+static void a_year_ahead_of_the_import_is_doubted(void **state)
+{
+    struct listener listener = {0};
+
+    (void)state;
+    check_case("years", &listener);
+}
+
 static void an_owners_conditions_and_rules_are_taken(void **state)
 {
     struct listener listener = {0};
@@ -695,6 +703,7 @@ int main(int argc, char **argv)
         cmocka_unit_test(bytes_that_are_no_text_are_told_by_place),
         cmocka_unit_test(columns_are_understood_by_unit_and_grade),
         cmocka_unit_test(what_is_out_of_service_is_out_of_scope),
+        cmocka_unit_test(a_year_ahead_of_the_import_is_doubted),
         cmocka_unit_test(an_owners_conditions_and_rules_are_taken),
         cmocka_unit_test(an_owners_slips_are_told_by_line),
         cmocka_unit_test(the_sinks_answers_decide_fates),

@@ -2,6 +2,7 @@
 #define _POSIX_C_SOURCE 200809L /* mkdtemp, unlink */
 #include "store_fixture.h"
 
+#include "base/text.h"
 #include "unit/check.h"
 
 /* Places in their vocabularies. */
@@ -209,6 +210,80 @@ static void a_name_taken_is_told_with_its_line(void **state)
     assert_int_equal(answer.line, 7);
 }
 
+static void reject(struct fixture *f, enum sl_kind kind, enum sl_fate fate,
+                   long line)
+{
+    struct sl_aside aside = {kind, fate, line, "usual", "", "a reason", "r", 1};
+
+    must(f, sl_store_add_set_aside(f->store, f->vintage, &aside, &f->error));
+}
+
+/* Of this vintage, and of conditions.csv alone. */
+static void rejected_conditions_are_counted(void **state)
+{
+    struct fixture *f = *state;
+    struct sl_vintage next = {0, "2027", "decaf", "2027-07-01T12:00:00Z"};
+
+    keep(f, SL_KIND_CONDITION, &usual);
+    read_for(f, f->vintage);
+    assert_int_equal(f->tables.rejected_conditions, 0);
+    reject(f, SL_KIND_CONDITION, SL_REJECTED, 3);
+    reject(f, SL_KIND_CONDITION, SL_REJECTED, 5);
+    reject(f, SL_KIND_CONDITION, SL_OUT_OF_SCOPE, 6);
+    reject(f, SL_KIND_RULE, SL_REJECTED, 4);
+    read_for(f, f->vintage);
+    assert_int_equal(f->tables.rejected_conditions, 2);
+    must(f, sl_store_add_vintage(f->store, &next, &f->error));
+    read_for(f, next.vintage);
+    assert_int_equal(f->tables.rejected_conditions, 0);
+}
+
+static enum sl_status write_name(void *context, const struct sl_rule_name *name,
+                                 struct sl_error *error)
+{
+    (void)error;
+    sl_text_addf(context, "%ld %s|%s|%ld\n", name->line, name->rule,
+                 name->shipped, name->first_line);
+    return SL_OK;
+}
+
+static enum sl_status fail_at_once(void *context,
+                                   const struct sl_rule_name *name,
+                                   struct sl_error *error)
+{
+    (void)name;
+    ++*(int *)context;
+    return sl_error_set(error, SL_INTERRUPTED, "enough");
+}
+
+static void rule_names_are_told_beside_their_likes(void **state)
+{
+    static const char *const names[] = {"Fixed Head", "zeal", "fixed head",
+                                        "ZEAL", "alone"};
+    struct fixture *f = *state;
+    struct sl_text heard = {0};
+    int calls = 0;
+
+    for (int i = 0; i < 5; i++)
+        keep(f, SL_KIND_RULE,
+             &(struct sl_owner_rule){.line = 2 + i,
+                                     .rule = names[i],
+                                     .ratio = known(1.25),
+                                     .floor = known(0.5)});
+    must(f, sl_store_each_rule_name(f->store, f->vintage, write_name, &heard,
+                                    &f->error));
+    assert_string_equal(sl_text_string(&heard), "2 Fixed Head|fixed head|2\n"
+                                                "3 zeal||3\n"
+                                                "4 fixed head|fixed head|2\n"
+                                                "5 ZEAL||3\n"
+                                                "6 alone||6\n");
+    assert_int_equal(sl_store_each_rule_name(f->store, f->vintage, fail_at_once,
+                                             &calls, &f->error),
+                     SL_INTERRUPTED);
+    assert_int_equal(calls, 1);
+    sl_text_release(&heard);
+}
+
 /* The summary tells the rule of its vintage, not one that has its name. */
 static void the_summary_has_the_owners_rule(void **state)
 {
@@ -248,6 +323,8 @@ int main(void)
         IN_VINTAGE(own_rules_come_behind_or_in_place_of_their_name),
         IN_VINTAGE(more_rules_than_are_judged_are_refused),
         IN_VINTAGE(a_name_taken_is_told_with_its_line),
+        IN_VINTAGE(rejected_conditions_are_counted),
+        IN_VINTAGE(rule_names_are_told_beside_their_likes),
         IN_VINTAGE(the_summary_has_the_owners_rule),
     };
 
