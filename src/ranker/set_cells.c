@@ -1,7 +1,5 @@
 #include "ranker/set_cells.h"
 
-#include <math.h>
-
 #include "ranker/words.h"
 
 /* Empty where it was not kept: none of these counts can be 0. */
@@ -31,6 +29,14 @@ void sl_cells_sets(struct sl_cells *cells, const struct sl_pump_row *row)
     sl_cell_text(cells, "off_curve_set", row->off_curve_set);
     sl_cell_text(cells, "stands_set", row->stands_set);
     sl_cell_text(cells, "flags", row->flags);
+}
+
+void sl_cells_npshr_basis(struct sl_cells *cells, const struct sl_pump_row *row)
+{
+    bool kept = cells->naming || row->sets_tried > 0;
+
+    sl_cell_text(cells, "npshr_basis",
+                 kept ? sl_npshr_basis_name(row->npshr_basis) : NULL);
 }
 
 void sl_cells_rule_states(struct sl_cells *cells,
@@ -64,7 +70,7 @@ void sl_cells_limits(struct sl_cells *cells, const struct sl_pump_row *row)
         const struct sl_limit *limit = &row->limits[id];
 
         sl_cell_number(cells, limits[id].name, limits[id].quantity,
-                       limit->end == SL_LIMIT_FOUND ? limit->value : NAN);
+                       limit->value);
         sl_cell_text(cells, limits[id].end, sl_words_limit_end(limit->end));
     }
 }
