@@ -254,6 +254,12 @@ static void measures(struct sl_plan *plan)
                  "not recorded; the default suction loss stands in");
 }
 
+/* A row may rest on a figure from memory without being one itself. */
+static bool from_memory(const struct sl_ageing *row)
+{
+    return row->trust == 'M' || strstr(row->source, "from memory");
+}
+
 /* How far the rates can be trusted that age the pipes of the path: the least
  * trusted's mark, or 0 where none is aged. */
 static char ageing_trust(const struct sl_plan *plan)
@@ -269,7 +275,7 @@ static char ageing_trust(const struct sl_plan *plan)
                 growth_of(plan, material_row(plan, pipe->material),
                           pipe->condition, plan->condition->suction_friction);
         if (growth && trust != 'M')
-            trust = growth->trust;
+            trust = from_memory(growth) ? 'M' : growth->trust;
     }
     return trust;
 }
