@@ -8,7 +8,8 @@
 
 #include "evaluator/plan.h"
 
-/* Up to this many pumps every set that the controls allow is tried. */
+/* Up to this many pumps every set that the controls allow is tried; of more,
+ * where all are equal or one runs at a time. */
 #define SL_EXHAUSTIVE_PUMPS 16
 
 struct sl_class {

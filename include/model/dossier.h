@@ -1,9 +1,9 @@
 /* All that the inventory says about one station, in one piece.
  *
- * Everything lives in the arena it was read into.  Pumps are in order of
- * pump_id, pipes of pipe_id, a pipe's fittings in order of line.  What was
- * rejected on import is counted where it is missed: a sum or a curve without
- * it is not all there is. */
+ * Everything lives in the arena it was read into; what a pump or a pipe draws
+ * from is one of `pipes`.  Pumps are in order of pump_id, pipes of pipe_id, a
+ * pipe's fittings in order of line.  What was rejected on import is counted
+ * where it is missed: a sum or a curve without it is not all there is. */
 #ifndef SL_MODEL_DOSSIER_H
 #define SL_MODEL_DOSSIER_H
 

@@ -130,6 +130,9 @@ struct sl_limit {
     double value; /* SI; NaN unless found, or where figures end */
 };
 
+/* Its figure; NaN at an end that has none, whatever stands there. */
+double sl_limit_value(const struct sl_limit *limit);
+
 /* The range looked at: either way from where the level is, m; K. */
 #define SL_LIMIT_REACH 20.0
 #define SL_LIMIT_COLDEST 273.15

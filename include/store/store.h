@@ -38,7 +38,8 @@ void sl_store_rollback(struct sl_store *store);
  * The conditions are the vintage's own where it has any, else the published
  * ones; its margin rules come behind the published ones, but one that has
  * the name of a published one takes its place.  Vintage 0 is none: all as
- * published.  `tables->year` is left as it is. */
+ * published.  `tables->year` is left as it is.  SL_REFUSED where there are
+ * more margin rules than SL_RULES_MOST. */
 enum sl_status sl_store_read_tables(struct sl_store *store, long long vintage,
                                     struct sl_arena *arena,
                                     struct sl_tables *tables,

@@ -1,8 +1,8 @@
 CREATE VIEW pump_limits AS
 -- How far one thing may go until the rule ranked on is just met, all else
 -- typical: m, °C and L/s.  An end of none: nowhere within the range looked
--- at; always: over all of it; figures end: met up to there, and nobody can
--- say beyond.
+-- at; always: over all of it; figures end: so far, and past it some set
+-- leaves its published curve.
 SELECT
     r.evaluation, s.station_id, p.pump_id, r.condition, r.state,
     round(r.limit_level, 2) AS lowest_level_m,

@@ -30,7 +30,8 @@ static enum sl_status import_and_maybe_evaluate(struct sl_run *run,
 
     if (!status)
         status = sl_run_import(run, inventory, error);
-    if (!status && evaluate)
+    /* Also where nothing is evaluated yet: what never can be is refused. */
+    if (!status)
         status = sl_run_use_vintage(run, error);
     if (!status && evaluate)
         status = sl_run_evaluate(run, error);

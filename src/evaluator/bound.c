@@ -190,6 +190,8 @@ static void at_temperature(struct sl_search *search, double kelvin,
 static void between_temperatures(struct sl_search *search, int aim, double low,
                                  double high, struct sl_joint *joint)
 {
+    double sign = search->of->sense == SL_FAVOURABLE ? 1 : -1;
+
     for (int i = 0; i < SL_SEARCH_SECTIONS && high - low > WARMTH_STEP; i++) {
         double left = high - SL_SEARCH_GOLDEN * (high - low);
         double right = low + SL_SEARCH_GOLDEN * (high - low);
@@ -203,14 +205,27 @@ static void between_temperatures(struct sl_search *search, int aim, double low,
         at_temperature(search, right, joint);
         search->best = all;
         search->any = true;
-        if (sl_search_aimed(search, &at_left, aim) >
-            sl_search_aimed(search, &at_right, aim))
+        if (sign * sl_search_aimed(search, &at_left, aim) >
+            sign * sl_search_aimed(search, &at_right, aim))
             high = right;
         else
             low = left;
         sl_search_keep(search, &at_left); /* to keep is to fold */
         sl_search_keep(search, &at_right);
     }
+}
+
+/* A limit on the lift does not count the vapour pressure: what is left of it
+ * need not bend down. */
+static bool limits_lift(const struct sl_bound_case *of)
+{
+    const struct sl_plan *plan = of->layout->classes[of->class].plan;
+
+    for (size_t i = 0; i < plan->tables->rule_count; i++)
+        if (!isnan(plan->tables->rules[i].lift_limit) &&
+            sl_rule_applies(&plan->tables->rules[i], plan))
+            return true;
+    return false;
 }
 
 static void over_temperatures(struct sl_search *search,
@@ -220,6 +235,7 @@ static void over_temperatures(struct sl_search *search,
     double coldest = fmin(warmth->adverse, warmth->favourable);
     double warmest = fmax(warmth->adverse, warmth->favourable);
     int rules = (int)search->of->layout->plans[0].tables->rule_count;
+    double sign = search->of->sense == SL_FAVOURABLE ? 1 : -1;
     struct grid cold;
 
     at_temperature(search, coldest, joint);
@@ -230,14 +246,15 @@ static void over_temperatures(struct sl_search *search,
         at_temperature(search, NAN, joint);
         return;
     }
-    if (search->of->sense != SL_FAVOURABLE)
+    if (search->of->sense != SL_FAVOURABLE && !limits_lift(search->of))
         return; /* it bends down: the worst is at an end */
     at_temperature(search, warmth->typical, joint);
     /* Most often the coldest is the best, and a little warmer is worse. */
     at_temperature(search, coldest + WARMTH_STEP, joint);
     for (int aim = 0; aim < AIMS; aim++)
         if (is_new(&cold, aim, rules) &&
-            sl_search_aimed(search, search->best, aim) > cold.reached[aim])
+            sign * sl_search_aimed(search, search->best, aim) >
+                sign * cold.reached[aim])
             between_temperatures(search, aim, coldest, warmest, joint);
 }
 

@@ -25,9 +25,10 @@ static enum sl_state drawn(const struct sl_tally *tally)
 
     if (best == SL_SHORT || best == SL_THIN)
         return best;
-    /* Off its curve in any set, there is no NPSHR that the adverse end could
-     * bound. */
-    if (state_of(&tally->adverse) == SL_CLEAR && !tally->off_curve.counts)
+    /* A set that was not tried may be worse than all that were.  Off its curve
+     * in any set, there is no NPSHR that the adverse end could bound. */
+    if (state_of(&tally->adverse) == SL_CLEAR && tally->all &&
+        !tally->off_curve.counts)
         return SL_CLEAR;
     return SL_UNPROVEN;
 }

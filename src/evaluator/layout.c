@@ -70,6 +70,7 @@ static bool same_build(const struct sl_pump *a, const struct sl_pump *b)
            same_recorded(&a->rated_head, &b->rated_head) &&
            same_recorded(&a->stages, &b->stages) &&
            same_recorded(&a->straight_run, &b->straight_run) &&
+           same_recorded(&a->suction_nozzle_bore, &b->suction_nozzle_bore) &&
            same_recorded(&a->inlet_elevation, &b->inlet_elevation) &&
            same_recorded(&a->inlet_diameter, &b->inlet_diameter);
 }
@@ -78,6 +79,7 @@ static bool same_plan(const struct sl_plan *a, const struct sl_plan *b)
 {
     return a->pump->curve == b->pump->curve && a->flow_basis == b->flow_basis &&
            same_number(a->speed_ratio, b->speed_ratio) &&
+           same_number(a->rated_ratio, b->rated_ratio) &&
            same_number(a->rated_flow, b->rated_flow) &&
            same_number(a->rated_npshr, b->rated_npshr) &&
            same_number(a->suction_specific_speed, b->suction_specific_speed) &&
@@ -95,14 +97,16 @@ bool sl_classes_share(const struct sl_class *a, const struct sl_class *b)
            a->plan->path[0].pipe == b->plan->path[0].pipe;
 }
 
-static size_t users_of(const struct sl_layout *layout,
-                       const struct sl_dossier_pipe *pipe)
+/* How many pumps draw through each pipe, as the dossier has them. */
+static size_t *count_users(const struct sl_layout *layout,
+                           const struct sl_dossier *dossier,
+                           struct sl_arena *arena)
 {
-    size_t users = 0;
+    size_t *users = sl_arena_new(arena, dossier->pipe_count, sizeof *users);
 
     for (size_t p = 0; p < layout->pump_count; p++)
         for (size_t i = 0; i < layout->plans[p].path_count; i++)
-            users += layout->plans[p].path[i].pipe == pipe;
+            users[layout->plans[p].path[i].pipe - dossier->pipes]++;
     return users;
 }
 
@@ -139,13 +143,18 @@ static void agree(struct sl_layout *layout, const struct sl_dossier_pipe *pipe)
                 layout->plans[p].path[i].minor_k = k;
 }
 
-static void mark_shared(struct sl_layout *layout)
+static void mark_shared(struct sl_layout *layout,
+                        const struct sl_dossier *dossier,
+                        struct sl_arena *arena)
 {
+    const size_t *users = count_users(layout, dossier, arena);
+
     for (size_t p = 0; p < layout->pump_count; p++) {
         struct sl_plan *plan = &layout->plans[p];
 
         for (size_t i = 0; i < plan->path_count; i++)
-            plan->path[i].shared = users_of(layout, plan->path[i].pipe) > 1;
+            plan->path[i].shared =
+                users[plan->path[i].pipe - dossier->pipes] > 1;
     }
     for (size_t p = 0; p < layout->pump_count; p++) {
         const struct sl_plan *plan = &layout->plans[p];
@@ -249,7 +258,7 @@ void sl_layout_make(struct sl_layout *layout, const struct sl_dossier *dossier,
     for (size_t p = 0; p < count; p++)
         sl_plan_make(&layout->plans[p], dossier, &dossier->pumps[p], condition,
                      tables, rule, arena);
-    mark_shared(layout);
+    mark_shared(layout, dossier, arena);
     for (size_t p = 0; p < count; p++)
         join_class(layout, p, apart, class_of);
     list_members(layout, class_of, arena);

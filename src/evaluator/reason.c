@@ -97,6 +97,12 @@ static void reason_unproven(const struct sl_judging *judging,
                                  "level: check curve, speed and levels");
     else if (result->off_curve)
         add_off_curve(result, text);
+    else if (!judging->tally->all && judging->tally->adverse.counts &&
+             adverse->figures.surplus >= 0)
+        sl_text_addf(text,
+                     "its rule is met in the %zu running sets that were tried; "
+                     "its station has too many pumps to try every one",
+                     result->sets_tried);
     else if (unbounded)
         sl_text_addf(text, "%s: %s", sl_input_words(unbounded->id),
                      unbounded->rule);

@@ -29,6 +29,14 @@ static const size_t *by_flow(const struct sl_layout *layout,
     return order;
 }
 
+/* All of them where the pumps are few, or where only how many run tells one
+ * set from another. */
+static bool every_set(const struct sl_layout *layout)
+{
+    return layout->pump_count <= SL_EXHAUSTIVE_PUMPS ||
+           layout->class_count == 1 || layout->at_once == 1;
+}
+
 void sl_sets_begin(struct sl_sets *sets, const struct sl_layout *layout,
                    const double *flows, struct sl_arena *arena)
 {
@@ -36,7 +44,7 @@ void sl_sets_begin(struct sl_sets *sets, const struct sl_layout *layout,
         .layout = layout,
         .counts =
             sl_arena_new(arena, layout->class_count, sizeof *sets->counts),
-        .all = layout->pump_count <= SL_EXHAUSTIVE_PUMPS,
+        .all = every_set(layout),
     };
     if (!sets->all)
         sets->order = by_flow(layout, flows, arena);

@@ -21,7 +21,8 @@ static enum sl_state verdict_of(const struct sl_rule_verdict *verdict,
 
     if (best == SL_SHORT || best == SL_THIN)
         return best;
-    if (verdict->surplus[SL_ADVERSE] >= 0 && !tally->off_curve.counts)
+    if (verdict->surplus[SL_ADVERSE] >= 0 && tally->all &&
+        !tally->off_curve.counts)
         return SL_CLEAR;
     return SL_UNPROVEN;
 }

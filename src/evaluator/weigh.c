@@ -117,7 +117,7 @@ static void weigh(const struct sl_judging *judging,
     }
     input->settles =
         surplus_with(judging, SL_FAVOURABLE, id, SL_ADVERSE) < 0 ||
-        (!unbounded(result, SL_IN_RUNNING_TOGETHER) &&
+        (judging->tally->all && !unbounded(result, SL_IN_RUNNING_TOGETHER) &&
          surplus_with(judging, SL_ADVERSE, id, SL_FAVOURABLE) >= 0);
 }
 

@@ -1,5 +1,7 @@
 #include "model/result.h"
 
+#include <math.h>
+
 const char *sl_state_name(enum sl_state state)
 {
     static const char *const names[] = {"short", "thin", "unproven", "clear"};
@@ -74,6 +76,14 @@ const char *sl_limit_end_name(enum sl_limit_end end)
                                         "figures end"};
 
     return end <= SL_LIMIT_FIGURES_END ? names[end] : "?";
+}
+
+double sl_limit_value(const struct sl_limit *limit)
+{
+    bool has =
+        limit->end == SL_LIMIT_FOUND || limit->end == SL_LIMIT_FIGURES_END;
+
+    return has ? limit->value : NAN;
 }
 
 static const struct {

@@ -1,7 +1,5 @@
 #include "ranker/set_cells.h"
 
-#include <math.h>
-
 #include "ranker/words.h"
 
 /* Empty where it was not kept: none of these counts can be 0. */
@@ -70,11 +68,9 @@ void sl_cells_limits(struct sl_cells *cells, const struct sl_pump_row *row)
 
     for (int id = 0; id < SL_LIMIT_COUNT; id++) {
         const struct sl_limit *limit = &row->limits[id];
-        bool has_value =
-            limit->end == SL_LIMIT_FOUND || limit->end == SL_LIMIT_FIGURES_END;
 
         sl_cell_number(cells, limits[id].name, limits[id].quantity,
-                       has_value ? limit->value : NAN);
+                       sl_limit_value(limit));
         sl_cell_text(cells, limits[id].end, sl_words_limit_end(limit->end));
     }
 }

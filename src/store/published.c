@@ -192,6 +192,21 @@ static enum sl_status read_published(const struct sl_table_reader *reader,
     return status;
 }
 
+/* Results have room for so many and no more. */
+static enum sl_status refuse_too_many(const struct sl_tables *tables,
+                                      struct sl_error *error)
+{
+    if (tables->rule_count <= SL_RULES_MOST)
+        return SL_OK;
+    return sl_error_set(error, SL_REFUSED,
+                        "there are %zu margin rules, the published ones and "
+                        "those of margin_rules.csv together, and at most %d "
+                        "are judged at once; take some out of the file, or "
+                        "give them the names of published ones, whose place "
+                        "they then take",
+                        tables->rule_count, SL_RULES_MOST);
+}
+
 enum sl_status sl_store_read_tables(struct sl_store *store, long long vintage,
                                     struct sl_arena *arena,
                                     struct sl_tables *tables,
@@ -206,6 +221,8 @@ enum sl_status sl_store_read_tables(struct sl_store *store, long long vintage,
     if (!status)
         status = sl_read_rules(store, vintage, NULL, arena, &read.rules,
                                &read.rule_count, error);
+    if (!status)
+        status = refuse_too_many(&read, error);
     if (status)
         return status;
     set_vocabularies(&read, arena);

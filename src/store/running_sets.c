@@ -56,11 +56,8 @@ static void bind_limits(struct sl_statement *statement,
     for (int id = 0; id < SL_LIMIT_COUNT; id++) {
         const struct sl_limit *limit = &pump->limits[id];
 
-        bool has_value =
-            limit->end == SL_LIMIT_FOUND || limit->end == SL_LIMIT_FIGURES_END;
-
         sl_bind_number(statement, limit_columns[id].value,
-                       has_value ? limit->value : NAN);
+                       sl_limit_value(limit));
         sl_bind_text(statement, limit_columns[id].end,
                      sl_limit_end_name(limit->end));
     }

@@ -4,7 +4,8 @@ from scipy.optimize import minimize_scalar
 from inventory import Unbounded
 from limits import limits
 from rules import judge, state
-from sets import TERMS, RunningSet, known, running_sets, setting
+from sets import (TERMS, RunningSet, every_set, known, running_sets,
+                  setting)
 from values import Station
 
 FIGURES = ("flow", "npsha", "npshr", "required", "margin", "surplus")
@@ -226,7 +227,8 @@ class StationCase:
                 and all(one.solved for one in governing)):
             governing = (pump,)
         best = self.corner(pump, governing, "favourable") or NOTHING
-        proven, likely = state(figures, worst, best, off_curve)
+        proven, likely = state(
+            figures, worst, best, off_curve or not every_set(self.station))
         return {
             "typical": figures, "adverse": worst, "favourable": best,
             "state": proven, "likely": likely, "off_curve": off_curve,

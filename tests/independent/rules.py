@@ -65,7 +65,7 @@ def judge(rule, pump, found, corner):
     return found
 
 
-def state(typical, adverse, favourable, off_curve):
+def state(typical, adverse, favourable, not_clear):
     """What is proven, and what is likely."""
     surplus = favourable["surplus"]
     if surplus is not None and favourable["margin"] < 0:
@@ -73,7 +73,7 @@ def state(typical, adverse, favourable, off_curve):
     elif surplus is not None and surplus < 0:
         proven = "thin"
     elif adverse["surplus"] is not None and adverse["surplus"] >= 0 and (
-            not off_curve):
+            not not_clear):
         proven = "clear"
     else:
         proven = "unproven"

@@ -22,11 +22,17 @@ def setting(corner, kelvin):
     return Setting(corner, corner, corner, corner, corner, corner, kelvin)
 
 
+def every_set(station):
+    """Whether all sets are tried; nothing is clear by some of them."""
+    return (len(station.pumps) <= LARGEST_SET_ALL_TRIED
+            or station.most_running() == 1)
+
+
 def running_sets(station, pump, flow_alone):
     """Every set of 1 to m pumps that holds this one."""
     others = [one for one in station.pumps if one is not pump]
     most = station.most_running()
-    if len(station.pumps) > LARGEST_SET_ALL_TRIED:
+    if not every_set(station):
         others.sort(key=lambda one: -(flow_alone(one) or 0.0))
         return [(pump, *others[:count]) for count in range(most)]
     return [(pump, *some) for count in range(most)

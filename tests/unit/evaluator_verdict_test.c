@@ -413,6 +413,23 @@ static void ties_go_to_the_first_pump_and_last_condition(void **state)
 #define TEST(test)                                                             \
     cmocka_unit_test_setup_teardown(test, fixture_setup, fixture_teardown)
 
+/* A bounded unknown decides, but the given flow has no bound: that is told,
+ * not how the search for one ended. */
+static void reason_tells_what_lacks_a_bound(void **state)
+{
+    struct fixture *f = *state;
+    const struct sl_pump_result *a;
+
+    fix_flow(f, 0.0613);
+    f->dossier.record.service = SL_WASTEWATER; /* with gas, or without */
+    f->pumps[0].record.datum_elevation.value +=
+        summer(f)->cases[SL_TYPICAL].surplus + 0.001;
+    a = summer(f);
+    check_state("gas", a, SL_UNPROVEN, SL_THIN);
+    if (strncmp(a->reason, "the flow it really runs at: ", 28) != 0)
+        fail_msg("reason: %s", a->reason);
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
@@ -424,6 +441,7 @@ int main(void)
         TEST(nothing_is_weighed_once_the_state_stands),
         TEST(only_unknown_without_bound_leads_and_settles),
         TEST(two_unknowns_without_bound_are_both_named),
+        TEST(reason_tells_what_lacks_a_bound),
         TEST(level_that_stands_in_is_the_reason),
         TEST(curve_left_at_the_adverse_end_is_the_reason),
         TEST(pump_whose_likely_npshr_is_unknown_is_not_clear),

@@ -242,19 +242,6 @@ static void test_pumps_table_tells_the_sets(void **state)
     free(table);
 }
 
-static void test_a_limit_where_figures_end_has_its_figure(void **state)
-{
-    struct sl_pump_row row = pump_with_sets();
-    char *table = NULL;
-
-    (void)state;
-    row.limits[SL_LIMIT_TEMPERATURE] =
-        (struct sl_limit){SL_LIMIT_FIGURES_END, 304.75};
-    table = pumps_table(&row, SL_SI);
-    assert_in(table, "208.438,found,31.6,as far as there are figures,123.45,");
-    free(table);
-}
-
 static void test_pumps_table_in_us_units(void **state)
 {
     struct sl_pump_row row = pump_with_sets();
@@ -285,6 +272,20 @@ static void test_no_figure_where_none_was_found(void **state)
                      "always within the range,");
     assert_in(table, ",\"with any 1 of P-1, P-3\",,,,past its end,");
     assert_null(strstr(table, "77.1"));
+    free(table);
+}
+
+/* Where figures end the value is how far the rule is met. */
+static void test_a_figure_where_figures_end(void **state)
+{
+    struct sl_pump_row row = pump_with_sets();
+    char *table = NULL;
+
+    (void)state;
+    row.limits[SL_LIMIT_LEVEL] =
+        (struct sl_limit){SL_LIMIT_FIGURES_END, 77.125};
+    table = pumps_table(&row, SL_SI);
+    assert_in(table, ",77.125,as far as there are figures,");
     free(table);
 }
 
@@ -499,12 +500,12 @@ int main(void)
         cmocka_unit_test(test_pumps_table_tells_the_sets),
         cmocka_unit_test(test_pumps_table_in_us_units),
         cmocka_unit_test(test_no_figure_where_none_was_found),
+        cmocka_unit_test(test_a_figure_where_figures_end),
         cmocka_unit_test(test_a_balance_tells_what_stands_beside_it),
         cmocka_unit_test(test_rules_stand_side_by_side),
         cmocka_unit_test(test_an_older_evaluation_says_so),
         cmocka_unit_test(test_what_stands_beside_in_words),
         cmocka_unit_test(test_a_need_without_a_curve_says_so),
-        cmocka_unit_test(test_a_limit_where_figures_end_has_its_figure),
         cmocka_unit_test(test_a_clear_station_tells_what_stands_beside),
         cmocka_unit_test(test_an_unproven_station_tells_it_too),
         cmocka_unit_test(test_the_published_rows_are_listed),

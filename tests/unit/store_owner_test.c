@@ -159,6 +159,34 @@ static void own_rules_come_behind_or_in_place_of_their_name(void **state)
     assert_string_equal(r[7].rule, "a last one");
 }
 
+/* One more than results have room for; one in another's place is none more. */
+static void more_rules_than_are_judged_are_refused(void **state)
+{
+    struct fixture *f = *state;
+    char name[] = "ours a";
+    struct sl_owner_rule rule = {
+        .line = 2, .rule = name, .ratio = known(1.25), .floor = known(0.5)};
+
+    read_for(f, 0);
+    for (size_t i = f->tables.rule_count; i < SL_RULES_MOST; i++) {
+        keep(f, SL_KIND_RULE, &rule);
+        rule.line++;
+        name[5]++;
+    }
+    rule.rule = "fixed head";
+    keep(f, SL_KIND_RULE, &rule);
+    read_for(f, f->vintage);
+    assert_int_equal(f->tables.rule_count, SL_RULES_MOST);
+    rule.rule = name;
+    rule.line++;
+    keep(f, SL_KIND_RULE, &rule);
+    assert_int_equal(sl_store_read_tables(f->store, f->vintage, &f->arena,
+                                          &f->tables, &f->error),
+                     SL_REFUSED);
+    assert_non_null(strstr(f->error.message, "there are 17 margin rules"));
+    assert_int_equal(f->tables.rule_count, SL_RULES_MOST);
+}
+
 static void a_name_taken_is_told_with_its_line(void **state)
 {
     struct fixture *f = *state;
@@ -218,6 +246,7 @@ int main(void)
         IN_VINTAGE(what_a_condition_leaves_out_is_adverse),
         IN_VINTAGE(another_vintage_has_the_published_ones),
         IN_VINTAGE(own_rules_come_behind_or_in_place_of_their_name),
+        IN_VINTAGE(more_rules_than_are_judged_are_refused),
         IN_VINTAGE(a_name_taken_is_told_with_its_line),
         IN_VINTAGE(the_summary_has_the_owners_rule),
     };

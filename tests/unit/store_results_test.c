@@ -390,7 +390,8 @@ static void fill_sets(struct fixture *f, struct sl_pump_result *result)
     result->limits[SL_LIMIT_LEVEL] = (struct sl_limit){SL_LIMIT_FOUND, 1204.37};
     result->limits[SL_LIMIT_TEMPERATURE] =
         (struct sl_limit){SL_LIMIT_NONE, 300.5};
-    result->limits[SL_LIMIT_FLOW] = (struct sl_limit){SL_LIMIT_ALWAYS, NAN};
+    result->limits[SL_LIMIT_FLOW] =
+        (struct sl_limit){SL_LIMIT_FIGURES_END, 0.0734};
     result->rule_count = f->tables.rule_count;
     result->rules =
         sl_arena_new(&f->arena, result->rule_count, sizeof *result->rules);
@@ -441,25 +442,7 @@ static void the_sets_come_back_whole(void **state)
         "with P-2, P-3|3|6|1|with P-3|with any 1 of P-2, P-3|1.31|-0.19|"
         "past its end|alone|with P-2|1|submergence (from memory); two "
         "crossings|STUC-T|estimate|"
-        "found 1204.37|none nan|always nan\n");
-    sl_text_release(&text);
-}
-
-static void where_figures_end_the_limit_has_its_value(void **state)
-{
-    struct fixture *f = *state;
-    struct evaluated e = begin(f);
-    struct sl_text text = {NULL, 0, 0};
-    struct made made;
-
-    make(&e, &made, "A", 12, 1);
-    fill_sets(f, &made.results[1][0]);
-    made.results[1][0].limits[SL_LIMIT_LEVEL].end = SL_LIMIT_FIGURES_END;
-    file(&e, &made);
-    must(f, sl_store_each_pump(f->store, e.evaluation, tell_sets, &text,
-                               &f->error));
-    assert_non_null(
-        strstr(sl_text_string(&text), "|figures end 1204.37|none nan|"));
+        "found 1204.37|none nan|figures end 0.07\n");
     sl_text_release(&text);
 }
 
@@ -904,7 +887,6 @@ int main(void)
         IN_VINTAGE(a_station_without_a_pump_is_unproven),
         IN_VINTAGE(a_result_comes_back_whole),
         IN_VINTAGE(the_sets_come_back_whole),
-        IN_VINTAGE(where_figures_end_the_limit_has_its_value),
         IN_VINTAGE(no_adverse_figure_has_no_adverse_set),
         IN_VINTAGE(clear_stations_with_something_beside_are_counted),
         IN_VINTAGE(rules_are_told_and_their_pumps_counted),
