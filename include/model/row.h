@@ -20,11 +20,12 @@ struct sl_pump_row {
     const char *reason;
     enum sl_flow_basis flow_basis;
     enum sl_source_basis source_basis;
+    enum sl_npshr_basis npshr_basis; /* none where it was not kept, too */
     bool off_curve;
     bool stands;
     /* Over all running sets; each set in words, "" where there is none. */
     const char *running_set; /* the one that governs */
-    const char *adverse_set;
+    const char *adverse_set; /* "" too where there is no adverse surplus */
     const char *one_out_set;
     const char *off_curve_set;
     const char *stands_set;
@@ -34,7 +35,8 @@ struct sl_pump_row {
     double one_out_margin, one_out_surplus; /* m */
     enum sl_curve_position curve_position;  /* in off_curve_set */
     bool two_crossings;
-    /* Names of the checks that are beyond, "; " between; NULL: not kept. */
+    /* Names of the checks that are beyond, "; " between, and "(from memory)"
+     * behind those whose limit is; NULL: not kept. */
     const char *flags;
     /* A letter a rule of the summary: S, T, U, C as enum sl_state, or - where
      * it does not apply; "" when they were not kept. */
@@ -58,6 +60,9 @@ struct sl_station_row {
     int pumps;          /* that were judged */
     int pumps_rejected; /* that were not kept, so could not be */
     int pumps_by_state[SL_STATE_COUNT];
+    /* Some pump, in some condition, has a flag or is short or thin by some
+     * rule. */
+    bool any_beside;
     long line; /* in stations.csv */
 };
 
@@ -108,6 +113,7 @@ struct sl_summary {
     long long stations_by_state[SL_STATE_COUNT];
     long long pumps_by_state[SL_STATE_COUNT];
     long long stations_without_pumps;
+    long long clear_beside; /* clear, and `any_beside` */
     int year; /* of the audit: pipes are as old as that makes them */
     struct sl_margin_rule rule;      /* ranked on */
     const struct sl_rule_row *rules; /* every one judged by, in order */

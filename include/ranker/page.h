@@ -78,6 +78,9 @@ const char *sl_page_unit(const struct sl_report *report,
 /* The first screen and the closing parts. */
 void sl_page_front(const struct sl_report *report);
 void sl_page_files(struct sl_report *report);
+/* The published rows used beside the defaults: how walls age, limits of the
+ * checks, and where K and roughness come from. */
+void sl_page_published(struct sl_report *report);
 void sl_page_glossary(const struct sl_report *report);
 
 /* What a pump's balance does not hold: its running sets, flags, what the

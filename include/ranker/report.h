@@ -17,8 +17,9 @@ struct sl_report {
     enum sl_unit_system units;
     const struct sl_summary *summary;
     const struct sl_vocabularies *vocabularies;
-    long long rows; /* of the open list */
-    int list;       /* which list is open; the report's own */
+    const struct sl_tables *tables; /* that it was judged by */
+    long long rows;                 /* of the open list */
+    int list;                       /* which list is open; the report's own */
 };
 
 /* Title, first screen: counts by state in words and what each state means,
@@ -42,7 +43,8 @@ void sl_report_pump(struct sl_report *report, const struct sl_pump_row *row);
 void sl_report_begin_set_aside(struct sl_report *report);
 void sl_report_set_aside(struct sl_report *report,
                          const struct sl_set_aside_row *row);
-/* Every default, its interval, its source, how often it was used. */
+/* Every default, its interval, its source, how often it was used; behind
+ * them the other published rows, which are the tables'. */
 void sl_report_begin_defaults(struct sl_report *report);
 void sl_report_default(struct sl_report *report,
                        const struct sl_default_row *row);

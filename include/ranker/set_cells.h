@@ -8,6 +8,9 @@
 
 /* Empty where it was not kept. */
 void sl_cells_sets(struct sl_cells *cells, const struct sl_pump_row *row);
+/* What NPSHR comes from; likewise. */
+void sl_cells_npshr_basis(struct sl_cells *cells,
+                          const struct sl_pump_row *row);
 /* What each rule says, in one cell. */
 void sl_cells_rule_states(struct sl_cells *cells,
                           const struct sl_summary *summary,

@@ -44,6 +44,11 @@ void sl_words_sets_tried(const struct sl_pump_row *row, struct sl_text *text);
 void sl_words_rule_states(const struct sl_pump_row *row,
                           const struct sl_summary *summary,
                           struct sl_text *text);
+/* What stands beside the margin: "flags: submergence; by a rule (from
+ * memory): thin"; nothing where nothing does.  Only the rules that find the
+ * pump short or thin, and not the one ranked on. */
+void sl_words_beside(const struct sl_pump_row *row,
+                     const struct sl_summary *summary, struct sl_text *text);
 /* What the rule of that place says of the pump; false where it is not about
  * it, or that was not kept. */
 bool sl_rule_state(const struct sl_pump_row *row, size_t rule,
@@ -61,7 +66,7 @@ const char *sl_words_column(const char *column);
 const char *sl_words_default(const char *field);
 /* How far a published value can be trusted, from its mark. */
 const char *sl_words_trust(char trust);
-/* Its name, and "(from memory)" where it is so known. */
+/* Its name, and "(from memory)" or "(the owner's own)" where it is. */
 void sl_words_rule_name(const struct sl_margin_rule *rule,
                         struct sl_text *text);
 /* The rule: "NPSHA at least 1.30 x NPSHR, and at least NPSHR + 1.5 m". */

@@ -2,6 +2,8 @@
 -- NULL in the new columns: of an evaluation made before they were kept, or
 -- where there is no such set or figure.
 ALTER TABLE pump_results
+    ADD COLUMN npshr_basis TEXT /* what NPSHR comes from: its curve, ... */;
+ALTER TABLE pump_results
     ADD COLUMN running_set TEXT /* the set that governs, in words: "alone" */;
 ALTER TABLE pump_results
     ADD COLUMN running INTEGER /* pumps in that set, this one counted */;

@@ -13,7 +13,7 @@ SELECT
     r.velocity, r.friction, r.minor, r.vapour, r.gas, r.altitude,
     r.temperature, r.recorded, r.derived, r.assumed, r.unknown,
     r.leading_unknown,
-    r.running_set, r.running, r.sets_tried, r.sets_all, r.adverse_set,
+    r.npshr_basis, r.running_set, r.running, r.sets_tried, r.sets_all, r.adverse_set,
     r.one_out_set, r.one_out_margin, r.one_out_surplus, r.curve_position,
     r.off_curve_set, r.stands_set, r.two_crossings, r.flags, r.rule_states,
     r.limit_level, r.limit_level_end, r.limit_temperature,

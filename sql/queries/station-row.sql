@@ -17,11 +17,19 @@ SELECT
     r.velocity, r.friction, r.minor, r.vapour, r.gas, r.altitude,
     r.temperature, r.recorded, r.derived, r.assumed, r.unknown,
     r.leading_unknown,
-    r.running_set, r.running, r.sets_tried, r.sets_all, r.adverse_set,
+    r.npshr_basis, r.running_set, r.running, r.sets_tried, r.sets_all, r.adverse_set,
     r.one_out_set, r.one_out_margin, r.one_out_surplus, r.curve_position,
     r.off_curve_set, r.stands_set, r.two_crossings, r.flags, r.rule_states,
     r.limit_level, r.limit_level_end, r.limit_temperature,
-    r.limit_temperature_end, r.limit_flow, r.limit_flow_end
+    r.limit_temperature_end, r.limit_flow, r.limit_flow_end,
+    EXISTS (
+        SELECT 1
+        FROM pump_results AS b
+        WHERE
+            b.evaluation = t.evaluation
+            AND b.station = t.station
+            AND (b.flags <> '' OR b.rule_states GLOB '*[ST]*')
+    ) AS any_beside
 FROM station_results AS t
 JOIN stations AS s ON s.station = t.station
 LEFT JOIN pumps AS p ON p.pump = t.worst_pump

@@ -17,5 +17,5 @@ ORDER BY
     CASE WHEN r.likely IN ('short', 'thin') THEN 1 ELSE 2 END,
     s.people_served DESC NULLS LAST,
     (u.adverse IS NULL) DESC,
-    u.swing DESC NULLS LAST,
+    round(u.swing, 6) DESC NULLS LAST, -- not by its last bits
     s.station_id, p.pump_id, u.unknown;

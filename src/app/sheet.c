@@ -42,6 +42,25 @@ static void title(const struct sl_sheet *sheet,
     fputs("\n\n", stream);
 }
 
+/* Where NPSHR comes from: a curve brought to another speed rests on the row of
+ * its exponent. */
+static const char *npshr_key(const struct sl_pump_result *pump)
+{
+    bool scaled = pump->inputs[SL_IN_NPSHR].row != NULL;
+
+    switch (pump->npshr_basis) {
+    case SL_NPSHR_CURVE:
+        return scaled ? "F18, F19" : "F19";
+    case SL_NPSHR_RATED:
+        return scaled ? "rated point, F18" : "rated point";
+    case SL_NPSHR_ESTIMATE:
+        return "F13";
+    case SL_NPSHR_NONE:
+        break;
+    }
+    return "not on record";
+}
+
 /* How the air, the surface, the pipes make up NPSHA: formula keys are those
  * of docs/formulas.md. */
 static void balance(const struct sl_sheet *sheet,
@@ -73,7 +92,7 @@ static void balance(const struct sl_sheet *sheet,
     head(sheet, "vapour pressure", terms->vapour, "F2, F3");
     head(sheet, "allowance for gas", terms->gas, "F1");
     head(sheet, "NPSHA", terms->npsha, "the sum");
-    head(sheet, "NPSHR (NPSH3)", typical->npshr, "F19, F20");
+    head(sheet, "NPSHR (NPSH3)", typical->npshr, npshr_key(pump));
     head(sheet, "margin", typical->margin, "NPSHA - NPSHR");
     sl_words_rule_name(sheet->rule, &rule);
     head(sheet, "the rule asks for an NPSHA of", typical->required,
@@ -157,17 +176,33 @@ static void default_used(FILE *stream, const struct sl_default *row)
                 row->trust);
 }
 
-/* "2.40 m" or "2.40 m (1.10 to 3.00)", and where it comes from. */
-static void input_line(const struct sl_sheet *sheet,
-                       const struct sl_input *input)
+/* A low barometer is on record as a pressure, and counts as a part of the
+ * standard air. */
+static void recorded_barometer(const struct sl_sheet *sheet,
+                               const struct sl_input *input)
+{
+    double fall = input->value.typical;
+    char pressure[SL_FIGURE_ROOM], part[SL_FIGURE_ROOM];
+
+    fprintf(sheet->stream, " %s: %s of the standard air %s it",
+            sl_sheet_figure(sheet, SL_PRESSURE,
+                            sheet->dossier->record.barometer_low.value, 1,
+                            pressure),
+            sl_sheet_figure(sheet, SL_PURE, fabs(fall), 3, part),
+            fall < 0 ? "above" : "below");
+}
+
+/* "2.40 m" or "2.40 m (1.10 m at best, 3.00 m at worst)" */
+static void input_value(const struct sl_sheet *sheet,
+                        const struct sl_input *input)
 {
     enum sl_quantity quantity = quantity_of(input);
-    int decimals = sl_sheet_decimals(quantity);
-    char typical[48], adverse[48], favourable[48];
+    int decimals =
+        input->id == SL_IN_RUNNING_TOGETHER ? 0 : sl_sheet_decimals(quantity);
+    char typical[SL_FIGURE_ROOM], adverse[SL_FIGURE_ROOM];
+    char favourable[SL_FIGURE_ROOM];
     FILE *stream = sheet->stream;
 
-    fprintf(stream, "  %-42s %s", sl_input_words(input->id),
-            sl_provenance_name(input->provenance));
     if (!isnan(input->value.typical) && input->id != SL_IN_SOURCE_KIND)
         fprintf(stream, " %s",
                 sl_sheet_figure(sheet, quantity, input->value.typical, decimals,
@@ -181,6 +216,20 @@ static void input_line(const struct sl_sheet *sheet,
                     ? "no bound"
                     : sl_sheet_figure(sheet, quantity, input->value.adverse,
                                       decimals, adverse));
+}
+
+/* What it is, and where it comes from. */
+static void input_line(const struct sl_sheet *sheet,
+                       const struct sl_input *input)
+{
+    FILE *stream = sheet->stream;
+
+    fprintf(stream, "  %-42s %s", sl_input_words(input->id),
+            sl_provenance_name(input->provenance));
+    if (input->id == SL_IN_BAROMETER && input->provenance == SL_RECORDED)
+        recorded_barometer(sheet, input);
+    else
+        input_value(sheet, input);
     if (input->line)
         fprintf(stream, ", %s:%ld", sl_record_kind(input->kind)->file,
                 input->line);

@@ -99,7 +99,10 @@ void sl_sheet_sets(const struct sl_sheet *sheet,
     if (pump->set_count)
         list_sets(sheet, pump);
     if (pump->adverse_set) {
-        fputs("  With every unknown at its adverse end the worst is: ",
+        fputs(isnan(pump->cases[SL_ADVERSE].surplus)
+                  ? "  With every unknown at its adverse end: unknown; in this "
+                    "set there is no adverse end: "
+                  : "  With every unknown at its adverse end the worst is: ",
               sheet->stream);
         sl_print_safely(sheet->stream, pump->adverse_set);
         putc('\n', sheet->stream);

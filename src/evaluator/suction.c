@@ -62,6 +62,19 @@ static bool exact(const struct sl_interval *value)
     return value->adverse == value->favourable;
 }
 
+/* The row it is aged by; NULL where nothing ages it. */
+static const struct sl_ageing *growth_of(const struct sl_plan *plan,
+                                         const struct sl_roughness *row,
+                                         int condition,
+                                         enum sl_friction_state state)
+{
+    const struct sl_ageing *ageing = NULL;
+
+    if (row && state == SL_FRICTION_AGED)
+        ageing = ageing_of(plan, row->material, condition);
+    return ageing && ageing->rate.adverse != 0 ? ageing : NULL;
+}
+
 /* A year after the audit's is a slip, and tells nothing. */
 static bool laid_by_then(const struct sl_plan *plan,
                          const struct sl_number *year_laid)
@@ -106,9 +119,9 @@ struct sl_interval sl_plan_roughness(const struct sl_plan *plan, int material,
     if (!row)
         return sl_no_figure();
     laid = as_laid(row, condition);
-    ageing = ageing_of(plan, row->material, condition);
+    ageing = growth_of(plan, row, condition, state);
     *assumed = !exact(&laid);
-    if (state == SL_FRICTION_NEW || !ageing || ageing->rate.adverse == 0)
+    if (!ageing)
         return laid;
     years = years_since(plan, year_laid);
     *assumed =
@@ -241,15 +254,48 @@ static void measures(struct sl_plan *plan)
                  "not recorded; the default suction loss stands in");
 }
 
-static const char *surface_rule(enum sl_provenance provenance,
+/* A row may rest on a figure from memory without being one itself. */
+static bool from_memory(const struct sl_ageing *row)
+{
+    return row->trust == 'M' || strstr(row->source, "from memory");
+}
+
+/* How far the rates can be trusted that age the pipes of the path: the least
+ * trusted's mark, or 0 where none is aged. */
+static char ageing_trust(const struct sl_plan *plan)
+{
+    char trust = 0;
+
+    for (size_t i = 0; i < plan->path_count; i++) {
+        const struct sl_pipe *pipe = &plan->path[i].pipe->record;
+        const struct sl_ageing *growth = NULL;
+
+        if (!pipe->roughness.known && !pipe->hazen_williams_c.known)
+            growth =
+                growth_of(plan, material_row(plan, pipe->material),
+                          pipe->condition, plan->condition->suction_friction);
+        if (growth && trust != 'M')
+            trust = from_memory(growth) ? 'M' : growth->trust;
+    }
+    return trust;
+}
+
+#define BY_MATERIAL "the roughest pipe of the path, by its material, condition "
+
+static const char *surface_rule(enum sl_provenance provenance, char ageing,
                                 const struct sl_interval *worst,
                                 const struct sl_default *row)
 {
     if (row)
         return row->source;
+    if (provenance != SL_RECORDED && ageing == 'M')
+        return BY_MATERIAL "and age; aged by the rates of the table, from "
+                           "memory";
+    if (provenance != SL_RECORDED && ageing == 'P')
+        return BY_MATERIAL "and age; aged by the rates of the table, a "
+                           "proposal";
     if (provenance != SL_RECORDED)
-        return "the roughest pipe of the path, by its material, condition "
-               "and age";
+        return BY_MATERIAL "and age";
     return isnan(worst->typical) ? "C is recorded in its place"
                                  : "the roughest pipe of the path";
 }
@@ -269,8 +315,9 @@ static void surfaces(struct sl_plan *plan)
         worst.adverse = fmax(worst.adverse, place->roughness.adverse);
         worst.favourable = fmax(worst.favourable, place->roughness.favourable);
     }
-    input = sl_plan_set(plan, SL_IN_SUCTION_ROUGHNESS, provenance, worst,
-                        surface_rule(provenance, &worst, row));
+    input =
+        sl_plan_set(plan, SL_IN_SUCTION_ROUGHNESS, provenance, worst,
+                    surface_rule(provenance, ageing_trust(plan), &worst, row));
     input->row = row;
     input->kind = SL_KIND_PIPE;
     input->line = plan->pump->suction->record.line;

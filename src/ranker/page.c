@@ -21,7 +21,8 @@ static void write_column_head(const struct sl_report *report,
 static void open_list(const struct sl_report *report,
                       const struct sl_page_list *list)
 {
-    sl_markup(report->stream, "<table role=\"table\" class=\"");
+    sl_markup(report->stream, "<div class=\"scroll\"><table role=\"table\" "
+                              "class=\"");
     sl_markup_attribute(report->stream, list->look);
     sl_markup(report->stream, "\">\n<caption>");
     sl_markup(report->stream, list->caption);
@@ -77,7 +78,7 @@ void sl_page_list_more(const struct sl_report *report,
 void sl_page_list_end(struct sl_report *report, const struct sl_page_list *list)
 {
     if (report->rows > 0) {
-        sl_markup(report->stream, "</tbody>\n</table>\n");
+        sl_markup(report->stream, "</tbody>\n</table></div>\n");
     } else {
         sl_markup(report->stream, "<p class=\"empty\">");
         sl_markup_text(report->stream, list->empty);

@@ -128,7 +128,8 @@ void sl_report_begin_defaults(struct sl_report *report)
     sl_page_section(report, "defaults", "Defaults used",
                     "A default stands in only where nothing is on record, as a "
                     "range. Put your own value into the inventory and it is no "
-                    "longer used.");
+                    "longer used. Below: the published rows used beside "
+                    "them.");
 }
 
 void sl_report_default(struct sl_report *report,
@@ -157,6 +158,7 @@ static void write_foot(const struct sl_report *report)
 void sl_report_end(struct sl_report *report)
 {
     sl_page_list_end(report, &defaults);
+    sl_page_published(report);
     sl_page_section_end(report);
     sl_page_glossary(report);
     sl_markup(report->stream, "</main>\n");

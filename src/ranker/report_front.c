@@ -1,6 +1,8 @@
 /* The first screen: what was found, what to do, how it was judged. */
 #include "ranker/page.h"
 
+#include <string.h>
+
 #include "ranker/words.h"
 
 /* Enough of the hash to tell two inventories apart by eye. */
@@ -56,6 +58,20 @@ static void write_finding(const struct sl_report *report)
     sl_markup(report->stream, "</p>\n");
 }
 
+/* Clear is by the rule ranked on, and says nothing of what is beside it. */
+static void write_beside_clear(const struct sl_report *report)
+{
+    long long count = report->summary->clear_beside;
+
+    if (count == 0)
+        return;
+    sl_markup(report->stream, "<p class=\"besides\"><a href=\"#clear\">");
+    sl_markup_count(report->stream, count);
+    sl_markup(report->stream, count == 1 ? " of them carries a flag, or is"
+                                         : " of them carry a flag, or are");
+    sl_markup(report->stream, " thin or short by another rule</a>.</p>");
+}
+
 static void write_tile(const struct sl_report *report, enum sl_state state)
 {
     static const char *const opening[SL_STATE_COUNT] = {
@@ -73,7 +89,10 @@ static void write_tile(const struct sl_report *report, enum sl_state state)
     sl_page_state(report, state);
     sl_markup(report->stream, "</p><p>");
     sl_page_text(report, sl_words_state(state));
-    sl_markup(report->stream, "</p></li>\n");
+    sl_markup(report->stream, "</p>");
+    if (state == SL_CLEAR)
+        write_beside_clear(report);
+    sl_markup(report->stream, "</li>\n");
 }
 
 static void write_tiles(const struct sl_report *report)
@@ -160,17 +179,17 @@ static void write_rule(const struct sl_report *report)
     sl_words_rule(rule, report->units, &words);
     sl_markup(report->stream, "<dt>Margin rule</dt>\n<dd><b>");
     sl_page_name(report, rule->rule);
-    sl_markup(report->stream, "</b>");
-    if (rule->edition && rule->edition[0] != '\0') {
+    sl_markup(report->stream, "</b> (");
+    sl_page_text(report, sl_words_trust(rule->trust));
+    sl_markup(report->stream, ")");
+    if (rule->edition && rule->edition[0] != '\0' &&
+        !strstr(rule->rule, rule->edition)) {
         sl_markup(report->stream, ", ");
         sl_page_name(report, rule->edition);
     }
     sl_markup(report->stream, ": ");
     sl_page_say(report, &words);
-    sl_markup(report->stream, " (");
-    sl_page_text(report, sl_words_trust(rule->trust));
-    sl_markup(report->stream, "); <a href=\"#rules\">all the rules</a>"
-                              "</dd>\n");
+    sl_markup(report->stream, "; <a href=\"#rules\">all the rules</a></dd>\n");
 }
 
 static void write_hash(const struct sl_report *report)
@@ -259,6 +278,8 @@ static void write_cautions(const struct sl_report *report)
         "qualified crews, under the owner&#39;s permits only.</li>\n"
         "<li>NPSHA that just equals NPSHR is not safe: NPSHR is NPSH3, where "
         "3&nbsp;% of the head is already lost to cavitation.</li>\n"
+        "<li>Recorded values are taken as exact so far: a pump clear by less "
+        "than 0.3&nbsp;m (1&nbsp;ft) deserves a second look.</li>\n"
         "<li>What is not known is shown as unknown, and every value assumed "
         "is <a href=\"#defaults\">listed</a>.</li>\n"
         "</ul>\n</section>\n");

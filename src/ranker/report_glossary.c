@@ -31,6 +31,9 @@ static const struct {
      "the worst set with one pump fewer than may run at once."},
     {"Flags", "checks beside the margin that are beyond their limit; they "
               "change no state."},
+    {"By little", "clear with less than 0.3 m (1 ft) to spare over the rule at "
+                  "the adverse values. Recorded values are taken as exact so "
+                  "far: a pump clear by so little deserves a second look."},
     {"Solved, recorded, rated flow",
      "the flow the pump runs at: where its curve meets the station's system; "
      "the largest ever recorded; or the rated point, which says nothing of "

@@ -19,6 +19,8 @@ static void write_name(const struct sl_report *report, const void *row)
     sl_page_name(report, rule->rule);
     if (rule->trust == 'M')
         sl_markup(report->stream, "<small>from memory</small>");
+    if (rule->trust == 'O')
+        sl_markup(report->stream, "<small>the owner&#39;s own</small>");
     if (edition[0] != '\0' && !strstr(rule->rule, edition)) {
         sl_markup(report->stream, "<small>");
         sl_page_name(report, edition);

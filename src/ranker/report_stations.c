@@ -5,6 +5,9 @@
 
 #include "ranker/words.h"
 
+/* Clear by less than this is clear by little, m: common practice, no source.
+ */
+#define LITTLE 0.3
 /* Ends of a range closer than this read the same at one decimal, m. */
 #define SAME_HEAD 0.05
 
@@ -101,6 +104,8 @@ static void write_surplus(const struct sl_report *report, const void *any)
     sl_page_quantity(report, SL_LENGTH, row->cases[SL_TYPICAL].surplus, 1);
     write_range(report, row->cases[SL_ADVERSE].surplus,
                 row->cases[SL_FAVOURABLE].surplus);
+    if (row->cases[SL_ADVERSE].surplus < LITTLE)
+        sl_markup(report->stream, "<small><b>by little</b></small>");
 }
 
 static void write_governing(const struct sl_report *report, const void *any)
@@ -123,6 +128,26 @@ static void write_why(const struct sl_report *report, const void *any)
     sl_words_why(&((const struct sl_station_row *)any)->worst, report->units,
                  &words);
     sl_page_say(report, &words);
+}
+
+/* The same, and below it what stands beside the margin. */
+static void write_why_and_beside(const struct sl_report *report,
+                                 const void *any)
+{
+    const struct sl_station_row *row = any;
+    struct sl_text words = {0};
+
+    write_why(report, row);
+    sl_words_beside(&row->worst, report->summary, &words);
+    if (words.length == 0 && row->any_beside)
+        sl_text_add_string(&words, "nothing here, but in another case or on "
+                                   "another pump of it: see pumps.csv");
+    if (words.length == 0)
+        return;
+    sl_markup(report->stream, "<small class=\"besides\"><b>Beside the "
+                              "margin</b> ");
+    sl_page_say(report, &words);
+    sl_markup(report->stream, "</small>");
 }
 
 static void write_leading(const struct sl_report *report, const void *any)
@@ -177,7 +202,7 @@ static const struct sl_page_column clear_columns[] = {
     {"State", "brief", write_state, false},
     {"To spare over the rule", "number", write_surplus, false},
     {"Governing pump and case", "case", write_governing, false},
-    {"Why", "long sentence", write_why, false},
+    {"Why", "long sentence", write_why_and_beside, false},
     {"Takes most", "case", write_leading, false},
     {"People served", "number", write_people, false},
     {"How sure", "brief", write_confidence, false},
@@ -189,7 +214,7 @@ static const struct sl_page_column find_out_columns[] = {
     {"State", "brief", write_state, false},
     {"Likely", "brief", write_likely, false},
     {"Find out", "long sentence strong", write_next_step, false},
-    {"Why it is not settled", "long sentence", write_why, false},
+    {"Why it is not settled", "long sentence", write_why_and_beside, false},
     {"Governing pump and case", "case", write_governing, false},
     {"People served", "number", write_people, false},
     {"How sure", "brief", write_confidence, false},
@@ -221,7 +246,11 @@ static void open_section(struct sl_report *report)
     else if (report->list == CLEAR)
         sl_page_section(report, "clear", "Stations that are clear",
                         "The margin rule is met under every condition "
-                        "audited, even at the adverse values.");
+                        "audited, even at the adverse values; <b>by "
+                        "little</b>: with less than 0.3&nbsp;m "
+                        "(1&nbsp;ft) to spare there. Flags, and what other "
+                        "rules find short or thin, stand below the reason; "
+                        "they change no state.");
     else
         sl_page_section(report, "find-out", "Find out first",
                         "These may be short, thin or clear. The likely state "

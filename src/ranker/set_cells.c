@@ -31,6 +31,14 @@ void sl_cells_sets(struct sl_cells *cells, const struct sl_pump_row *row)
     sl_cell_text(cells, "flags", row->flags);
 }
 
+void sl_cells_npshr_basis(struct sl_cells *cells, const struct sl_pump_row *row)
+{
+    bool kept = cells->naming || row->sets_tried > 0;
+
+    sl_cell_text(cells, "npshr_basis",
+                 kept ? sl_npshr_basis_name(row->npshr_basis) : NULL);
+}
+
 void sl_cells_rule_states(struct sl_cells *cells,
                           const struct sl_summary *summary,
                           const struct sl_pump_row *row)

@@ -34,6 +34,8 @@ void sl_words_rule_name(const struct sl_margin_rule *rule, struct sl_text *text)
     sl_text_add_string(text, rule->rule);
     if (rule->trust == 'M')
         sl_text_add_string(text, " (from memory)");
+    if (rule->trust == 'O')
+        sl_text_add_string(text, " (the owner's own)");
 }
 
 bool sl_rule_state(const struct sl_pump_row *row, size_t rule,
@@ -67,6 +69,36 @@ void sl_words_rule_states(const struct sl_pump_row *row,
     }
 }
 
+/* The rules beside the one ranked on that find it short or thin. */
+static void add_worse_rules(const struct sl_pump_row *row,
+                            const struct sl_summary *summary,
+                            struct sl_text *text)
+{
+    for (size_t i = 0; i < summary->rule_count; i++) {
+        const struct sl_margin_rule *rule = &summary->rules[i].rule;
+        enum sl_state state = SL_UNPROVEN;
+
+        if (!sl_rule_state(row, i, &state) || state >= SL_UNPROVEN ||
+            sl_same(rule->rule, summary->rule.rule))
+            continue;
+        sl_text_add_string(text, text->length ? "; by " : "by ");
+        sl_words_rule_name(rule, text);
+        sl_text_addf(text, ": %s", sl_state_name(state));
+    }
+}
+
+void sl_words_beside(const struct sl_pump_row *row,
+                     const struct sl_summary *summary, struct sl_text *text)
+{
+    if (!is_there(row->pump_id))
+        return;
+    if (!row->flags)
+        sl_text_add_string(text, "flags not kept");
+    else if (is_there(row->flags))
+        sl_text_addf(text, "flags: %s", row->flags);
+    add_worse_rules(row, summary, text);
+}
+
 const char *sl_words_limit(enum sl_limit_id id, const struct sl_pump_row *row)
 {
     static const char *const words[SL_LIMIT_COUNT] = {
@@ -86,7 +118,7 @@ const char *sl_words_limit_end(enum sl_limit_end end)
     case SL_LIMIT_FOUND:
         return "found";
     case SL_LIMIT_NONE:
-        return "none within the range";
+        return "not met anywhere within the range";
     case SL_LIMIT_ALWAYS:
         return "always within the range";
     case SL_LIMIT_FIGURES_END:

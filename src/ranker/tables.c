@@ -128,6 +128,17 @@ static void station_pumps(struct sl_cells *cells,
     sl_cell_count(cells, "pumps_clear", row->pumps_by_state[SL_CLEAR]);
 }
 
+/* The name as it is given to --rule, its trust, the year pipes are aged to. */
+static void judged_by(struct sl_cells *cells,
+                      const struct sl_table_writer *writer)
+{
+    const struct sl_margin_rule *rule = &writer->summary->rule;
+
+    sl_cell_text(cells, "margin_rule", rule->rule);
+    sl_cell_text(cells, "margin_rule_trust", sl_words_trust(rule->trust));
+    sl_cell_count(cells, "year", writer->summary->year);
+}
+
 static void station_line(const struct sl_table_writer *writer, bool naming,
                          const struct sl_station_row *row)
 {
@@ -145,6 +156,7 @@ static void station_line(const struct sl_table_writer *writer, bool naming,
     sl_cell_decimal(&cells, "latitude", row->latitude, 6);
     sl_cell_decimal(&cells, "longitude", row->longitude, 6);
     sl_cell_count(&cells, "stations_csv_line", row->line);
+    judged_by(&cells, writer);
     vintage(&cells, writer);
     sl_cells_end(&cells);
 }
@@ -216,16 +228,6 @@ static void pump_favourable(struct sl_cells *cells, const struct sl_case *best)
     sl_cell_number(cells, "surplus_favourable", SL_LENGTH, best->surplus);
 }
 
-/* The name as it is given to --rule; its trust beside it. */
-static void margin_rule(struct sl_cells *cells,
-                        const struct sl_table_writer *writer)
-{
-    const struct sl_margin_rule *rule = &writer->summary->rule;
-
-    sl_cell_text(cells, "margin_rule", rule->rule);
-    sl_cell_text(cells, "margin_rule_trust", sl_words_trust(rule->trust));
-}
-
 static void pump_line(const struct sl_table_writer *writer, bool naming,
                       const struct sl_pump_row *row)
 {
@@ -235,6 +237,7 @@ static void pump_line(const struct sl_table_writer *writer, bool naming,
     pump_terms(&cells, &row->cases[SL_TYPICAL]);
     pump_adverse(&cells, &row->cases[SL_ADVERSE]);
     pump_favourable(&cells, &row->cases[SL_FAVOURABLE]);
+    sl_cells_npshr_basis(&cells, row);
     sl_cells_sets(&cells, row);
     sl_cells_rule_states(&cells, writer->summary, row);
     sl_cells_limits(&cells, row);
@@ -242,8 +245,7 @@ static void pump_line(const struct sl_table_writer *writer, bool naming,
     sl_cell_number(&cells, "temperature", SL_TEMPERATURE, row->temperature);
     provenance_counts(&cells, row);
     sl_cell_text(&cells, "leading_unknown", row->leading_unknown);
-    margin_rule(&cells, writer);
-    sl_cell_count(&cells, "year", writer->summary->year);
+    judged_by(&cells, writer);
     vintage(&cells, writer);
     sl_cells_end(&cells);
 }

@@ -38,13 +38,19 @@ const char *sl_words_default(const char *field)
         {"barometer_fall", "fall of a low barometer, part of the air pressure"},
         {"discharge_minor_k", "K of the discharge's fittings together"},
         {"discharge_roughness", "roughness of the discharge main"},
+        {"eye_of_nozzle", "impeller eye, part of the suction nozzle's bore"},
         {"gas_allowance", "allowance for gas in the water"},
         {"npshr_speed_exponent_down", "exponent of NPSHR, slower"},
         {"npshr_speed_exponent_up", "exponent of NPSHR, faster"},
-        {"salinity", "salinity"},
+        {"pipe_age", "age of a pipe, in years"},
+        {"salinity", "salt in the water"},
+        {"suction_energy_very_high",
+         "very high suction energy, over the start of high"},
         {"suction_loss", "loss of a suction that is not recorded"},
         {"suction_minor_k", "K of a suction's fittings together"},
         {"suction_roughness", "roughness of a suction pipe"},
+        {"suction_specific_speed",
+         "suction specific speed that NPSHR is estimated by"},
         {"water_temp_normal", "usual water temperature"},
         {"water_temp_summer", "warmest water of the year"},
         {"wet_pit_inlet_loss", "loss of a wet-pit pump's inlet"},
@@ -107,10 +113,10 @@ static void add_over(const struct sl_margin_rule *rule, double over,
     case SL_MEASURE_NONE:
         break;
     case SL_MEASURE_SUCTION_ENERGY:
-        sl_text_addf(text,
-                     "where suction energy is over %.2g times the start of "
-                     "high, ",
-                     over);
+        sl_text_add_string(text, "where suction energy is over ");
+        if (over != 1)
+            sl_text_addf(text, "%.2g times ", over);
+        sl_text_add_string(text, "the start of high, ");
         break;
     case SL_MEASURE_SUCTION_SPECIFIC_SPEED:
         sl_text_addf(text,

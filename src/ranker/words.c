@@ -178,12 +178,21 @@ static void say_takers(const struct telling *telling)
     }
 }
 
-/* "NPSHR 4.1 m at 95 L/s (rated flow)" */
+/* Where no curve has it; nothing where one does, or that was not kept. */
+static const char *need_basis(enum sl_npshr_basis basis)
+{
+    if (basis == SL_NPSHR_ESTIMATE)
+        return " (estimated)";
+    return basis == SL_NPSHR_RATED ? " (rated point)" : "";
+}
+
+/* "NPSHR 4.1 m (estimated) at 95 L/s (rated flow)" */
 static void say_need(const struct telling *telling)
 {
     if (isfinite(telling->told->npshr)) {
         say(telling, "NPSHR ");
         say_head(telling, telling->told->npshr);
+        say(telling, need_basis(telling->row->npshr_basis));
     } else {
         say(telling, "NPSHR unknown");
     }

@@ -120,6 +120,7 @@ static void read_station(struct sl_statement *row,
     station->pumps_by_state[SL_UNPROVEN] =
         (int)sl_read_whole(row, "pumps_unproven");
     station->pumps_by_state[SL_CLEAR] = (int)sl_read_whole(row, "pumps_clear");
+    station->any_beside = sl_read_whole(row, "any_beside") != 0;
     station->line = (long)sl_read_whole(row, "line");
 }
 

@@ -22,6 +22,8 @@ static void add_flags(const struct sl_pump_result *pump, struct sl_text *text)
         if (text->length)
             sl_text_add_string(text, "; ");
         sl_text_add_string(text, sl_check_name((enum sl_check_id)id));
+        if (pump->checks[id].trust == 'M')
+            sl_text_add_string(text, " (from memory)");
     }
 }
 
@@ -61,6 +63,12 @@ static void bind_limits(struct sl_statement *statement,
     }
 }
 
+/* Where no set has a figure at that end, none is the worst of them. */
+static const char *adverse_set(const struct sl_pump_result *pump)
+{
+    return isnan(pump->cases[SL_ADVERSE].surplus) ? NULL : pump->adverse_set;
+}
+
 void sl_bind_sets(struct sl_statement *statement,
                   const struct sl_pump_result *pump, struct sl_sets_room *room)
 {
@@ -68,12 +76,14 @@ void sl_bind_sets(struct sl_statement *statement,
 
     add_flags(pump, &room->flags);
     add_rule_states(pump, &room->rule_states);
+    sl_bind_text(statement, "npshr_basis",
+                 sl_npshr_basis_name(pump->npshr_basis));
     sl_bind_text(statement, "running_set", pump->governing.words);
     if (pump->governing.words)
         sl_bind_whole(statement, "running", pump->governing.running);
     sl_bind_whole(statement, "sets_tried", (long long)pump->sets_tried);
     sl_bind_whole(statement, "sets_all", pump->sets_all);
-    sl_bind_text(statement, "adverse_set", pump->adverse_set);
+    sl_bind_text(statement, "adverse_set", adverse_set(pump));
     bind_one_out(statement, &pump->one_out);
     sl_bind_text(
         statement, "curve_position",
@@ -104,6 +114,16 @@ static enum sl_curve_position position_named(const char *word)
     return (enum sl_curve_position)position;
 }
 
+static enum sl_npshr_basis basis_named(const char *word)
+{
+    int basis = SL_NPSHR_CURVE;
+
+    while (basis < SL_NPSHR_NONE &&
+           !sl_same(word, sl_npshr_basis_name((enum sl_npshr_basis)basis)))
+        basis++;
+    return (enum sl_npshr_basis)basis;
+}
+
 static struct sl_limit read_limit(struct sl_statement *row, int id)
 {
     const char *word = sl_read_text(row, limit_columns[id].end);
@@ -118,6 +138,7 @@ static struct sl_limit read_limit(struct sl_statement *row, int id)
 
 void sl_read_sets(struct sl_statement *row, struct sl_pump_row *pump)
 {
+    pump->npshr_basis = basis_named(sl_read_text(row, "npshr_basis"));
     pump->running_set = sl_read_text(row, "running_set");
     pump->running = (int)sl_read_whole(row, "running");
     pump->sets_tried = sl_read_whole(row, "sets_tried");

@@ -134,6 +134,24 @@ static enum sl_status read_counts(struct sl_store *store,
     return status;
 }
 
+static enum sl_status count_beside(struct sl_store *store,
+                                   struct sl_summary *summary,
+                                   struct sl_error *error)
+{
+    struct sl_statement *statement = NULL;
+    bool row = false;
+    enum sl_status status =
+        sl_statement_use_for(store, SL_QUERY_COUNT_BESIDE, "evaluation",
+                             summary->evaluation, &statement, error);
+
+    if (!status)
+        status = sl_statement_step(statement, &row, error);
+    if (status || !row)
+        return status;
+    summary->clear_beside = sl_read_whole(statement, "stations");
+    return sl_statement_end(statement, error);
+}
+
 enum sl_status sl_store_read_summary(struct sl_store *store,
                                      long long evaluation,
                                      struct sl_arena *arena,
@@ -157,6 +175,8 @@ enum sl_status sl_store_read_summary(struct sl_store *store,
         status = read_rules(store, arena, &read, error);
     if (!status)
         status = read_counts(store, &read, error);
+    if (!status)
+        status = count_beside(store, &read, error);
     if (!status)
         status = sl_store_read_files(store, read.vintage, read.sums, error);
     if (!status)

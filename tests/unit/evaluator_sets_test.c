@@ -783,6 +783,42 @@ static struct sl_interval wall_of(struct fixture *f,
         .value;
 }
 
+/* How the roughness of the first pipe's wall is told. */
+static const char *wall_rule(struct fixture *f, enum sl_friction_state friction,
+                             char trust, const char *source)
+{
+    struct sl_ageing rows[COUNT(ageing)];
+
+    memcpy(rows, ageing, sizeof ageing);
+    rows[0].trust = trust;
+    rows[0].source = source;
+    f->tables.ageing = rows;
+    return under(f, (struct sl_condition){.condition = "own",
+                                          .suction_friction = friction})
+        ->inputs[SL_IN_SUCTION_ROUGHNESS]
+        .rule;
+}
+
+static void a_wall_aged_from_memory_says_so(void **state)
+{
+    struct fixture *f = *state;
+    struct sl_pipe *pipe = &f->pipes[0].record;
+
+    forget(&pipe->roughness);
+    pipe->material = CAST_IRON;
+    pipe->year_installed = known(1983);
+    assert_non_null(strstr(wall_rule(f, SL_FRICTION_AGED, 'M', "recalled"),
+                           "rates of the table, from memory"));
+    assert_non_null(strstr(
+        wall_rule(f, SL_FRICTION_AGED, 'P', "a proposal; at worst from memory"),
+        "rates of the table, from memory"));
+    assert_non_null(strstr(wall_rule(f, SL_FRICTION_AGED, 'P', "so we say"),
+                           "rates of the table, a proposal"));
+    assert_null(strstr(wall_rule(f, SL_FRICTION_AGED, 'S', "read"), "rates"));
+    assert_null(
+        strstr(wall_rule(f, SL_FRICTION_NEW, 'M', "recalled"), "rates"));
+}
+
 static void an_aged_wall_is_rougher_by_its_years(void **state)
 {
     static const struct sl_default age = {"pipe_age", "", {30, 60, 10},
@@ -861,6 +897,7 @@ int main(void)
         TEST(a_condition_warms_the_water),
         TEST(water_below_freezing_is_told),
         TEST(an_aged_wall_is_rougher_by_its_years),
+        TEST(a_wall_aged_from_memory_says_so),
     };
 
     return cmocka_run_group_tests(tests, NULL, NULL);

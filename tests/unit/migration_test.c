@@ -151,7 +151,7 @@ static void results_of_an_older_program_have_no_sets(void **state)
     bring_up_to_date(f);
     assert_int_equal(
         file_says(f, "SELECT count(*) FROM pump_results WHERE recorded = 1 "
-                     "AND coalesce(running_set, running, sets_tried, sets_all,"
+                     "AND coalesce(npshr_basis, running_set, running, sets_tried, sets_all,"
                      "flags, rule_states, limit_level_end) IS NULL"),
         1);
     assert_int_equal(file_says(f, "SELECT count(*) FROM rule_verdicts"), 0);

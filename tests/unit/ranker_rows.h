@@ -145,7 +145,8 @@ static inline void fill_sets(struct sl_pump_row *row)
     row->one_out_surplus = -0.217;
     row->off_curve_set = "alone";
     row->curve_position = SL_PAST_END;
-    row->flags = "submergence; operating region";
+    row->npshr_basis = SL_NPSHR_RATED;
+    row->flags = "submergence; suction velocity (from memory)";
     row->rule_states = "TC-";
     row->limits[SL_LIMIT_LEVEL] = (struct sl_limit){SL_LIMIT_FOUND, 208.4375};
     row->limits[SL_LIMIT_TEMPERATURE] = (struct sl_limit){SL_LIMIT_NONE, NAN};
@@ -182,6 +183,41 @@ static const struct sl_rule_row sample_rules[] = {
      42},
 };
 
+static struct sl_ageing sample_ageing[] = {
+    {"uncoated <steel>",
+     SL_POOR,
+     {0.25e-3, 0.76e-3, 0.25e-3},
+     "attack, as one remembers it",
+     'M'},
+    {"smooth plastic", 0, {0, 0, 0}, "none", 'P'},
+};
+
+static struct sl_check_limit sample_limits[] = {
+    {"suction velocity", "", NAN, 2.4, SL_VELOCITY, "8 ft/s, recalled", 'M'},
+    {"straight run", "<long>", 5, NAN, SL_PURE, "read so", 'S'},
+};
+
+static struct sl_fitting_k sample_fittings[] = {
+    {"elbow", {0.3, 0.4, 0.2}, "handbook tables; ranges differ", 'S'},
+    {"clean <strainer>", {1, 4, 1}, "recalled", 'M'},
+};
+
+static struct sl_roughness sample_roughness[] = {
+    {"GRP", 3e-5, 6e-5, 9e-5, "printed tables", 'S'},
+};
+
+/* The published rows that the foot of a report lists. */
+static const struct sl_tables sample_tables = {
+    .ageing = sample_ageing,
+    .ageing_count = sizeof sample_ageing / sizeof sample_ageing[0],
+    .limits = sample_limits,
+    .limit_count = sizeof sample_limits / sizeof sample_limits[0],
+    .fittings = sample_fittings,
+    .fitting_count = sizeof sample_fittings / sizeof sample_fittings[0],
+    .roughness = sample_roughness,
+    .roughness_count = sizeof sample_roughness / sizeof sample_roughness[0],
+};
+
 static inline struct sl_summary summary_of(const struct sl_condition *condition)
 {
     static const char *const files[SL_KIND_COUNT] = {
@@ -198,6 +234,7 @@ static inline struct sl_summary summary_of(const struct sl_condition *condition)
         .stations_by_state = {2, 3, 4, 6},
         .pumps_by_state = {5, 7, 9, 24},
         .stations_without_pumps = 1,
+        .clear_beside = 4,
         .year = 2026,
         .rules = sample_rules,
         .rule_count = sizeof sample_rules / sizeof sample_rules[0],

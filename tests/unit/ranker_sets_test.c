@@ -83,9 +83,11 @@ static void test_rule_states_in_words(void **state)
 
     (void)state;
     sl_words_rule_states(&row, &summary, &text);
-    assert_string_equal(sl_text_string(&text),
-                        "fixed head: thin; a rule recalled (from memory): "
-                        "clear; the <b>board's</b>, own: does not apply");
+    assert_string_equal(
+        sl_text_string(&text),
+        "fixed head: thin; a rule recalled (from memory): "
+        "clear; the <b>board's</b>, own (the owner's own): does "
+        "not apply");
     sl_text_clear(&text);
     row.rule_states = "SU";
     sl_words_rule_states(&row, &summary, &text);
@@ -102,6 +104,69 @@ static void test_rule_states_in_words(void **state)
     sl_text_release(&text);
 }
 
+/* The rule ranked on, and those that find it clear, have no word there. */
+static void test_what_stands_beside_in_words(void **state)
+{
+    struct sl_summary summary = summary_of(NULL);
+    struct sl_pump_row row = pump_with_sets();
+    struct sl_text text = {0};
+
+    (void)state;
+    sl_words_beside(&row, &summary, &text);
+    assert_string_equal(sl_text_string(&text),
+                        "flags: submergence; suction velocity (from memory)");
+    sl_text_clear(&text);
+    row.rule_states = "CTS";
+    sl_words_beside(&row, &summary, &text);
+    assert_string_equal(sl_text_string(&text),
+                        "flags: submergence; suction velocity (from memory); "
+                        "by a rule recalled (from memory): thin; by the "
+                        "<b>board's</b>, own (the owner's own): short");
+    sl_text_clear(&text);
+    row.flags = "";
+    row.rule_states = "CTU";
+    sl_words_beside(&row, &summary, &text);
+    assert_string_equal(sl_text_string(&text),
+                        "by a rule recalled (from memory): thin");
+    sl_text_clear(&text);
+    row.rule_states = "TCU";
+    sl_words_beside(&row, &summary, &text);
+    assert_string_equal(sl_text_string(&text), "");
+    row.flags = NULL;
+    sl_words_beside(&row, &summary, &text);
+    assert_string_equal(sl_text_string(&text), "flags not kept");
+    sl_text_clear(&text);
+    row.pump_id = "";
+    sl_words_beside(&row, &summary, &text);
+    assert_string_equal(sl_text_string(&text), "");
+    sl_text_release(&text);
+}
+
+static void test_a_need_without_a_curve_says_so(void **state)
+{
+    static const struct {
+        enum sl_npshr_basis basis;
+        const char *want;
+    } cases[] = {
+        {SL_NPSHR_CURVE, "NPSHR 4.1 m at 95 L/s"},
+        {SL_NPSHR_RATED, "NPSHR 4.1 m (rated point) at 95 L/s"},
+        {SL_NPSHR_ESTIMATE, "NPSHR 4.1 m (estimated) at 95 L/s"},
+        {SL_NPSHR_NONE, "NPSHR 4.1 m at 95 L/s"},
+    };
+    struct sl_pump_row row = pump_with_sets();
+    struct sl_text text = {0};
+
+    (void)state;
+    for (size_t i = 0; i < sizeof cases / sizeof cases[0]; i++) {
+        row.npshr_basis = cases[i].basis;
+        sl_text_clear(&text);
+        sl_words_why(&row, SL_SI, &text);
+        if (!strstr(sl_text_string(&text), cases[i].want))
+            fail_msg("%s is not in: %s", cases[i].want, sl_text_string(&text));
+    }
+    sl_text_release(&text);
+}
+
 static void test_limits_in_words(void **state)
 {
     struct sl_pump_row row = {.source_basis = SL_SOURCE_PRESSURE_NORMAL};
@@ -115,9 +180,11 @@ static void test_limits_in_words(void **state)
     assert_string_equal(sl_words_limit(SL_LIMIT_FLOW, &row), "largest flow");
     assert_string_equal(sl_words_limit_end(SL_LIMIT_FOUND), "found");
     assert_string_equal(sl_words_limit_end(SL_LIMIT_NONE),
-                        "none within the range");
+                        "not met anywhere within the range");
     assert_string_equal(sl_words_limit_end(SL_LIMIT_ALWAYS),
                         "always within the range");
+    assert_string_equal(sl_words_limit_end(SL_LIMIT_FIGURES_END),
+                        "as far as there are figures");
     assert_string_equal(sl_words_limit_end(SL_LIMIT_UNKNOWN), "unknown");
 }
 
@@ -155,7 +222,8 @@ static void test_pumps_table_tells_the_sets(void **state)
 
     (void)state;
     assert_in(table, ",condition,running_set,flow_basis,source_basis,");
-    assert_in(table, ",running,sets_tried,sets_all,adverse_set,one_out_set,"
+    assert_in(table, ",npshr_basis,running,sets_tried,sets_all,adverse_set,one_"
+                     "out_set,"
                      "one_out_margin_m,one_out_surplus_m,curve_position,"
                      "off_curve_set,stands_set,flags,rule_states,"
                      "limit_lowest_level_m,limit_lowest_level_end,"
@@ -163,12 +231,13 @@ static void test_pumps_table_tells_the_sets(void **state)
                      "limit_largest_flow_l_s,limit_largest_flow_end,");
     assert_in(table, ",margin_rule,margin_rule_trust,year,");
     assert_in(table, ",summer low,\"with P-1, P-3\",rated,");
-    assert_in(table,
-              ",3,7,yes,\"with any 1 of P-1, P-3\",with P-3,1.283,-0.217,"
-              "past its end,alone,,submergence; operating region,"
-              "\"fixed head: thin; a rule recalled (from memory): clear; the "
-              "<b>board's</b>, own: does not apply\","
-              "208.438,found,,none within the range,123.45,found,");
+    assert_in(
+        table,
+        ",rated point,3,7,yes,\"with any 1 of P-1, P-3\",with P-3,1.283,-0.217,"
+        "past its end,alone,,submergence; suction velocity (from memory),"
+        "\"fixed head: thin; a rule recalled (from memory): clear; the "
+        "<b>board's</b>, own (the owner's own): does not apply\","
+        "208.438,found,,not met anywhere within the range,123.45,found,");
     assert_in(table, ",fixed head,\"common practice, no source\",2026,");
     free(table);
 }
@@ -182,7 +251,8 @@ static void test_pumps_table_in_us_units(void **state)
     assert_in(table, ",limit_lowest_level_ft,");
     assert_in(table, ",limit_largest_flow_gpm,");
     /* 208.4375 m and 123.45 L/s. */
-    assert_in(table, ",683.850,found,,none within the range,1956.72,found,");
+    assert_in(table, ",683.850,found,,not met anywhere within the "
+                     "range,1956.72,found,");
     free(table);
 }
 
@@ -221,11 +291,14 @@ static void test_a_figure_where_figures_end(void **state)
 
 /* --- the page ------------------------------------------------------------ */
 
-static char *page_of(const struct sl_pump_row *row, struct sl_summary *summary)
+static char *page_with(const struct sl_station_row *station,
+                       const struct sl_pump_row *row,
+                       struct sl_summary *summary)
 {
     struct sl_vocabularies vocabularies = sl_fixed_vocabularies();
     struct sl_report report = {.summary = summary,
-                               .vocabularies = &vocabularies};
+                               .vocabularies = &vocabularies,
+                               .tables = &sample_tables};
     char *bytes = NULL;
     size_t length = 0;
 
@@ -233,14 +306,122 @@ static char *page_of(const struct sl_pump_row *row, struct sl_summary *summary)
     assert_non_null(report.stream);
     sl_report_begin(&report);
     sl_report_begin_ranked(&report);
+    if (station)
+        sl_report_station(&report, station);
     sl_report_begin_unknowns(&report);
     sl_report_begin_terms(&report);
-    sl_report_pump(&report, row);
+    if (row)
+        sl_report_pump(&report, row);
     sl_report_begin_set_aside(&report);
     sl_report_begin_defaults(&report);
     sl_report_end(&report);
     assert_int_equal(fclose(report.stream), 0);
     return bytes;
+}
+
+static char *page_of(const struct sl_pump_row *row, struct sl_summary *summary)
+{
+    return page_with(NULL, row, summary);
+}
+
+/* A station clear by the rule ranked on, and what else is told of it. */
+static struct sl_station_row clear_station(double surplus)
+{
+    struct sl_station_row station = high_lift_station();
+
+    station.state = station.worst.state = station.worst.likely = SL_CLEAR;
+    fill_sets(&station.worst);
+    station.worst.rule_states = "CT-";
+    for (int corner = 0; corner < SL_CORNER_COUNT; corner++)
+        station.worst.cases[corner].surplus = surplus;
+    station.any_beside = true;
+    return station;
+}
+
+static void test_a_clear_station_tells_what_stands_beside(void **state)
+{
+    struct sl_summary summary = summary_of(NULL);
+    struct sl_station_row station = clear_station(0.299);
+    char *page = page_with(&station, NULL, &summary);
+
+    (void)state;
+    assert_in(page, "<b>Beside the margin</b> flags: submergence; suction "
+                    "velocity (from memory); by a rule recalled (from memory): "
+                    "thin</small>");
+    assert_in(page, "<small><b>by little</b></small>");
+    assert_in(page, "4 of them carry a flag, or are thin or short by another "
+                    "rule</a>");
+    free(page);
+    station = clear_station(0.301);
+    station.worst.flags = "";
+    station.worst.rule_states = "CC-";
+    summary.clear_beside = 1;
+    page = page_with(&station, NULL, &summary);
+    assert_null(strstr(page, "<b>by little</b></small>"));
+    assert_in(page, "<b>Beside the margin</b> nothing here, but in another "
+                    "case or on another pump of it");
+    assert_in(page, "1 of them carries a flag, or is thin or short by another");
+    free(page);
+    station.any_beside = false;
+    summary.clear_beside = 0;
+    page = page_with(&station, NULL, &summary);
+    assert_null(strstr(page, "Beside the margin"));
+    assert_null(strstr(page, "of them carr"));
+    free(page);
+}
+
+static void test_an_unproven_station_tells_it_too(void **state)
+{
+    struct sl_summary summary = summary_of(NULL);
+    struct sl_station_row station = clear_station(2.1);
+    char *page = NULL;
+
+    (void)state;
+    station.state = station.worst.state = SL_UNPROVEN;
+    page = page_with(&station, NULL, &summary);
+    assert_in(page, "<b>Beside the margin</b> flags: submergence;");
+    free(page);
+}
+
+static void test_the_published_rows_are_listed(void **state)
+{
+    struct sl_summary summary = summary_of(NULL);
+    char *page = page_of(NULL, &summary);
+
+    (void)state;
+    assert_in(page, "uncoated &lt;steel&gt;");
+    assert_in(page, "0.250&nbsp;mm <span class=\"range\">(0.760 … 0.250)");
+    assert_in(page, "attack, as one remembers it");
+    assert_in(page, "data-label=\"At most\"><div>2.40&nbsp;m/s</div>");
+    assert_in(page, "data-label=\"At least\"><div>none</div>");
+    assert_in(page, "8 ft/s, recalled</bdi></div></td><td role=\"cell\" "
+                    "class=\"case\" data-label=\"Trust\"><div>from memory, "
+                    "check the source</div>");
+    assert_in(page, "<b>K of fittings</b>, 2 rows; read in the named source: "
+                    "handbook tables; from memory, check the source: <bdi>"
+                    "clean &lt;strainer&gt;</bdi>.</p>");
+    assert_in(page, "<b>Roughness of walls as laid</b>, 1 row; read in the "
+                    "named source: printed tables.</p>");
+    free(page);
+}
+
+static void test_the_rule_ranked_on_is_named_once(void **state)
+{
+    struct sl_summary summary = summary_of(NULL);
+    char *page = NULL;
+
+    (void)state;
+    summary.rule.rule = "A standard-1998";
+    summary.rule.edition = "1998";
+    summary.rule.trust = 'M';
+    page = page_of(NULL, &summary);
+    assert_in(page, "<bdi>A standard-1998</bdi></b> (from memory, check the "
+                    "source): NPSHA at least");
+    free(page);
+    summary.rule.edition = "second";
+    page = page_of(NULL, &summary);
+    assert_in(page, "(from memory, check the source), <bdi>second</bdi>: ");
+    free(page);
 }
 
 static void test_a_balance_tells_what_stands_beside_it(void **state)
@@ -257,11 +438,13 @@ static void test_a_balance_tells_what_stands_beside_it(void **state)
                     "1.28&nbsp;m, over the rule \u22120.22&nbsp;m</dd>");
     assert_in(page, "<dt>Off its curve</dt> <dd><bdi>alone</bdi></dd>");
     assert_null(strstr(page, "Delivers nothing</dt>"));
-    assert_in(page, "<dt>Flags</dt> <dd>submergence; operating region</dd>");
+    assert_in(page, "<dt>Flags</dt> <dd>submergence; suction velocity (from "
+                    "memory)</dd>");
     assert_in(page, "thin</span> by fixed head; <span class=\"state clear\">");
     assert_in(page, "clear</span> by a rule recalled (from memory)</dd>");
-    assert_in(page, "lowest source level 208.44&nbsp;m; warmest water: none "
-                    "within the range; largest flow 123.5&nbsp;L/s</dd>");
+    assert_in(page,
+              "lowest source level 208.44&nbsp;m; warmest water: not met "
+              "anywhere within the range; largest flow 123.5&nbsp;L/s</dd>");
     free(page);
 }
 
@@ -321,6 +504,12 @@ int main(void)
         cmocka_unit_test(test_a_balance_tells_what_stands_beside_it),
         cmocka_unit_test(test_rules_stand_side_by_side),
         cmocka_unit_test(test_an_older_evaluation_says_so),
+        cmocka_unit_test(test_what_stands_beside_in_words),
+        cmocka_unit_test(test_a_need_without_a_curve_says_so),
+        cmocka_unit_test(test_a_clear_station_tells_what_stands_beside),
+        cmocka_unit_test(test_an_unproven_station_tells_it_too),
+        cmocka_unit_test(test_the_published_rows_are_listed),
+        cmocka_unit_test(test_the_rule_ranked_on_is_named_once),
     };
 
     return cmocka_run_group_tests_name("ranker sets", tests, NULL, NULL);

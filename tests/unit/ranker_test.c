@@ -450,7 +450,7 @@ static void test_rule_with_tiers_in_words(void **state)
     check_whole_rule(
         &rule, SL_SI,
         "NPSHA at least 1.10 × NPSHR, and at least NPSHR + 0.6 m; where "
-        "suction energy is over 1 times the start of high, 1.30 × NPSHR, and "
+        "suction energy is over the start of high, 1.30 × NPSHR, and "
         "at least NPSHR + 1.5 m; where suction energy is over 1.5 times the "
         "start of high, 2.00 × NPSHR, and at least NPSHR + 1.5 m");
     rule.measure = SL_MEASURE_SUCTION_SPECIFIC_SPEED;
@@ -729,15 +729,16 @@ static void test_ranked_stations_golden(void **state)
         "inputs_assumed,inputs_unknown,people_served,pumps,pumps_rejected,"
         "pumps_short,"
         "pumps_thin,pumps_unproven,pumps_clear,latitude,longitude,"
-        "stations_csv_line,vintage,inventory_sha256\r\n"
+        "stations_csv_line,margin_rule,margin_rule_trust,year,vintage,"
+        "inventory_sha256\r\n"
         "1,at risk,short,0107,Juniper Draw,raw water,dry pit,short,P-2,"
         "summer low,,rated,low-level cut-out,2.220,-0.720,-1.020,-0.420,3.360,"
         "4.080,5.580,95.30,,\"low-level cut-out puts the water 3.4 m below the "
         "eye; air at 1,830 m is worth only 8.3 m; suction losses take 1.2 m; "
         "NPSHR 4.1 m at 95 L/s (rated flow)\",confirm the eye's elevation and "
         "the lowest source level on site; then look into a higher low-level "
-        "cut-out,14,2,3,0,184200,3,0,2,0,0,1,41.203817,-104.824610,2,2026,"
-        "3f9a\r\n");
+        "cut-out,14,2,3,0,184200,3,0,2,0,0,1,41.203817,-104.824610,2,"
+        "fixed head,\"common practice, no source\",2026,2026,3f9a\r\n");
     free(capture.bytes);
 }
 
@@ -761,7 +762,8 @@ static void write_page(struct capture *capture,
     struct sl_vocabularies vocabularies = sl_fixed_vocabularies();
     struct sl_summary summary = summary_of(&summer_low);
     struct sl_report report = {.summary = &summary,
-                               .vocabularies = &vocabularies};
+                               .vocabularies = &vocabularies,
+                               .tables = &sample_tables};
     struct sl_set_aside_row aside = {"<f>.csv", 0, "", SL_REJECTED, "<r>"};
     struct sl_default_row standard = {
         {"<d>", "<c>", {1.5, 2.5, 0.5}, SL_LENGTH, "<source>", 'S'}, 1318};
@@ -925,8 +927,8 @@ static void test_a_page_tells_the_audit(void **state)
     assert_int_equal(occurrences(page, "3f9a1c07be52d8844f60aa1be7c35d9210c4e6"
                                        "f8a7b3d592e1f06c8d4b7a9350"),
                      2);
-    assert_non_null(strstr(page, "NPSHA at least NPSHR + 1.5 m (common "
-                                 "practice, no source)"));
+    assert_non_null(strstr(page, "(common practice, no source): NPSHA at "
+                                 "least NPSHR + 1.5 m; <a"));
     assert_non_null(strstr(page, "<b>2.2&nbsp;m</b>"));
     assert_non_null(strstr(page, ">2.5 … 1.9</small>"));
     assert_non_null(strstr(page, "184\u202F200"));

@@ -237,7 +237,8 @@ int main(int count, char **arguments)
     struct sl_vocabularies vocabularies = sl_fixed_vocabularies();
     struct sl_summary summary = summary_of(&summer_low);
     struct sl_report report = {.summary = &summary,
-                               .vocabularies = &vocabularies};
+                               .vocabularies = &vocabularies,
+                               .tables = &sample_tables};
 
     if (count < 2)
         return 2;

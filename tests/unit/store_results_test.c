@@ -377,10 +377,13 @@ static void fill_sets(struct fixture *f, struct sl_pump_result *result)
     result->off_curve_set = (struct sl_set_case){
         .words = "alone", .running = 1, .position = SL_PAST_END};
     result->adverse_set = "with P-3";
+    result->cases[SL_ADVERSE].surplus = -0.4;
+    result->npshr_basis = SL_NPSHR_ESTIMATE;
     result->stands_set = "with P-2";
     result->sets_tried = 6;
     result->sets_all = true;
-    result->checks[SL_CHECK_SUBMERGENCE].end = SL_CHECK_BEYOND;
+    result->checks[SL_CHECK_SUBMERGENCE] =
+        (struct sl_check){.end = SL_CHECK_BEYOND, .trust = 'M'};
     result->checks[SL_CHECK_SUCTION_LIFT].end = SL_CHECK_UNKNOWN;
     result->checks[SL_CHECK_STRAIGHT_RUN].end = SL_CHECK_WITHIN;
     result->checks[SL_CHECK_TWO_CROSSINGS].end = SL_CHECK_BEYOND;
@@ -412,6 +415,7 @@ static enum sl_status tell_sets(void *context, const struct sl_pump_row *row,
                  sl_curve_position_name(row->curve_position),
                  row->off_curve_set, row->stands_set, row->two_crossings,
                  row->flags, row->rule_states);
+    sl_text_addf(text, "|%s", sl_npshr_basis_name(row->npshr_basis));
     for (int i = 0; i < SL_LIMIT_COUNT; i++)
         sl_text_addf(text, "|%s %.2f", sl_limit_end_name(row->limits[i].end),
                      row->limits[i].value);
@@ -433,12 +437,63 @@ static void the_sets_come_back_whole(void **state)
                                &f->error));
     assert_string_equal(
         sl_text_string(&text),
-        "|0|0|0|||nan|nan|on the curve|||0|||"
+        "|0|0|0|||nan|nan|on the curve|||0|||curve|"
         "unknown nan|unknown nan|unknown nan\n"
         "with P-2, P-3|3|6|1|with P-3|with any 1 of P-2, P-3|1.31|-0.19|"
-        "past its end|alone|with P-2|1|submergence; two crossings|STUC-T|"
+        "past its end|alone|with P-2|1|submergence (from memory); two "
+        "crossings|STUC-T|estimate|"
         "found 1204.37|none nan|figures end 0.07\n");
     sl_text_release(&text);
+}
+
+static void no_adverse_figure_has_no_adverse_set(void **state)
+{
+    struct fixture *f = *state;
+    struct evaluated e = begin(f);
+    struct sl_text text = {NULL, 0, 0};
+    struct made made;
+
+    make(&e, &made, "A", 12, 1);
+    fill_sets(f, &made.results[1][0]);
+    made.results[1][0].cases[SL_ADVERSE].surplus = NAN;
+    file(&e, &made);
+    must(f, sl_store_each_pump(f->store, e.evaluation, tell_sets, &text,
+                               &f->error));
+    assert_non_null(
+        strstr(sl_text_string(&text), "|6|1||with any 1 of P-2, P-3|"));
+    sl_text_release(&text);
+}
+
+/* Of three clear stations one has nothing beside its margin, one a flag, and
+ * one is thin by a rule that is not the one ranked on. */
+static void clear_stations_with_something_beside_are_counted(void **state)
+{
+    struct fixture *f = *state;
+    struct evaluated e = begin(f);
+    struct sl_summary summary = {.version = "0.1"};
+    struct seen seen = {.rows = 0};
+    static const char *const ids[] = {"A", "B", "C", "D"};
+    struct made made[4];
+
+    for (int i = 0; i < 4; i++) {
+        make(&e, &made[i], ids[i], 12 + i, 2);
+        made[i].result.state = SL_CLEAR;
+    }
+    made[1].results[0][1].checks[SL_CHECK_STRAIGHT_RUN].end = SL_CHECK_BEYOND;
+    fill_sets(f, &made[2].results[1][0]);
+    made[2].results[1][0].checks[SL_CHECK_SUBMERGENCE].end = SL_CHECK_WITHIN;
+    made[2].results[1][0].checks[SL_CHECK_TWO_CROSSINGS].end = SL_CHECK_WITHIN;
+    made[3].result.state = SL_UNPROVEN;
+    made[3].results[0][0].checks[SL_CHECK_STRAIGHT_RUN].end = SL_CHECK_BEYOND;
+    for (int i = 0; i < 4; i++)
+        file(&e, &made[i]);
+    must(f, sl_store_read_summary(f->store, e.evaluation, &f->arena, &summary,
+                                  &f->error));
+    assert_int_equal(summary.clear_beside, 2);
+    must(f, sl_store_each_station(f->store, e.evaluation, see_station, &seen,
+                                  &f->error));
+    assert_true(seen.station.any_beside); /* the last: unproven */
+    sl_text_release(&seen.texts);
 }
 
 static void rules_are_told_and_their_pumps_counted(void **state)
@@ -580,7 +635,8 @@ static void what_settles_is_found_out_first(void **state)
     make(&e, &b, "B", 20, 1);
     b.results[1][0].likely = SL_THIN;
     doubt(&b.results[1][0], SL_IN_SUCTION_LENGTH, SL_ASSUMED, 0.4, false);
-    doubt(&b.results[1][0], SL_IN_SUCTION_BORE, SL_ASSUMED, 0.4, false);
+    /* Equal but for its last bits, which order nothing. */
+    doubt(&b.results[1][0], SL_IN_SUCTION_BORE, SL_ASSUMED, 0.4 + 1e-12, false);
     file(&e, &b);
     make(&e, &c, "C", NAN, 1);
     c.results[1][0].likely = SL_SHORT;
@@ -832,6 +888,8 @@ int main(void)
         IN_VINTAGE(a_station_without_a_pump_is_unproven),
         IN_VINTAGE(a_result_comes_back_whole),
         IN_VINTAGE(the_sets_come_back_whole),
+        IN_VINTAGE(no_adverse_figure_has_no_adverse_set),
+        IN_VINTAGE(clear_stations_with_something_beside_are_counted),
         IN_VINTAGE(rules_are_told_and_their_pumps_counted),
         IN_VINTAGE(counts_of_rules_are_rolled_back_too),
         IN_VINTAGE(an_unknown_site_has_no_altitude),
