@@ -3,7 +3,7 @@
  * A plan holds each input as an interval with its provenance; the pumps of a
  * station are solved together with each input at one of its ends
  * (evaluator/joint.h).  The parts of a plan are filled by source.c, levels.c,
- * suction.c, delivery.c and machine.c. */
+ * suction.c, walls.c, delivery.c and machine.c. */
 #ifndef SL_EVALUATOR_PLAN_H
 #define SL_EVALUATOR_PLAN_H
 
@@ -87,6 +87,10 @@ struct sl_interval sl_plan_roughness(const struct sl_plan *plan, int material,
                                      const struct sl_number *year_laid,
                                      double bore, enum sl_friction_state state,
                                      bool *assumed);
+/* The row a wall of that material is aged by; NULL where nothing ages it. */
+const struct sl_ageing *sl_plan_growth(const struct sl_plan *plan, int material,
+                                       int condition,
+                                       enum sl_friction_state state);
 /* An exactly known value. */
 struct sl_interval sl_exactly(double value);
 /* No honest figure at any end. */

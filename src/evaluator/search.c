@@ -154,8 +154,8 @@ static double between(struct sl_search *search, const struct sl_ends *ends,
     return attempt(search, ends, layout->flows, joint);
 }
 
-/* Whether a little way in from its further end a function that bends one way
- * is no further: then it is nowhere. */
+/* Whether a little way in from its further end a function is no further, and
+ * half way neither: one that bends one way then is nowhere. */
 static bool furthest_at_end(struct sl_search *search,
                             const struct sl_ends *ends, double worst,
                             double best, struct sl_joint *joint)
@@ -165,7 +165,11 @@ static bool furthest_at_end(struct sl_search *search,
     double near_end =
         between(search, ends, at_best ? 1 - NEAR_END : NEAR_END, joint);
 
-    return sign * near_end <= sign * (at_best ? best : worst);
+    if (sign * near_end > sign * (at_best ? best : worst))
+        return false;
+    /* Should it bend more than once, the middle tells most of the rest. */
+    return sign * between(search, ends, 0.5, joint) <=
+           sign * (at_best ? best : worst);
 }
 
 /* The furthest of a function that bends one way. */
