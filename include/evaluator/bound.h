@@ -30,4 +30,8 @@ struct sl_bound_case {
  * surplus is the least (the most) over all that was tried. */
 void sl_bound(const struct sl_bound_case *of, struct sl_outcome *outcome);
 
+/* Whether what lies between the ends of the pump's own unknowns has to be
+ * searched: a hundred cases and more, in place of a few. */
+bool sl_bound_searches(const struct sl_bound_case *of);
+
 #endif

@@ -11,6 +11,9 @@ struct sl_tried {
     struct sl_outcome outcome;
 };
 
+/* In as many sets of a class, what lies between the ends of unknowns is
+ * searched, where it has to be; beyond, there is no adverse figure. */
+#define SL_SEARCHED_SETS 64
 /* As many sets are solved anew for the limits: those of least surplus. */
 #define SL_LEAST_SETS 64
 
@@ -32,6 +35,7 @@ struct sl_tally {
     bool runs;                  /* in some set it delivers */
     size_t sets;                /* it was in */
     bool all;                   /* every set that the controls allow */
+    bool unsearched;            /* more than SL_SEARCHED_SETS to search */
     /* Over all sets, typical. */
     double least_flow, most_flow, most_velocity, least_pressure;
     bool two_crossings;

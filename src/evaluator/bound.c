@@ -164,19 +164,37 @@ static void over_blends(struct sl_search *search, const struct sl_ends *ends,
                    discharge_steps ? 4 : 2, joint);
 }
 
+static bool searches_suction(const struct sl_bound_case *of)
+{
+    const struct sl_class *class = &of->layout->classes[of->class];
+
+    return !class->given &&
+           !(class->plan->npshr_rises && class->plan->head_is_steep) &&
+           suction_open(class->plan);
+}
+
+static bool searches_discharge(const struct sl_bound_case *of)
+{
+    const struct sl_class *class = &of->layout->classes[of->class];
+
+    return !class->given && !class->plan->npshr_rises &&
+           discharge_open(class->plan);
+}
+
+bool sl_bound_searches(const struct sl_bound_case *of)
+{
+    return searches_suction(of) || searches_discharge(of);
+}
+
 /* All but the temperature. */
 static void at_temperature(struct sl_search *search, double kelvin,
                            struct sl_joint *joint)
 {
     const struct sl_bound_case *of = search->of;
     const struct sl_plan *plan = of->layout->classes[of->class].plan;
-    bool blend = of->sense != SL_TYPICAL && isnan(search->imposed) &&
-                 !of->layout->classes[of->class].given;
-    bool turns = !plan->npshr_rises;
-    int suction = blend && (turns || !plan->head_is_steep) && suction_open(plan)
-                      ? GRID
-                      : 0;
-    int discharge = blend && turns && discharge_open(plan) ? GRID : 0;
+    bool blend = of->sense != SL_TYPICAL && isnan(search->imposed);
+    int suction = blend && searches_suction(of) ? GRID : 0;
+    int discharge = blend && searches_discharge(of) ? GRID : 0;
 
     search->liquid = sl_liquid_at(plan->salinity, kelvin);
     if (suction || discharge)

@@ -3,11 +3,19 @@
 #include <math.h>
 #include <string.h>
 
-/* Without an adverse end alone, it has none in any set. */
-static bool no_adverse(const struct sl_tally *tally)
+/* Without an adverse end in some set, for the margin and every rule, it has
+ * none. */
+static bool no_adverse(const struct sl_governing *all,
+                       const struct sl_tally *tally)
 {
-    return tally->adverse.counts && tally->adverse.running == 1 &&
-           isnan(tally->adverse.outcome.figures.surplus);
+    size_t rules = all->layout->plans[0].tables->rule_count;
+
+    if (!tally->adverse.counts || !isnan(tally->adverse.outcome.margin))
+        return false;
+    for (size_t i = 0; i < rules; i++)
+        if (!isnan(tally->adverse.outcome.surplus[i]))
+            return false;
+    return true;
 }
 
 /* A set in which what some other pump draws has no bound. */
@@ -95,16 +103,21 @@ static void note_adverse(const struct sl_governing *all, size_t class,
     struct sl_outcome outcome;
     bool sharing, unsure;
 
-    if (no_adverse(tally))
+    if (no_adverse(all, tally))
         return;
     unsure = beside_unsure(all, class, &sharing);
     /* It only lessens the flow: the set without it is tried. */
     if (unsure && !sharing && self->plan->npshr_rises)
         return;
-    sl_bound(&of, &outcome);
+    tally->unsearched =
+        tally->sets > SL_SEARCHED_SETS && sl_bound_searches(&of);
+    if (tally->unsearched)
+        sl_joint_outcome(typical, class, &outcome);
+    else
+        sl_bound(&of, &outcome);
     if (stands && outcome.stands)
         return;
-    if (unsure ||
+    if (tally->unsearched || unsure ||
         (all->layout->neighbour_unknown && self->plan->path_count > 0))
         leave_unbounded(&outcome);
     at_recorded_flow(all, class, &outcome);

@@ -120,6 +120,9 @@ static void reason_unproven(const struct sl_judging *judging,
     else if (unbounded)
         sl_text_addf(text, "%s: %s", sl_input_words(unbounded->id),
                      unbounded->rule);
+    else if (judging->tally->unsearched)
+        sl_text_add_string(text, "its station has too many running sets to "
+                                 "search its unknowns between their ends");
     else if (judging->tally->adverse.counts && adverse->position != SL_ON_CURVE)
         sl_text_addf(text, "at the adverse end of what is assumed it %s",
                      curve_end(adverse->position));
