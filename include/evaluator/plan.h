@@ -87,6 +87,9 @@ struct sl_interval sl_plan_roughness(const struct sl_plan *plan, int material,
                                      const struct sl_number *year_laid,
                                      double bore, enum sl_friction_state state,
                                      bool *assumed);
+/* How far the rates can be trusted that age the pipes of the path: the least
+ * trusted's mark, or 0 where none is aged. */
+char sl_plan_ageing_trust(const struct sl_plan *plan);
 /* An exactly known value. */
 struct sl_interval sl_exactly(double value);
 /* No honest figure at any end. */
