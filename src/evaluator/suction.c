@@ -1,11 +1,9 @@
 /* The suction side of a plan: the pipes from the source to the pump, their
  * surfaces and fittings, or the inlet of a pump that stands in its water. */
 #include <math.h>
-#include <string.h>
 
 #include "base/text.h"
 #include "evaluator/plan.h"
-#include "hydraulics/friction.h"
 #include "hydraulics/minor_loss.h"
 
 static size_t path_length(const struct sl_dossier_pipe *pipe)
