@@ -209,12 +209,11 @@ static enum sl_status write_one(struct sl_run *run, const char *folder,
                                  .units = run->options->units,
                                  .summary = summary,
                                  .vocabularies = &run->tables.vocabularies};
-    lists.report =
-        (struct sl_report){.stream = output->stream,
-                           .units = run->options->units,
-                           .summary = summary,
-                           .vocabularies = &run->tables.vocabularies,
-                           .tables = &run->tables};
+    lists.report = (struct sl_report){.stream = output->stream,
+                                      .units = run->options->units,
+                                      .summary = summary,
+                                      .vocabularies = &run->tables.vocabularies,
+                                      .tables = &run->tables};
     status = outputs[which].write(run, &lists, error);
     /* What cannot be written out fails here, before any file is replaced. */
     if (!status && (fflush(output->stream) != 0 || ferror(output->stream)))
