@@ -35,7 +35,9 @@ struct sl_tally {
     bool runs;                  /* in some set it delivers */
     size_t sets;                /* it was in */
     bool all;                   /* every set that the controls allow */
-    bool unsearched;            /* more than SL_SEARCHED_SETS to search */
+    /* Sets it is in, where they are more than SL_SEARCHED_SETS and each would
+     * have to be searched; else 0. */
+    size_t unsearched;
     /* Over all sets, typical. */
     double least_flow, most_flow, most_velocity, least_pressure;
     bool two_crossings;

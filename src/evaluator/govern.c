@@ -3,19 +3,11 @@
 #include <math.h>
 #include <string.h>
 
-/* Without an adverse end in some set, for the margin and every rule, it has
- * none. */
-static bool no_adverse(const struct sl_governing *all,
-                       const struct sl_tally *tally)
+/* Without an adverse end alone, it has none in any set. */
+static bool no_adverse(const struct sl_tally *tally)
 {
-    size_t rules = all->layout->plans[0].tables->rule_count;
-
-    if (!tally->adverse.counts || !isnan(tally->adverse.outcome.margin))
-        return false;
-    for (size_t i = 0; i < rules; i++)
-        if (!isnan(tally->adverse.outcome.surplus[i]))
-            return false;
-    return true;
+    return tally->adverse.counts && tally->adverse.running == 1 &&
+           isnan(tally->adverse.outcome.figures.surplus);
 }
 
 /* A set in which what some other pump draws has no bound. */
@@ -103,14 +95,12 @@ static void note_adverse(const struct sl_governing *all, size_t class,
     struct sl_outcome outcome;
     bool sharing, unsure;
 
-    if (no_adverse(all, tally))
+    if (no_adverse(tally))
         return;
     unsure = beside_unsure(all, class, &sharing);
     /* It only lessens the flow: the set without it is tried. */
     if (unsure && !sharing && self->plan->npshr_rises)
         return;
-    tally->unsearched =
-        tally->sets > SL_SEARCHED_SETS && sl_bound_searches(&of);
     if (tally->unsearched)
         sl_joint_outcome(typical, class, &outcome);
     else
@@ -289,6 +279,13 @@ static void begin(struct sl_sets *sets, const struct sl_layout *layout,
     sl_sets_begin(sets, layout, flows, arena);
 }
 
+static bool searches(const struct sl_layout *layout, size_t class)
+{
+    struct sl_bound_case of = {.layout = layout, .class = class};
+
+    return sl_bound_searches(&of);
+}
+
 void sl_govern(const struct sl_layout *layout, bool list_sets,
                struct sl_arena *arena, struct sl_tally *tallies)
 {
@@ -306,6 +303,13 @@ void sl_govern(const struct sl_layout *layout, bool list_sets,
                               .least_pressure = NAN,
                               .least = sl_arena_new(arena, SL_LEAST_SETS,
                                                     sizeof(struct sl_least))};
+    begin(&sets, layout, arena);
+    while (sl_sets_next(&sets))
+        for (size_t c = 0; c < layout->class_count; c++)
+            tallies[c].unsearched += sets.counts[c] > 0;
+    for (size_t c = 0; c < layout->class_count; c++)
+        if (!searches(layout, c) || tallies[c].unsearched <= SL_SEARCHED_SETS)
+            tallies[c].unsearched = 0;
     begin(&sets, layout, arena);
     while (sl_sets_next(&sets))
         try_set(&all);
