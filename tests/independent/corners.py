@@ -1,6 +1,7 @@
 """The typical, adverse and favourable figures of a pump over its sets."""
 from scipy.optimize import minimize_scalar
 
+from alike import set_form
 from inventory import Unbounded
 from limits import limits
 from rules import judge, state
@@ -10,8 +11,11 @@ from values import Station
 
 FIGURES = ("flow", "npsha", "npshr", "required", "margin", "surplus")
 NOTHING = dict.fromkeys(FIGURES + TERMS)
-SETS_FOR_LIMITS = 64  # beyond, they take too long here
 PARTS = [i / 8 for i in range(9)]
+A_LITTLE = 0.002  # of the way between the flows of others
+A_LITTLE_WARMER = 0.02  # K
+EQUAL = 1e-9  # m, between sets
+STOOD = None  # in place of figures
 
 
 class StationCase:
@@ -22,19 +26,29 @@ class StationCase:
         self.station, self.rule = station, rule
         self.typical_sets = {}
         self.ratio = station.published.largest_ratio()
-        self.sets_tried = 0
+        self.worth = "surplus"  # what the searches are made for
+        self.kept = {}
+        self.standings = set()  # of the cases of a corner
+        self.found = {}
 
     # -- one solved case
 
-    def figures(self, pump, pumps, at, corner, imposed=None):
-        """The pump's figures in a set; None where it stands in it."""
-        try:
-            solved = RunningSet(self.station, pumps, pump, at, imposed)
-        except Unbounded:
-            solved = None
-        if solved is None:
-            return self.unsolved(pump, pumps, at, corner)
-        return self.of_solved(solved, pump, at, corner)
+    def figures(self, pump, pumps, at, corner, imposed=None, beside=()):
+        """The pump's figures in a set; STOOD where it stands in it."""
+        key = (pump.key, frozenset(one.key for one in pumps), at, corner,
+               self.station.shift, len(beside),
+               imposed and tuple(sorted(imposed.items())))
+        if key not in self.kept:
+            try:
+                solved = RunningSet(self.station, pumps, pump, at, imposed,
+                                    beside)
+            except Unbounded:
+                solved = None
+            self.kept[key] = (
+                self.unsolved(pump, beside or pumps, at, corner) if solved is None
+                else self.of_solved(solved, pump, at, corner, imposed))
+        self.standings.add(self.kept[key] is STOOD)
+        return self.kept[key]
 
     def unsolved(self, pump, pumps, at, corner):
         """No flow, but what does not rest on it."""
@@ -42,12 +56,12 @@ class StationCase:
             RunningSet(self.station, pumps, pump, at,
                        {one.key: None for one in pumps}), pump, at, corner)
 
-    def of_solved(self, solved, pump, at, corner):
+    def of_solved(self, solved, pump, at, corner, imposed=None):
         flow = solved.flows[pump.key]
-        if flow == 0 and pump.solved:
-            return None
+        if flow == 0 and pump.solved and pump.key not in (imposed or {}):
+            return STOOD
         found = dict(solved.terms(), flow=flow, kelvin=at.kelvin,
-                     flows=solved.flows, past=solved.past == pump.key)
+                     flows=solved.flows, past=solved.past is not None)
         terms = [found[name] for name in TERMS]
         found["npsha"] = None if None in terms else sum(terms)
         found["npshr"] = (None if flow is None
@@ -74,14 +88,21 @@ class StationCase:
 
     def flow_alone(self, pump):
         found = self.typical(pump, (pump,))
-        return None if found is None else found["flow"]
+        return None if found is STOOD else found["flow"]
 
     # -- the corners of a set
 
-    def temperatures(self):
-        """Coldest, typical, warmest; None where one has no figure."""
-        return [known(self.station.temperature, corner)
-                for corner in ("favourable", "typical", "adverse")]
+    def decide(self, found, corner):
+        """The worst (best) of the cases in which the pump runs; the first
+        one without a figure, where there is one."""
+        found = [one for one in found if one is not STOOD]
+        for one in found:
+            if one[self.worth] is None:
+                return one
+        if not found:
+            return STOOD
+        choose = min if corner == "adverse" else max
+        return choose(found, key=lambda one: one[self.worth])
 
     def imposed(self, pump, pumps, a, b, part):
         """The others' flows part of the way from those of one case to those
@@ -101,203 +122,273 @@ class StationCase:
 
     def others_tried(self, pump, pumps, at, corner):
         """The worst (best) over the others' suctions."""
-        worse = min if corner == "adverse" else max
         if len(pumps) == 1:
-            imposed = None
-            if corner == "adverse":
-                return [self.lone_adverse(pump, pumps, at)]
             return [self.figures(pump, pumps, at, corner)]
         there = tuple(one for one in pumps if one is pump
                       or self.has_adverse_suction(one, pump, pumps))
-        ends = [self.figures(pump, there, at._replace(others="adverse"),
-                             corner),
-                self.figures(pump, pumps, at._replace(others="favourable"),
-                             corner)]
-        if any(end is None or end["surplus"] is None for end in ends):
+        falls, shared = pump.npshr_falls(), any(
+            one.pipe_keys & pump.pipe_keys for one in pumps[1:])
+        all_there = len(there) == len(pumps)
+        least = at._replace(others="adverse")
+        most = at._replace(others="favourable")
+        if corner == "adverse":
+            from_nought = not all_there and (
+                falls or not pump.ends_hold(self.ratio))
+            if not from_nought and (not all_there or not (falls or shared)):
+                return [self.figures(pump, there, least, corner, None, pumps)]
+        elif not falls and not shared:
+            return [self.figures(pump, pumps, most, corner)]
+        ends = [self.figures(pump, there, least, corner, None, pumps),
+                self.figures(pump, pumps, most, corner)]
+        if any(end is STOOD or end[self.worth] is None for end in ends):
             return ends
+        return self.flows_between(pump, pumps, most, corner, ends, all_there)
+
+    def flows_between(self, pump, pumps, at, corner, ends, all_there):
         a, b = ends[0]["flows"], ends[1]["flows"]
         if all((a.get(one.key) or 0.0) == b[one.key] for one in pumps):
             return ends
 
         def part_way(part):
-            return self.figures(
-                pump, pumps, at._replace(others="favourable"), corner,
-                self.imposed(pump, pumps, a, b, part))
-        half = part_way(0.5)
-        if corner == "adverse":
-            if half is None or half["surplus"] is None:
-                return ends + [half]
-            if half["surplus"] >= min(end["surplus"] for end in ends):
+            return self.figures(pump, pumps, at, corner,
+                                self.imposed(pump, pumps, a, b, part))
+
+        def better(found, than):
+            sign = 1 if corner == "adverse" else -1
+            return found is STOOD or found[self.worth] is None or (
+                sign * found[self.worth] < sign * than[self.worth])
+        first = self.decide(ends, corner)
+        probe = 0.5 if corner == "adverse" else (
+            A_LITTLE if first is ends[0] else 1 - A_LITTLE)
+        if all_there or corner == "adverse":
+            if not better(part_way(probe), first):
                 return ends
         found = [part_way(part) for part in PARTS[1:-1]]
-        return ends + found + [closest(part_way, ends[:1] + found + ends[1:],
-                                       worse)]
+        return ends + found + [self.closest(
+            part_way, ends[:1] + found + ends[1:], corner)]
 
-    def lone_adverse(self, pump, pumps, at):
-        """It runs at no less than its largest recorded flow."""
-        found = self.figures(pump, pumps, at, "adverse")
+    def at_temperature(self, pump, pumps, at, corner):
+        found = self.decide(self.others_tried(pump, pumps, at, corner),
+                            corner)
         recorded = pump.record.get("largest_recorded_flow")
-        if found is None or recorded is None or not pump.solved or (
-                found["flow"] is None or found["flow"] >= recorded):
-            return found
-        return self.figures(pump, pumps, at, "adverse",
-                            {pump.key: recorded})
+        if corner == "adverse" and len(pumps) == 1 and pump.solved and (
+                recorded is not None and at.own == "adverse"
+                and at.discharge == "adverse" and (
+                    found is STOOD or (found["flow"] or recorded) < recorded)):
+            return self.decide([found, self.figures(
+                pump, pumps, at, corner, {pump.key: recorded})], corner)
+        return found
 
     def temperatures_tried(self, pump, pumps, at, corner):
         def one(kelvin):
-            return decide(self.others_tried(
-                pump, pumps, at._replace(kelvin=kelvin), corner), corner)
-        kelvins = self.temperatures()
+            return self.at_temperature(pump, pumps,
+                                       at._replace(kelvin=kelvin), corner)
+        kelvins = [known(self.station.temperature, end)
+                   for end in ("favourable", "typical", "adverse")]
         if None in kelvins:
             return [NOTHING]
-        found = [one(kelvin) for kelvin in sorted(set(kelvins))]
-        cold, _, warm = kelvins
-        if corner == "adverse" or warm <= cold:
+        cold, typical, warm = kelvins
+        if corner == "adverse":
+            ends = [warm] if warm == cold else [warm, cold]
+            found = [one(kelvin) for kelvin in ends]
+            if len(pumps) == 1 and "largest_recorded_flow" in pump.record:
+                recorded = self.recorded_typical(pump, pumps, at, typical)
+                found += recorded
             return found
-        first = found[0]
-        if first is None or first["surplus"] is None:
-            return found
-        above = one(cold + 0.01)
-        if above is None or above["surplus"] is None or (
-                above["surplus"] <= first["surplus"]):
+        first = one(cold)
+        if warm <= cold:
+            return [first]
+        found = [first, one(cold + A_LITTLE_WARMER), one(typical)]
+        if first is STOOD or any(other is STOOD or other[self.worth] is None
+                                 for other in found) or (
+                max(other[self.worth] for other in found[1:])
+                <= first[self.worth]):
             return found
 
         def part_way(part):
             return one(cold + (warm - cold) * part)
-        found += [part_way(part) for part in PARTS]
-        return found + [closest(part_way, found[-9:], max)]
+        grid = [part_way(part) for part in PARTS]
+        return found + grid + [self.closest(part_way, grid, corner)]
+
+    def recorded_typical(self, pump, pumps, at, kelvin):
+        """At the typical temperature only the recorded flow is tried."""
+        at = at._replace(kelvin=kelvin)
+        recorded = pump.record["largest_recorded_flow"]
+        if not pump.solved or (at.own, at.discharge) != ("adverse",
+                                                         "adverse"):
+            return []
+        found = self.figures(pump, pumps, at, "adverse")
+        if found is not STOOD and (found["flow"] or recorded) >= recorded:
+            return []
+        return [self.figures(pump, pumps, at, "adverse",
+                             {pump.key: recorded})]
 
     def corner(self, pump, pumps, corner):
-        """A corner of one set: NOTHING where it has none, None where the
-        pump stands in it."""
+        """A corner of one set: STOOD where the pump stands in all cases."""
         at = setting(corner, 0.0)
+        self.standings = set()
 
         def suction(at):
             def part_way(part):
-                return decide(self.temperatures_tried(
+                return self.decide(self.temperatures_tried(
                     pump, pumps, at._replace(source=part, own=part), corner),
                     corner)
             if not pump.solved or pump.ends_hold(self.ratio):
-                return decide(self.temperatures_tried(pump, pumps, at,
-                                                      corner), corner)
-            return searched(part_way, corner)
+                return self.decide(self.temperatures_tried(
+                    pump, pumps, at, corner), corner)
+            return self.searched(part_way, at.own, corner)
         if not pump.solved or not pump.npshr_falls():
-            return suction(at)
-        return searched(lambda part: suction(at._replace(discharge=part)),
-                        corner)
+            found = suction(at)
+        else:
+            found = self.searched(
+                lambda part: suction(at._replace(discharge=part)), corner,
+                corner)
+        if self.standings == {True, False}:
+            return self.decide([found] + self.least_flow_tried(
+                pump, pumps, at, corner), corner)
+        return found
+
+    def least_flow_tried(self, pump, pumps, at, corner):
+        """Between standing and running it passes the least flow."""
+        found = []
+        for end in ("favourable", "adverse"):
+            kelvin = known(self.station.temperature, end)
+            for others in ("favourable", "adverse"):
+                found.append(self.figures(
+                    pump, pumps, at._replace(kelvin=kelvin, others=others),
+                    corner, {pump.key: pump.least_flow()}))
+        return [one for one in found if one[self.worth] is not None]
 
     def adverse(self, pump, pumps):
         """False where the set does not count."""
         for one in pumps[1:]:
-            if not one.solved:
-                if one.pipe_keys & pump.pipe_keys:
+            if one.unsure():
+                if one.pipe_keys & pump.pipe_keys or pump.npshr_falls():
                     return NOTHING
                 return False
         return self.corner(pump, pumps, "adverse")
 
+    def favourable(self, pump, governing):
+        """Of the governing set, of the pump alone, or the better."""
+        alone = (pump,)
+        if not ("pumps_running_max" in self.station.record and pump.solved
+                and not any(one.unsure() for one in governing[1:])):
+            governing = alone
+        found = [self.corner(pump, governing, "favourable")]
+        if len(governing) > 1 and self.may_stand(pump, governing):
+            found.append(self.corner(pump, alone, "favourable"))
+        return self.decide(found, "favourable")
+
+    def may_stand(self, pump, pumps):
+        at = setting("favourable", self.station.temperature("typical"))
+        found = self.figures(pump, pumps, at._replace(
+            source="adverse", own="adverse"), "favourable")
+        return found is STOOD or found["flow"] is None
+
+    # -- searches
+
+    def closest(self, part_way, grid, corner):
+        """The best of a function of a part, near the best of its nine
+        steps."""
+        worth = [None if one is STOOD else one[self.worth] for one in grid]
+        if None in worth:
+            return next((one for one in grid if one is not STOOD
+                         and one[self.worth] is None), STOOD)
+        sign = 1 if corner == "adverse" else -1
+        i = worth.index((min if corner == "adverse" else max)(worth))
+
+        def objective(part):
+            found = part_way(part)
+            if found is STOOD or found[self.worth] is None:
+                return float("inf")
+            return sign * found[self.worth]
+        result = minimize_scalar(
+            objective, bounds=(PARTS[max(i - 1, 0)], PARTS[min(i + 1, 8)]),
+            method="bounded", options={"xatol": 1e-7})
+        found = part_way(result.x)
+        return found and dict(found, searched=True)
+
+    def searched(self, part_way, end, corner):
+        """All of the way between the ends."""
+        try:
+            # The ends by their names, at which the recorded flow is tried.
+            grid = [part_way(part) for part in PARTS]
+            grid[0 if corner == "adverse" else 8] = part_way(corner)
+        except Unbounded:
+            return NOTHING
+        bare = [one for one in grid if one is not STOOD]
+        if len(bare) < 9 or any(one[self.worth] is None for one in bare):
+            return self.decide(bare, corner)
+        return self.decide(grid + [self.closest(part_way, grid, corner)],
+                           corner)
+
     # -- all sets
+
+    def governs(self, typical):
+        """The pair of set and figures that is the typical corner."""
+        for name in ("surplus", "npsha"):
+            known_ones = [pair for pair in typical
+                          if pair[1] is not STOOD
+                          and pair[1][name] is not None]
+            if known_ones:
+                least = min(found[name] for _, found in known_ones)
+                return min((pair for pair in known_ones
+                            if pair[1][name] <= least + EQUAL),
+                           key=lambda pair: (len(pair[0]),
+                                             pair[1]["flow"] or 0.0))
+        return next((pair for pair in typical if pair[1] is not STOOD), None)
+
+    def corners(self, pump, sets, governing):
+        """Worst and best; the margin is of a search of its own."""
+        out = []
+        for self.worth in ("margin", "surplus"):
+            adverse = [found for found in (self.adverse(pump, one)
+                                           for one in sets)
+                       if found is not False]
+            out.append((self.decide(adverse, "adverse") or NOTHING,
+                        self.favourable(pump, governing) or NOTHING))
+        return tuple(dict(by_surplus, margin=by_margin["margin"])
+                     for by_margin, by_surplus in zip(*out))
 
     def pump(self, pump):
         """What is printed of a pump, over all its sets."""
         sets = running_sets(self.station, pump, self.flow_alone)
-        self.sets_tried += len(sets)
         typical = [(one, self.typical(pump, one)) for one in sets]
-        runs = [(one, found) for one, found in typical if found is not None]
-        off_curve = any(found.get("past") or (
+        runs = [found for _, found in typical if found is not STOOD]
+        off_curve = any(found["past"] or (
             found["flow"] is not None and pump.off_curve(found["flow"]))
-                        for _, found in runs)
-        judged = [pair for pair in runs if pair[1]["surplus"] is not None]
-        governing, figures = (
-            min(judged, key=lambda pair: pair[1]["surplus"]) if judged
-            else runs[0] if runs
-            else (sets[0], self.unsolved(pump, sets[0], setting(
-                "typical", self.station.temperature("typical")), "typical")))
-        may_go = (limits(self, pump, governing)
-                  if self.with_limits and len(sets) <= SETS_FOR_LIMITS
-                  else None)
-        names = [one.key for one in governing]
+                        for found in runs)
+        governing, figures = self.governs(typical) or (
+            sets[0], self.unsolved(pump, sets[0], setting(
+                "typical", self.station.temperature("typical")), "typical"))
         most = self.station.most_running()
-        out = [found["surplus"] for one, found in judged
-               if len(one) == most - 1]
-        adverse = [found for found in (self.adverse(pump, one)
-                                       for one in sets)
-                   if found is not False]
-        worst = decide(adverse, "adverse") or NOTHING
-        if not ("pumps_running_max" in self.station.record
-                and all(one.solved for one in governing)):
-            governing = (pump,)
-        best = self.corner(pump, governing, "favourable") or NOTHING
+        out = [found["surplus"] for one, found in typical
+               if found is not STOOD and found["surplus"] is not None
+               and len(one) == most - 1]
+        worst, best = self.corners(pump, sets, governing)
+        may_go = (limits(self, pump, governing, typical)
+                  if self.with_limits else None)
         proven, likely = state(
             figures, worst, best, off_curve or not every_set(self.station))
+        self.kept.clear()
         return {
             "typical": figures, "adverse": worst, "favourable": best,
             "state": proven, "likely": likely, "off_curve": off_curve,
             "stands": not runs, "flow_basis": pump.basis(),
-            "governing": names,
+            "governing": [one.key for one in governing],
             "one_out": min(out, default=None), "sets_tried": len(sets),
             "limits": may_go,
-            "cases": len(sets) + (not pump.ends_hold(self.ratio))
-            + pump.npshr_falls(),
         }
 
-
-def decide(found, corner):
-    """The worst (best) of the cases in which the pump runs; what one of
-    them has no figure for, it has none for."""
-    found = [one for one in found if one is not None]
-    if not found:
-        return None
-    choose = min if corner == "adverse" else max
-    for name in ("surplus", "npsha"):
-        if all(one[name] is not None for one in found):
-            chosen = choose(found, key=lambda one: one[name])
-            break
-    else:
-        name = "npshr"
-        if any(one[name] is None for one in found):
-            chosen = found[0]
-        else:
-            chosen = (max if corner == "adverse" else min)(
-                found, key=lambda one: one[name])
-    return {name: value if not isinstance(value, float)
-            or all(one.get(name) is not None for one in found) else None
-            for name, value in chosen.items()}
-
-
-def closest(part_way, grid, choose):
-    """The best of a function of a part, near the best of its nine steps."""
-    sign = 1 if choose is min else -1
-    worth = [None if one is None else one["surplus"] for one in grid]
-    if any(value is None for value in worth):
-        return next((one for one in grid
-                     if one is not None and one["surplus"] is None), None)
-    i = worth.index(choose(worth))
-
-    def objective(part):
-        found = part_way(part)
-        if found is None or found["surplus"] is None:
-            return float("inf")
-        return sign * found["surplus"]
-    result = minimize_scalar(
-        objective, bounds=(PARTS[max(i - 1, 0)], PARTS[min(i + 1, 8)]),
-        method="bounded", options={"xatol": 1e-7})
-    found = part_way(result.x)
-    return found and dict(found, searched=True)
-
-
-def searched(part_way, corner):
-    """All of the way between the ends."""
-    choose = min if corner == "adverse" else max
-    try:
-        grid = [part_way(part) for part in PARTS]
-    except Unbounded:
-        return NOTHING
-    bare = [one for one in grid if one is not None]
-    if any(one["surplus"] is None for one in bare):
-        return decide(bare, corner)
-    if len(bare) < len(grid):
-        return decide(bare, corner)
-    return decide(grid + [closest(part_way, grid, choose)], corner)
+    def of_every_pump(self):
+        """Once for those that are alike."""
+        out = {}
+        for pump in self.station.pumps:
+            form = set_form(self.station, self.station.pumps, pump)
+            if form not in self.found:
+                self.found[form] = self.pump(pump)
+            out[pump.key] = self.found[form]
+        return out
 
 
 def recompute(inventory, published, station_key, condition, rule, year,
@@ -305,7 +396,6 @@ def recompute(inventory, published, station_key, condition, rule, year,
     """Every pump of the station, by key."""
     station = Station(inventory, published, station_key, condition, year)
     case = StationCase(station, published.rules[rule], with_limits)
-    return {pump.key: dict(
-        case.pump(pump), altitude=known(station.altitude, "typical"),
-        temperature=station.temperature("typical"))
-        for pump in station.pumps}
+    return {key: dict(found, altitude=known(station.altitude, "typical"),
+                      temperature=station.temperature("typical"))
+            for key, found in case.of_every_pump().items()}

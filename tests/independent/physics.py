@@ -99,6 +99,7 @@ class Curve:
         shape = PchipInterpolator(self.x, self.y)
         self.pieces = [tuple(float(c) for c in shape.c[:, k])
                        for k in range(len(self.x) - 1)]
+        self.falls = all(b < a for a, b in zip(self.y, self.y[1:]))
 
     def holds(self, flow):
         return self.x[0] <= flow <= self.x[-1]

@@ -16,7 +16,9 @@ Exit status: 0 all figures agree; 1 some do not, or fewer than three stations
 could be compared; 2 usage.
 """
 import collections
+import concurrent.futures
 import csv
+import functools
 import os
 import sqlite3
 import sys
@@ -55,22 +57,6 @@ PRINTED = collections.OrderedDict(
        for head in ("npsha", "npshr", "margin", "surplus")])
 
 
-def undecided(found):
-    """Figures of which the documents do not say from which case they are: of
-    a corner that has no surplus, where there were several cases.  They are
-    compared, and a difference is counted, but is none of ours."""
-    out = {"%s_%s" % (name, corner) for corner in CORNERS
-           for name in SEARCHED if name != "margin"
-           and found[corner]["surplus"] is None and found["cases"] > 1}
-    return out | set(TERMS if "flow_typical" in out else ())
-
-
-def differ(ours, theirs, tolerance):
-    if ours is None or theirs is None:
-        return ours is not theirs
-    return not abs(ours - theirs) <= tolerance
-
-
 def tolerance_of(name, found, tolerance):
     head, _, corner = name.partition("_")
     if corner in CORNERS and found[corner].get("searched"):
@@ -107,14 +93,15 @@ def printed_figures(stored):
 # Columns that a store may have beside.
 BESIDE = {"one_out_surplus": HEAD_TOLERANCE, "limit_level": 1e-6,
           "limit_temperature": 1e-5, "limit_flow": 1e-8}
-BESIDE_WORDS = ("running", "limit_level_end",
+BESIDE_WORDS = ("running", "sets_tried", "limit_level_end",
                 "limit_temperature_end", "limit_flow_end")
 
 
 def beside(found):
     """By the columns of pump_results."""
     out = {"one_out_surplus": found["one_out"],
-           "running": len(found["governing"])}
+           "running": len(found["governing"]),
+           "sets_tried": found["sets_tried"]}
     for name, (end, value) in (found["limits"] or {}).items():
         out["limit_" + name] = value
         out["limit_%s_end" % name] = end
@@ -128,7 +115,6 @@ class Comparison:
         self.bad = []
         self.pumps, self.stations = set(), set()
         self.joint = self.sets = 0
-        self.undecided = collections.Counter()
 
     def column(self, where, name, ours, theirs, tolerance):
         if (ours is None) != (theirs is None):
@@ -155,18 +141,11 @@ class Comparison:
                     where, name, row[name], words[name]))
             self.compared[name] += 1
         stored = stored_figures(found)
-        out = undecided(found)
         for name, tolerance in STORED.items():
-            if name in out:
-                self.undecided[differ(stored[name], result[name],
-                                      tolerance)] += 1
-            else:
-                self.column(where, name, stored[name], result[name],
-                            tolerance_of(name, found, tolerance))
+            self.column(where, name, stored[name], result[name],
+                        tolerance_of(name, found, tolerance))
         printed = printed_figures(stored)
         for name, tolerance in PRINTED.items():
-            if name[:-2] in out:
-                continue
             text = row[name]
             self.column(where, "pumps.csv " + name, printed[name],
                         None if text == "" else float(text), tolerance)
@@ -205,9 +184,6 @@ class Comparison:
               "under a condition." % (len(self.stations), len(self.pumps),
                                       self.sets))
         print("Governed by a set of several pumps: %d of them." % self.joint)
-        print("Of corners without a surplus, whose case is not documented: "
-              "%d figures agree, %d differ." % (self.undecided[False],
-                                                self.undecided[True]))
         if missing:
             self.bad.append("not in the output: " + " ".join(missing))
         for line in self.bad:
@@ -247,6 +223,10 @@ def sheet(rows, results, compute, station):
         print()
 
 
+def of_station(inventory, published, rule, year, with_limits, key):
+    return recompute(inventory, published, *key, rule, year, with_limits)
+
+
 def main(arguments):
     if len(arguments) not in (2, 4) or (
             len(arguments) == 4 and arguments[2] != "--sheet"):
@@ -260,14 +240,15 @@ def main(arguments):
               encoding="utf-8") as file:
         rows = list(csv.DictReader(file))
     with_limits = any("limit_level" in row.keys() for row in results.values())
-    cache = {}
+    keys = sorted({(row["station_id"], row["condition"]) for row in rows
+                   if arguments[3:] in ([], [row["station_id"]])})
+    with concurrent.futures.ProcessPoolExecutor() as pool:
+        solved = dict(zip(keys, pool.map(functools.partial(
+            of_station, inventory, published, rule, year, with_limits),
+            keys, chunksize=4)))
 
     def compute(station, condition):
-        key = station, condition
-        if key not in cache:
-            cache[key] = recompute(inventory, published, station, condition,
-                                   rule, year, with_limits)
-        return cache[key]
+        return solved[station, condition]
     if len(arguments) == 4:
         sheet(rows, results, compute, arguments[3])
         return 0

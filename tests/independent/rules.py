@@ -1,17 +1,18 @@
 """Margin rules (F22) and the verdict of a pump."""
 from inventory import Unbounded
-from physics import water_at
+
+
+# What a limit of the lift holds, with NPSHR.
+LIFTS = ("elevation", "gauge", "velocity", "friction", "minor")
 
 
 def measure(rule, pump, found, corner):
     """What the rule's tier is chosen by; None: not known."""
-    station = pump.station
     try:
         if rule.measure == "suction specific speed":
             return pump.specific_speed()
         if rule.measure == "suction energy":
-            water = water_at(found["kelvin"], station.salinity())
-            return pump.suction_energy(water.rho)
+            return pump.suction_energy()
         return lift(pump, found)
     except Unbounded:
         return None
@@ -58,9 +59,9 @@ def judge(rule, pump, found, corner):
         if need is not None:
             found["surplus"] = npsha - need
             if rule.lift_limit is not None and pump.make_up == rule.make_up:
-                found["surplus"] = min(
-                    found["surplus"], rule.lift_limit - npshr
-                    - lift(pump, found) + found["friction"] + found["minor"])
+                found["surplus"] = min(found["surplus"], rule.lift_limit
+                                       - npshr + sum(found[name]
+                                                     for name in LIFTS))
                 found["required"] = npsha - found["surplus"]
     return found
 

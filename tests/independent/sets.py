@@ -1,10 +1,10 @@
 """One running set: all its flows at once, and one pump's head balance."""
 import collections
-import itertools
 
 import numpy
 from scipy.optimize import root
 
+from alike import unlike_sets
 from inventory import Unbounded
 from physics import (darcy, hazen_williams, operating_flow, standard_air,
                      velocity_head, water_at)
@@ -29,24 +29,26 @@ def every_set(station):
 
 
 def running_sets(station, pump, flow_alone):
-    """Every set of 1 to m pumps that holds this one."""
-    others = [one for one in station.pumps if one is not pump]
+    """Every set of 1 to m pumps that holds this one, the smaller first."""
     most = station.most_running()
-    if not every_set(station):
-        others.sort(key=lambda one: -(flow_alone(one) or 0.0))
-        return [(pump, *others[:count]) for count in range(most)]
-    return [(pump, *some) for count in range(most)
-            for some in itertools.combinations(others, count)]
+    if every_set(station):
+        return unlike_sets(station, pump, most)
+    others = sorted((one for one in station.pumps if one is not pump),
+                    key=lambda one: -(flow_alone(one) or 0.0))
+    counts = {count for count in range(LARGEST_SET_ALL_TRIED)
+              if count < most} | {most - 1}
+    return [(pump, *others[:count]) for count in sorted(counts)]
 
 
 class RunningSet:
     """The set at a setting; `own` is the pump it is looked at for, whose way
-    from the source has the corner `own`."""
+    from the source has the corner `own`; `beside` are those of the set of
+    which this may be a part."""
 
-    def __init__(self, station, pumps, own, at, imposed=None):
+    def __init__(self, station, pumps, own, at, imposed=None, beside=()):
         self.station, self.own, self.at = station, own, at
         self.water = water_at(at.kelvin, station.salinity())
-        self.pumps = pumps
+        self.pumps, self.beside = pumps, beside or pumps
         self.static = None
         self.ways = {}
         imposed = imposed or {}
@@ -84,7 +86,7 @@ class RunningSet:
     def way(self, pump):
         if pump.key not in self.ways:
             self.ways[pump.key] = pump.ways(self.corner_of(pump),
-                                            self.pumps)
+                                            self.beside)
         return self.ways[pump.key]
 
     def through(self, pipe_key):
@@ -111,8 +113,16 @@ class RunningSet:
             return 0.0
         first = pump.path[-1]
         if "bore" not in first:
-            raise Unbounded
+            return 0.0
         return velocity_head(self.through(first["pipe_id"]), first["bore"])
+
+    def velocity_known(self, pump):
+        """0 is no favourable figure."""
+        if self.station.source_kind()[0] == "main" and (
+                not pump.path or "bore" not in pump.path[-1]) and not (
+                    self.corner_of(pump)(None) in ("typical", "adverse")):
+            raise Unbounded
+        return self.velocity(pump)
 
     # -- flows
 
@@ -148,9 +158,13 @@ class RunningSet:
         for pump in free:
             self.way(pump)
             self.flows[pump.key] = 0.0
+        near = station.near.get(frozenset(pump.key for pump in self.pumps))
+        falls = all(pump.head.falls for pump in free)
         if len(free) == 1:
             self.alone(free[0])
-        else:
+        elif not (falls and near and self.nearby(free, near)):
+            for pump in free:
+                self.flows[pump.key] = 0.0
             for _ in range(60):
                 if self.sweeps(free, 4) or self.together(free):
                     break
@@ -161,6 +175,15 @@ class RunningSet:
                 self.past = pump.key
                 self.flows.update((one.key, None) for one in free)
                 return
+        station.near[frozenset(pump.key for pump in self.pumps)] = dict(
+            self.flows)
+
+    def nearby(self, free, near):
+        """From the last solution of these pumps; there is but one where all
+        curves fall."""
+        for pump in free:
+            self.flows[pump.key] = near.get(pump.key) or 0.0
+        return self.together(free)
 
     def sweeps(self, free, count):
         for _ in range(count):
@@ -214,7 +237,7 @@ class RunningSet:
             known(lambda: -head(station.barometer_fall(at.air))),
             known(lambda: head(station.pressure(at.source))),
             known(lambda: station.surface(at.source) - own.datum(at.air)),
-            known(self.velocity, own),
+            known(self.velocity_known, own),
             None if losses[0] is None else -losses[0],
             None if losses[1] is None else -losses[1],
             -head(self.water.vapour),

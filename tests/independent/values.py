@@ -32,6 +32,7 @@ class Station:
         self.condition = published.conditions[condition]
         self.service = words(self.record.get("service", ""))
         self.installation = words(self.record.get("installation", ""))
+        self.pipe_forms, self.near = {}, {}
         self.pumps = [Pump(self, pump) for pump in inventory.of_station(key)]
 
     def default(self, field, corner, circumstance=""):
@@ -274,6 +275,8 @@ class Pump:
         self.head = self.curve("head", lambda ratio: 2)
         self.npshr = self.curve("npshr", self.exponent)
         self.solved = self.head is not None and station.discharge_known()
+        self.form, self.kept_ways = None, {}
+        self.kept_flags = {}
 
     # -- speed
 
@@ -371,7 +374,30 @@ class Pump:
             return True
         return datum is None or surface < datum
 
+    def default_k(self, end):
+        """Where the pipe is the last of several pumps, one K for all."""
+        own = self.path[0]["pipe_id"]
+        sums = [self.station.default(
+            "suction_minor_k", end, "suction lift" if pump.lift() else "")
+                for pump in self.station.pumps
+                if pump.path and pump.path[0]["pipe_id"] == own]
+        return min(sums) if end == "favourable" else max(sums)
+
     def ways(self, corner, beside=()):
+        """Worked out once for the same ends."""
+        short = self.without_adverse_suction(beside)
+        key = (short, corner(None),
+               *(corner(pipe["pipe_id"]) for pipe in self.path))
+        if key not in self.kept_ways:
+            try:
+                self.kept_ways[key] = self.parts(corner, short)
+            except Unbounded:
+                self.kept_ways[key] = None
+        if self.kept_ways[key] is None:
+            raise Unbounded
+        return self.kept_ways[key]
+
+    def parts(self, corner, short):
         """The parts of its suction: a list of (pipe key, length, bore,
         roughness, C, K), constant friction, constant minor loss, and the
         bell's (bore, K).  `corner` is a function of a pipe key (None for
@@ -404,16 +430,14 @@ class Pump:
                 continue
             k = between(lambda e: station.pipe_k(pipe, e), end)
             if not recorded and pipe is self.path[0]:
-                k += between(lambda e: station.default(
-                    "suction_minor_k", e,
-                    "suction lift" if self.lift() else ""), end)
+                k += between(self.default_k, end)
             length = pipe.get("length", 0.0)
             rough = station.pipe_roughness(pipe, "typical")
             if rough is not None and length > 0:
                 rough = between(lambda e: station.pipe_roughness(pipe, e), end)
             parts.append((pipe["pipe_id"], length, pipe["bore"], rough,
                           float(pipe.get("hazen_williams_c", 0)), k))
-        if self.without_adverse_suction(beside) and not (
+        if short and not (
                 corner(None) in ("typical", "favourable")):
             raise Unbounded
         return parts, friction, 0.0, None
@@ -456,12 +480,22 @@ class Pump:
 
     def ends_hold(self, ratio):
         """Whether -H' >= r NPSHR' all over the NPSHR curve."""
+        if ratio not in self.kept_flags:
+            self.kept_flags[ratio] = self.falls_as_fast(ratio)
+        return self.kept_flags[ratio]
+
+    def falls_as_fast(self, ratio):
         if self.npshr is None or self.head is None:
             return True
         return all(-self.head.slope(q) >= ratio * self.npshr.slope(q)
                    for q in self.npshr_flows())
 
     def npshr_falls(self):
+        if "falls" not in self.kept_flags:
+            self.kept_flags["falls"] = self.falls_anywhere()
+        return self.kept_flags["falls"]
+
+    def falls_anywhere(self):
         return self.npshr is not None and any(
             self.npshr.slope(q) < 0 for q in self.npshr_flows())
 
@@ -469,6 +503,19 @@ class Pump:
         x = self.npshr.x
         return [a + (b - a) * i / 8 for a, b in zip(x, x[1:])
                 for i in range(9)]
+
+    def least_flow(self):
+        """At which it has figures."""
+        return max(curve.x[0] for curve in (self.head, self.npshr)
+                   if curve is not None)
+
+    def unsure(self):
+        """Whether what it draws is, beside another."""
+        rejected = (self.record.get("curve_id")
+                    in self.station.inventory.short_curves)
+        return not self.solved or rejected or not (
+            "rated_speed" in self.record
+            or any("speed" in point for point in self.points))
 
     # -- what decides a rule's tier
 
@@ -495,8 +542,8 @@ class Pump:
         return (51.645 * speed * (best / self.one_eye()) ** 0.5
                 / npshr ** 0.75)
 
-    def suction_energy(self, density):
-        """F15, over the start of high for its make-up."""
+    def suction_energy(self):
+        """F15 in fresh water, over the start of high for its make-up."""
         eye = self.record.get("eye_diameter")
         if eye is None:
             bore = self.record.get("suction_nozzle_bore")
@@ -509,4 +556,4 @@ class Pump:
         if high is None:
             raise Unbounded
         return (eye / 0.0254 * self.speeds()[0] * self.specific_speed()
-                * density / 1000 / high)
+                / high)
