@@ -141,7 +141,7 @@ class StationCase:
         ends = [self.figures(pump, there, least, corner, None, pumps),
                 self.figures(pump, pumps, most, corner)]
         if any(end is STOOD or end[self.worth] is None for end in ends):
-            return ends
+            return ends if corner == "adverse" else ends[::-1]
         return self.flows_between(pump, pumps, most, corner, ends, all_there)
 
     def flows_between(self, pump, pumps, at, corner, ends, all_there):
@@ -276,14 +276,14 @@ class StationCase:
             governing = alone
         found = [self.corner(pump, governing, "favourable")]
         if len(governing) > 1 and self.may_stand(pump, governing):
-            found.append(self.corner(pump, alone, "favourable"))
+            found.insert(0, self.corner(pump, alone, "favourable"))
         return self.decide(found, "favourable")
 
     def may_stand(self, pump, pumps):
         at = setting("favourable", self.station.temperature("typical"))
         found = self.figures(pump, pumps, at._replace(
             source="adverse", own="adverse"), "favourable")
-        return found is STOOD or found["flow"] is None
+        return found is STOOD or found["surplus"] is None
 
     # -- searches
 
@@ -318,7 +318,8 @@ class StationCase:
             return NOTHING
         bare = [one for one in grid if one is not STOOD]
         if len(bare) < 9 or any(one[self.worth] is None for one in bare):
-            return self.decide(bare, corner)
+            return self.decide(
+                bare if corner == "adverse" else bare[::-1], corner)
         return self.decide(grid + [self.closest(part_way, grid, corner)],
                            corner)
 
@@ -347,7 +348,7 @@ class StationCase:
                        if found is not False]
             out.append((self.decide(adverse, "adverse") or NOTHING,
                         self.favourable(pump, governing) or NOTHING))
-        return tuple(dict(by_surplus, margin=by_margin["margin"])
+        return tuple(dict(by_surplus, own_margin=by_margin["margin"])
                      for by_margin, by_surplus in zip(*out))
 
     def pump(self, pump):

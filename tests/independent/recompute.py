@@ -3,6 +3,7 @@
 
     recompute.py INVENTORY OUTPUT_DIR
     recompute.py INVENTORY OUTPUT_DIR --sheet STATION
+    recompute.py INVENTORY OUTPUT_DIR --every N     only each Nth station
 
 A second implementation of docs/formulas.md and docs/inventory.md: running
 sets, flows, head balances, corners, margin rules and states.  It shares no
@@ -164,7 +165,7 @@ class Comparison:
         self.sets += found["sets_tried"]
         self.joint += len(found["governing"]) > 1
 
-    def report(self, inventory):
+    def report(self, wanted):
         print("%-28s %9s %12s %12s" % ("figure", "compared", "tolerance",
                                        "largest"))
         for name in WORDS:
@@ -179,7 +180,7 @@ class Comparison:
                 print("%-28s %9d %12s" % (name, self.compared[name], (
                     "%.1e %12.1e" % (BESIDE[name], self.largest[name][0]))
                     if name in BESIDE else "equal"))
-        missing = sorted(set(inventory.pumps) - self.pumps)
+        missing = sorted(wanted - self.pumps)
         print("\n%d stations, %d pumps; %d running sets looked at for a pump "
               "under a condition." % (len(self.stations), len(self.pumps),
                                       self.sets))
@@ -229,7 +230,8 @@ def of_station(inventory, published, rule, year, with_limits, key):
 
 def main(arguments):
     if len(arguments) not in (2, 4) or (
-            len(arguments) == 4 and arguments[2] != "--sheet"):
+            len(arguments) == 4
+            and arguments[2] not in ("--sheet", "--every")):
         print(__doc__, file=sys.stderr)
         return 2
     store = os.path.join(arguments[1], "summerlow.db")
@@ -239,9 +241,14 @@ def main(arguments):
     with open(os.path.join(arguments[1], "pumps.csv"), newline="",
               encoding="utf-8") as file:
         rows = list(csv.DictReader(file))
+    stations = sorted(inventory.stations)
+    if arguments[2:3] == ["--every"]:
+        stations = stations[::int(arguments[3])]
+    elif arguments[2:3] == ["--sheet"]:
+        stations = [arguments[3]]
+    rows = [row for row in rows if row["station_id"] in stations]
     with_limits = any("limit_level" in row.keys() for row in results.values())
-    keys = sorted({(row["station_id"], row["condition"]) for row in rows
-                   if arguments[3:] in ([], [row["station_id"]])})
+    keys = sorted({(row["station_id"], row["condition"]) for row in rows})
     with concurrent.futures.ProcessPoolExecutor() as pool:
         solved = dict(zip(keys, pool.map(functools.partial(
             of_station, inventory, published, rule, year, with_limits),
@@ -249,7 +256,7 @@ def main(arguments):
 
     def compute(station, condition):
         return solved[station, condition]
-    if len(arguments) == 4:
+    if arguments[2:3] == ["--sheet"]:
         sheet(rows, results, compute, arguments[3])
         return 0
     print("iapws %s, fluids %s, scipy %s; rule %s, year %d\n" % (
@@ -258,7 +265,8 @@ def main(arguments):
     for row in rows:
         found = compute(row["station_id"], row["condition"])[row["pump_id"]]
         comparison.row(row, results[row["pump_id"], row["condition"]], found)
-    comparison.report(inventory)
+    comparison.report({key for key, pump in inventory.pumps.items()
+                       if pump["station_id"] in stations})
     if len(comparison.stations) < 3:
         print("Fewer than 3 stations: nothing is shown by this.")
         return 1

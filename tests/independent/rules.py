@@ -69,7 +69,7 @@ def judge(rule, pump, found, corner):
 def state(typical, adverse, favourable, not_clear):
     """What is proven, and what is likely."""
     surplus = favourable["surplus"]
-    if surplus is not None and favourable["margin"] < 0:
+    if surplus is not None and favourable["own_margin"] < 0:
         proven = "short"
     elif surplus is not None and surplus < 0:
         proven = "thin"
@@ -81,7 +81,7 @@ def state(typical, adverse, favourable, not_clear):
     if proven in ("short", "thin"):
         return proven, proven
     if typical["surplus"] is None:
-        return proven, "unproven"
+        return proven, proven  # clear by the strictest tier
     if typical["margin"] < 0:
         return proven, "short"
     return proven, "thin" if typical["surplus"] < 0 else "clear"
