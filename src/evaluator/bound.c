@@ -168,8 +168,7 @@ static bool searches_suction(const struct sl_bound_case *of)
 {
     const struct sl_class *class = &of->layout->classes[of->class];
 
-    return !class->given &&
-           !(class->plan->npshr_rises && class->plan->head_is_steep) &&
+    return !class->given && !class->plan->head_is_steep &&
            suction_open(class->plan);
 }
 

@@ -229,10 +229,15 @@ void sl_search_others(struct sl_search *search, const struct sl_ends *ends,
         return;
     }
     if (self->npshr_rises && !shares(of)) {
-        /* The less they draw, the further out this one runs. */
+        /* The less they draw, the further out this one runs: at worst they
+         * draw nothing. */
+        for (size_t c = 0; c < layout->class_count; c++)
+            layout->flows[c] = 0;
         at.others =
             of->sense == SL_ADVERSE && bounded ? SL_ADVERSE : SL_FAVOURABLE;
-        attempt(search, &at, NULL, joint);
+        attempt(search, &at,
+                of->sense == SL_ADVERSE && !bounded ? layout->flows : NULL,
+                joint);
         return;
     }
     at.others = SL_FAVOURABLE;

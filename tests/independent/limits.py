@@ -45,14 +45,14 @@ def farthest(surplus, now, better, worse):
         if met(value) != met(first):
             return between(surplus, before, (here, value))
         before = here, value
-    return ("unknown" if first is None else "none"), None
+    return "unknown", None
 
 
 def between(surplus, one, other):
     """Halved until both sides have figures, or until they are one."""
     while one[1] is None or other[1] is None:
         if abs(other[0] - one[0]) <= 1e-12 * max(1e-3, abs(one[0])):
-            return "figures end", None
+            return "figures end", (one if met(one[1]) else other)[0]
         middle = (one[0] + other[0]) / 2
         value = surplus(middle)
         if met(value) == met(one[1]):

@@ -230,10 +230,10 @@ class Station:
             (material, state or None),
             self.published.ageing.get((material, None)))
         rate = 0.0 if rates is None else pick(rates, end)
-        if year is None:
+        if year is None or float(year) > self.year:
             years = self.default("pipe_age", end)
         else:
-            years = max(0.0, self.year - float(year))
+            years = self.year - float(year)
         aged = laid + rate * years
         return max(laid, min(aged, GROWS_NO_FURTHER * bore))
 
