@@ -6,7 +6,7 @@ from inventory import CORNERS, Unbounded
 # What no figure rests on.
 NAMES = ("line", "station_id", "pump_id", "suction_pipe_id", "curve_id",
          "position", "note", "in_service", "year_installed", "motor_power",
-         "straight_run", "stages", "rated_head", "efficiency")
+         "straight_run", "stages", "rated_head", "rated_speed", "max_speed")
 
 
 def known(figure, *arguments):
@@ -28,7 +28,9 @@ def pump_form(pump):
         inventory = pump.station.inventory
         pump.form = repr((
             figures_of(pump.record), pump.path[:1] != [] and pump.lift(),
-            [figures_of(point) for point in pump.points],
+            pump.speeds(), pump.rated_ratio(),
+            [curve and (curve.x, curve.y)
+             for curve in (pump.head, pump.npshr)], pump.unsure(),
             pump.record.get("curve_id") in inventory.short_curves))
     return pump.form
 

@@ -36,7 +36,7 @@ class StationCase:
     def figures(self, pump, pumps, at, corner, imposed=None, beside=()):
         """The pump's figures in a set; STOOD where it stands in it."""
         key = (pump.key, frozenset(one.key for one in pumps), at, corner,
-               self.station.shift, len(beside),
+               self.station.shift, frozenset(one.key for one in beside),
                imposed and tuple(sorted(imposed.items())))
         if key not in self.kept:
             try:
@@ -134,7 +134,7 @@ class StationCase:
         if corner == "adverse":
             from_nought = not all_there and (
                 falls or not pump.ends_hold(self.ratio))
-            if not from_nought and (not all_there or not (falls or shared)):
+            if not from_nought and not falls and not shared:
                 return [self.figures(pump, there, least, corner, None, pumps)]
         elif not falls and not shared:
             return [self.figures(pump, pumps, most, corner)]
@@ -142,6 +142,8 @@ class StationCase:
                 self.figures(pump, pumps, most, corner)]
         if any(end is STOOD or end[self.worth] is None for end in ends):
             return ends if corner == "adverse" else ends[::-1]
+        if corner == "adverse" and not all_there and not from_nought:
+            return ends
         return self.flows_between(pump, pumps, most, corner, ends, all_there)
 
     def flows_between(self, pump, pumps, at, corner, ends, all_there):
@@ -186,7 +188,7 @@ class StationCase:
         kelvins = [known(self.station.temperature, end)
                    for end in ("favourable", "typical", "adverse")]
         if None in kelvins:
-            return [NOTHING]
+            return [self.without_temperature(pump, pumps, at, corner)]
         cold, typical, warm = kelvins
         if corner == "adverse":
             ends = [warm] if warm == cold else [warm, cold]
@@ -209,6 +211,15 @@ class StationCase:
             return one(cold + (warm - cold) * part)
         grid = [part_way(part) for part in PARTS]
         return found + grid + [self.closest(part_way, grid, corner)]
+
+    def without_temperature(self, pump, pumps, at, corner):
+        """Only a given flow does not rest on it, and NPSHR there."""
+        if pump.solved:
+            return NOTHING
+        found = self.figures(pump, pumps, at._replace(
+            kelvin=self.station.temperature("typical")), corner)
+        return dict(NOTHING, **{name: found[name] for name in (
+            "flow", "npshr", "required")})
 
     def recorded_typical(self, pump, pumps, at, kelvin):
         """At the typical temperature only the recorded flow is tried."""
@@ -272,11 +283,11 @@ class StationCase:
         """Of the governing set, of the pump alone, or the better."""
         alone = (pump,)
         if not ("pumps_running_max" in self.station.record and pump.solved
-                and not any(one.unsure() for one in governing[1:])):
+                and not any(one.unsure() for one in governing)):
             governing = alone
         found = [self.corner(pump, governing, "favourable")]
         if len(governing) > 1 and self.may_stand(pump, governing):
-            found.insert(0, self.corner(pump, alone, "favourable"))
+            found.append(self.corner(pump, alone, "favourable"))
         return self.decide(found, "favourable")
 
     def may_stand(self, pump, pumps):
@@ -320,8 +331,9 @@ class StationCase:
         if len(bare) < 9 or any(one[self.worth] is None for one in bare):
             return self.decide(
                 bare if corner == "adverse" else bare[::-1], corner)
-        return self.decide(grid + [self.closest(part_way, grid, corner)],
-                           corner)
+        found = self.decide(
+            grid + [self.closest(part_way, grid, corner)], corner)
+        return found and dict(found, searched=True)
 
     # -- all sets
 
@@ -339,6 +351,19 @@ class StationCase:
                                              pair[1]["flow"] or 0.0))
         return next((pair for pair in typical if pair[1] is not STOOD), None)
 
+    def over_sets(self, found):
+        """The least; a set that has no case at all, since there is no adverse
+        end, leaves the figures of the others, but neither margin nor
+        surplus."""
+        bare = [one for one in found if one is not STOOD
+                and one["flow"] is not None]
+        chosen = self.decide(bare, "adverse")
+        if chosen is not STOOD and len(bare) < sum(
+                one is not STOOD for one in found):
+            return dict(chosen, margin=None, surplus=None)
+        return chosen or next((one for one in found if one is not STOOD),
+                              NOTHING)
+
     def corners(self, pump, sets, governing):
         """Worst and best; the margin is of a search of its own."""
         out = []
@@ -346,7 +371,7 @@ class StationCase:
             adverse = [found for found in (self.adverse(pump, one)
                                            for one in sets)
                        if found is not False]
-            out.append((self.decide(adverse, "adverse") or NOTHING,
+            out.append((self.over_sets(adverse),
                         self.favourable(pump, governing) or NOTHING))
         return tuple(dict(by_surplus, own_margin=by_margin["margin"])
                      for by_margin, by_surplus in zip(*out))
