@@ -104,7 +104,7 @@ bool sl_rule_applies(const struct sl_margin_rule *rule,
                      const struct sl_plan *plan);
 /* What its tier is chosen by; NaN: not known. */
 double sl_rule_measure(const struct sl_margin_rule *rule,
-                       const struct sl_plan *plan,
+                       const struct sl_plan *plan, enum sl_corner corner,
                        const struct sl_case *figures);
 
 #endif

@@ -74,7 +74,7 @@ static void at_recorded_flow(const struct sl_governing *all, size_t class,
 /* No rule has an adverse end then, not the one ranked on alone. */
 static void leave_unbounded(struct sl_outcome *outcome)
 {
-    outcome->figures = sl_no_case();
+    outcome->figures.surplus = outcome->figures.margin = NAN;
     outcome->margin = NAN;
     for (size_t i = 0; i < SL_RULES_MOST; i++)
         outcome->surplus[i] = NAN;

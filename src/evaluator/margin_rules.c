@@ -2,6 +2,7 @@
 #include <math.h>
 
 #include "evaluator/joint.h"
+#include "hydraulics/constants.h"
 #include "hydraulics/npsh.h"
 
 bool sl_rule_applies(const struct sl_margin_rule *rule,
@@ -10,8 +11,21 @@ bool sl_rule_applies(const struct sl_margin_rule *rule,
     return rule->make_up == 0 || rule->make_up == plan->pump->record.make_up;
 }
 
+/* Of cold fresh water, kg/m³: a tier is not to change with the warmth. */
+#define LIFT_DENSITY 1000.0
+
+/* Gauge head of the source at an end, 0 of an open one, m. */
+static double gauge_head(const struct sl_plan *plan, enum sl_corner corner)
+{
+    const struct sl_input *pressure = &plan->inputs[SL_IN_SOURCE_PRESSURE];
+
+    return pressure->applies ? sl_interval_at(&pressure->value, corner) /
+                                   (LIFT_DENSITY * SL_GRAVITY)
+                             : 0;
+}
+
 double sl_rule_measure(const struct sl_margin_rule *rule,
-                       const struct sl_plan *plan,
+                       const struct sl_plan *plan, enum sl_corner corner,
                        const struct sl_case *figures)
 {
     switch (rule->measure) {
@@ -23,7 +37,7 @@ double sl_rule_measure(const struct sl_margin_rule *rule,
         /* On a main there is no surface to lift from. */
         return plan->source_kind == SL_MAIN
                    ? 0
-                   : 0 - figures->terms.elevation - figures->terms.gauge;
+                   : 0 - figures->terms.elevation - gauge_head(plan, corner);
     case SL_MEASURE_NONE:
         break;
     }
@@ -69,8 +83,9 @@ void sl_rule_apply(const struct sl_margin_rule *rule,
 
     *required = figures->npshr; /* a rule that is not about it asks nothing */
     if (sl_rule_applies(rule, plan) && rule->tier_count)
-        *required = required_by_tier(rule, sl_rule_measure(rule, plan, figures),
-                                     corner, figures->npshr);
+        *required =
+            required_by_tier(rule, sl_rule_measure(rule, plan, corner, figures),
+                             corner, figures->npshr);
     *surplus = terms->npsha - *required;
     if (!sl_rule_applies(rule, plan) || isnan(rule->lift_limit))
         return;

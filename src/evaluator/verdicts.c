@@ -46,7 +46,7 @@ void sl_judge_rules(const struct sl_judging *judging,
 
         verdict->rule = &tables->rules[i];
         verdict->applies = sl_rule_applies(verdict->rule, plan);
-        verdict->measure = sl_rule_measure(verdict->rule, plan,
+        verdict->measure = sl_rule_measure(verdict->rule, plan, SL_TYPICAL,
                                            &tally->typical.outcome.figures);
         for (int corner = 0; corner < SL_CORNER_COUNT; corner++) {
             bool none = !tried[corner]->counts;
