@@ -267,7 +267,7 @@ def main(arguments):
         rows = list(csv.DictReader(file))
     stations = sorted(inventory.stations)
     if arguments[2:3] == ["--every"]:
-        stations = stations[::int(arguments[3])]
+        stations = stations[int(arguments[3]) - 1::int(arguments[3])]
     elif arguments[2:3] == ["--sheet"]:
         stations = [arguments[3]]
     rows = [row for row in rows if row["station_id"] in stations]
