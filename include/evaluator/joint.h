@@ -29,6 +29,7 @@ struct sl_joint_case {
 struct sl_joint {
     struct sl_joint_case of;
     enum sl_network_end end;
+    bool several;  /* more than one pump runs */
     bool overfull; /* more pipes or units than can be solved at once */
     struct sl_network network;
     struct sl_network_pipe pipes[SL_NETWORK_PIPES];

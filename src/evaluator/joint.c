@@ -247,6 +247,8 @@ void sl_joint_solve(struct sl_joint *joint, const struct sl_joint_case *of)
     joint->network.viscosity = of->liquid.viscosity;
     joint->network.gauge_on_pipe = any->source_kind == SL_MAIN;
     add_units(joint);
+    joint->several =
+        joint->network.unit_count > 1 || joint->units[0].count > 1;
     if (plan)
         set_discharge(joint, plan);
     for (size_t u = 0; of->start && u < joint->network.unit_count; u++)

@@ -142,7 +142,9 @@ void sl_joint_outcome_at(const struct sl_joint *joint, size_t class,
     figures->flow = flow;
     if (plan->path_count <= SL_NETWORK_PIPES)
         balance(joint, &setting, flow, outcome);
-    figures->npshr = npshr_at(&setting, flow, outcome);
+    figures->npshr = unit || !joint->several
+                         ? npshr_at(&setting, flow, outcome)
+                         : NAN; /* of a set without a solution */
     figures->margin = figures->terms.npsha - figures->npshr;
     outcome->margin = figures->margin;
     apply_rules(&setting, outcome);

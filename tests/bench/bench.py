@@ -28,6 +28,7 @@ sys.dont_write_bytecode = True
 sys.path.insert(0, os.path.join(os.path.dirname(__file__),
                                 os.pardir, "independent"))
 
+import alike  # noqa: E402
 from corners import recompute  # noqa: E402
 from inventory import CORNERS, Inventory, Published  # noqa: E402
 
@@ -113,6 +114,7 @@ def largest_difference(store, found):
 def second_implementation(inventory, published, stations):
     """({(pump, condition): figures}, processor time)."""
     found, rule = {}, next(iter(published.rules))
+    alike.PLAIN = True  # a straightforward script, without short cuts
     start = time.process_time()
     for station in stations:
         for condition in published.conditions:
@@ -120,7 +122,9 @@ def second_implementation(inventory, published, stations):
                               YEAR, with_limits=True)
             found.update(((key, condition), figures)
                          for key, figures in pumps.items())
-    return found, time.process_time() - start
+    seconds = time.process_time() - start
+    alike.PLAIN = False
+    return found, seconds
 
 
 def ready(program, folder, work, name):
@@ -174,8 +178,13 @@ def instructions(program, work):
     total = int(re.search(r"^ *([\d,]+) .*PROGRAM TOTALS", text,
                           re.MULTILINE)[1].replace(",", ""))
     inventory, published = ready(program, FIXED, work, "fixed")
-    found, _ = second_implementation(inventory, published,
-                                     sorted(inventory.stations))
+    rule = next(iter(published.rules))
+    found = {(key, condition): figures
+             for station in sorted(inventory.stations)
+             for condition in published.conditions
+             for key, figures in recompute(
+                 inventory, published, station, condition, rule, YEAR,
+                 with_limits=True).items()}
     sets = sum(one["sets_tried"] for one in found.values())
     print("fixed case: %d pumps under a condition, %d running sets, %d "
           "instructions a set; evaluation is %.0f %% of the command's %.0f "

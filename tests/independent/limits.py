@@ -80,6 +80,7 @@ def limits(case, pump, governing, typical):
         if found is None:
             return 1e9
         return -1e9 if found["surplus"] is None else found["surplus"]
+    typical = [pair for pair in typical if pair[1] is not None]
     sets = [one for one, _ in (
         sorted(typical, key=order)[:SETS] if len(typical) > SETS
         else typical)]
