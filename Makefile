@@ -200,4 +200,5 @@ clean: ## remove what was built
 	rm -rf build
 
 -include $(OBJECTS:.o=.d) \
-    $(patsubst $(OUT)/tests/%,$(OUT)/tests/unit/%.d,$(TESTS) $(FUZZERS))
+    $(patsubst $(OUT)/tests/%,$(OUT)/tests/unit/%.d,$(TESTS) $(FUZZERS)) \
+    $(OUT)/tests/bench/evaluate_bench.d

@@ -4,9 +4,9 @@ less.
 
     bench.py SUMMERLOW EVALUATE_BENCH WORK_DIR
 
-1. The program's evaluation of the sample inventory, many rounds of it, and the
-   second implementation's (tests/independent) of some of its stations, both
-   without reading and storing: processor time a pump under a condition, the
+1. The program's evaluation of the sample inventory, many rounds of it, and the plain
+   script's (tests/bench/plain) of some of its stations, both without
+   reading and storing: processor time a pump under a condition, the
    ratio, and whether both found the same. Beside it the whole of `summerlow
    evaluate` on the sample many times over.
 2. Instructions of the program's evaluation a running set, counted by
@@ -25,10 +25,8 @@ import sys
 import time
 
 sys.dont_write_bytecode = True
-sys.path.insert(0, os.path.join(os.path.dirname(__file__),
-                                os.pardir, "independent"))
+sys.path.insert(0, os.path.join(os.path.dirname(__file__), "plain"))
 
-import alike  # noqa: E402
 from corners import recompute  # noqa: E402
 from inventory import CORNERS, Inventory, Published  # noqa: E402
 
@@ -114,7 +112,6 @@ def largest_difference(store, found):
 def second_implementation(inventory, published, stations):
     """({(pump, condition): figures}, processor time)."""
     found, rule = {}, next(iter(published.rules))
-    alike.PLAIN = True  # a straightforward script, without short cuts
     start = time.process_time()
     for station in stations:
         for condition in published.conditions:
@@ -123,7 +120,6 @@ def second_implementation(inventory, published, stations):
             found.update(((key, condition), figures)
                          for key, figures in pumps.items())
     seconds = time.process_time() - start
-    alike.PLAIN = False
     return found, seconds
 
 
@@ -156,7 +152,7 @@ def against_the_other(program, evaluate_bench, work):
     fast, slow = evaluation_alone(evaluate_bench, small), slow / len(found)
     print("program: %.1f µs a pump under a condition; %.1f with reading and "
           "storing" % (1e6 * fast, 1e6 * seconds / results))
-    print("second implementation: %.1f ms, of %d of them"
+    print("plain script: %.1f ms, of %d of them"
           % (1e3 * slow, len(found)))
     print("ratio: %.0f" % (slow / fast))
     print("largest difference of %d margins and surpluses: %.1e m"

@@ -3,10 +3,6 @@ import itertools
 
 from inventory import CORNERS, Unbounded
 
-# Solves every set and every case as if nothing like it had been solved: the
-# plain way, to measure the program against. The figures are the same.
-PLAIN = False
-
 # What no figure rests on.
 NAMES = ("line", "station_id", "pump_id", "suction_pipe_id", "curve_id",
          "position", "note", "in_service", "year_installed", "motor_power",
@@ -94,10 +90,6 @@ def twins(station, pumps):
 def unlike_sets(station, pump, most):
     """Every set of 1 to so many pumps with this one that is unlike those
     before it, the smaller first."""
-    if PLAIN:
-        others = [one for one in station.pumps if one is not pump]
-        return [(pump, *some) for count in range(most)
-                for some in itertools.combinations(others, count)]
     groups = twins(station, [one for one in station.pumps
                              if one is not pump])
     counts = [count for count in itertools.product(

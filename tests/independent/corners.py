@@ -1,7 +1,6 @@
 """The typical, adverse and favourable figures of a pump over its sets."""
 from scipy.optimize import minimize_scalar
 
-import alike
 from alike import set_form
 from inventory import Unbounded
 from limits import limits
@@ -39,7 +38,7 @@ class StationCase:
         key = (pump.key, frozenset(one.key for one in pumps), at, corner,
                self.station.shift, frozenset(one.key for one in beside),
                imposed and tuple(sorted(imposed.items())))
-        if alike.PLAIN or key not in self.kept:
+        if key not in self.kept:
             try:
                 solved = RunningSet(self.station, pumps, pump, at, imposed,
                                     beside)

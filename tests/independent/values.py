@@ -3,7 +3,6 @@
 Every figure takes a corner: "typical", "adverse", "favourable", or a part
 from 0 (adverse) to 1 (favourable) of the way between these two.
 """
-import alike
 from inventory import Unbounded, between, pick, words
 from physics import Curve, altitude_of, small_bore, standard_air
 
@@ -389,7 +388,7 @@ class Pump:
         short = self.without_adverse_suction(beside)
         key = (short, corner(None),
                *(corner(pipe["pipe_id"]) for pipe in self.path))
-        if alike.PLAIN or key not in self.kept_ways:
+        if key not in self.kept_ways:
             try:
                 self.kept_ways[key] = self.parts(corner, short)
             except Unbounded:
