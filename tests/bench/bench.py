@@ -4,9 +4,9 @@ less.
 
     bench.py SUMMERLOW EVALUATE_BENCH WORK_DIR
 
-1. The program's evaluation of the sample inventory, many rounds of it, and the plain
-   script's (tests/bench/plain) of some of its stations, both without
-   reading and storing: processor time a pump under a condition, the
+1. The program's evaluation of the sample inventory, many rounds of it, and
+   the plain script's (tests/bench/plain) of some of its stations, both
+   without reading and storing: processor time a pump under a condition, the
    ratio, and whether both found the same. Beside it the whole of `summerlow
    evaluate` on the sample many times over.
 2. Instructions of the program's evaluation a running set, counted by
