@@ -11,6 +11,9 @@
 #include "hydraulics/curve.h"
 #include "model/result.h"
 
+/* Of the bore: Colebrook's data end here (F8), and no wall is aged beyond. */
+#define SL_ROUGHEST_OF_BORE 0.05
+
 /* One pipe between the source and the pump. */
 struct sl_path_pipe {
     const struct sl_dossier_pipe *pipe;

@@ -13,8 +13,6 @@
 #define HIGH_SPECIFIC_SPEED 4500.0 /* US customary */
 #define BELL_MIDDLE 0.315          /* m³/s */
 #define BELL_LARGE 1.260
-/* Colebrook's data end here (F8). */
-#define ROUGHEST_OF_BORE 0.05
 
 struct looking {
     const struct sl_judging *judging;
@@ -175,7 +173,7 @@ static void roughness(const struct looking *at)
     if (most > 0)
         hold(at, SL_CHECK_ROUGHNESS, most,
              (struct sl_check){.lowest = NAN,
-                               .highest = ROUGHEST_OF_BORE,
+                               .highest = SL_ROUGHEST_OF_BORE,
                                .quantity = SL_PURE,
                                .source = "Colebrook's data end there (F8)",
                                .trust = 'S'});

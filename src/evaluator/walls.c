@@ -80,15 +80,12 @@ static struct sl_interval years_since(const struct sl_plan *plan,
     return row ? row->value : sl_no_figure();
 }
 
-/* No wall is taken for rougher than Colebrook's data reach. */
-#define ROUGHEST_OF_BORE 0.05
-
 static double aged(double laid, double rate, double years, double bore)
 {
     double roughness = sl_aged_roughness(laid, rate, years);
 
-    if (roughness > ROUGHEST_OF_BORE * bore)
-        return fmax(laid, ROUGHEST_OF_BORE * bore);
+    if (roughness > SL_ROUGHEST_OF_BORE * bore)
+        return fmax(laid, SL_ROUGHEST_OF_BORE * bore);
     return roughness;
 }
 
